@@ -1,0 +1,2 @@
+export * from './complex-matrix.js';
+export * from './sparse-matrix.js';
