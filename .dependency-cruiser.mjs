@@ -1,0 +1,61 @@
+/** Import directions: core <- format <- command line. An app never imports another app. */
+export default {
+  forbidden: [
+    {
+      name: 'core-imports-only-itself-and-ml-matrix',
+      severity: 'error',
+      comment: 'The numerics run anywhere: no Node.js module, no other package.',
+      from: { path: '^packages/core/src' },
+      to: { pathNot: ['^packages/core/src', '^node_modules/ml-matrix/'] },
+    },
+    {
+      name: 'format-imports-only-core',
+      severity: 'error',
+      from: { path: '^packages/format/src' },
+      to: { path: ['^packages/', '^apps/', '^tests/'], pathNot: ['^packages/(core|format)/src'] },
+    },
+    {
+      name: 'apps-never-import-each-other',
+      severity: 'error',
+      from: { path: '^apps/([^/]+)/' },
+      to: { path: '^apps/', pathNot: '^apps/$1/' },
+    },
+    {
+      name: 'packages-never-import-apps',
+      severity: 'error',
+      from: { path: '^packages/' },
+      to: { path: '^(apps|tests)/' },
+    },
+    {
+      name: 'other-packages-through-their-index',
+      severity: 'error',
+      comment: 'Internals of a package are not importable from outside it.',
+      from: { path: '^(packages|apps)/([^/]+)/' },
+      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/index\\.ts$', '^$1/$2/'] },
+    },
+    {
+      name: 'no-cycles',
+      severity: 'error',
+      from: { path: '^(packages|apps)/[^/]+/src' },
+      to: { circular: true, viaOnly: { dependencyTypesNot: ['type-only'] } },
+    },
+    { name: 'everything-resolves', severity: 'error', from: {}, to: { couldNotResolve: true } },
+    {
+      name: 'sources-do-not-import-tests',
+      severity: 'error',
+      from: { path: '/src/' },
+      to: { path: '(/test/|\\.test\\.ts$)' },
+    },
+  ],
+  options: {
+    doNotFollow: { path: 'node_modules' },
+    exclude: { path: '(^|/)(dist|coverage)/' },
+    tsPreCompilationDeps: true,
+    tsConfig: { fileName: 'tsconfig.base.json' },
+    enhancedResolveOptions: {
+      exportsFields: ['exports'],
+      conditionNames: ['source', 'import', 'require', 'node', 'default', 'types'],
+      extensions: ['.ts', '.tsx', '.js', '.mjs', '.json'],
+    },
+  },
+};
