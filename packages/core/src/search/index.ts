@@ -1,0 +1,2 @@
+export * from './bfgs.js';
+export * from './brent.js';
