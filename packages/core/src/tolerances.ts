@@ -1,23 +1,29 @@
 /** Spacing of doubles at 1, 2⁻⁵²; every relative tolerance below is a multiple of it. */
 export const EPSILON = 2 ** -52;
 
-/** |t| below which artanh(t)/t is summed as a series of ten terms; t^20 then stays below 1e-20. */
-export const SERIES_ARTANH = 0.1;
+/** Limit on implicit QL sweeps, per eigenvalue (LAPACK's value; two are typical). */
+export const QL_SWEEPS_PER_EIGENVALUE = 30;
 
-/** |z| below which (e^z−1−z)/z² is summed as a series of seventeen terms; the rest stays below 1e-16. */
-export const SERIES_PHI = 0.8;
+/** Entries are rescaled before a symmetric eigenproblem when the largest is outside [1/x, x]: cubes stay in range. */
+export const EIGEN_SAFE_RANGE = 1e90;
 
-/** |x1−x2|/(x1+x2) below which a divided difference is taken as the quadrature of a slope; six points then err below 1e-15. */
-export const CLOSE_ARGUMENTS = 0.05;
+/** Residual accepted from inverse iteration, in units of n ε ‖T‖. */
+export const INVERSE_ITERATION_RESIDUAL = 4;
 
-/** Frequencies closer than this, relative to 1+|ω|, are one frequency. */
-export const FREQUENCY_TOLERANCE = 1e-9;
+/** Inverse iterations tried from one starting vector. */
+export const INVERSE_ITERATION_STEPS = 5;
 
-/** Sufficient decrease of a line search, as a fraction of the slope at its start. */
-export const WOLFE_DECREASE = 1e-4;
+/** Step, relative to the state, of the central difference along the flow: fourth order, so its error is near 1e-12. */
+export const FLOW_STEP = 2e-3;
 
-/** A line search ends where the slope has risen to this fraction of the slope at its start. */
-export const WOLFE_CURVATURE = 0.5;
+/** Relative size of [X,L(A)] − L([X,A]) below which a generator counts as commuting with the unitaries of its algebra. */
+export const COVARIANCE_TOLERANCE = 1e-11;
 
-/** Evaluations of one line search at most; 2^-60 of the first step is below rounding. */
-export const WOLFE_BISECTIONS = 60;
+/** Searches keep every log-eigenvalue of a state within this of the largest: e^{-60} is near 1e-26, and the forms stay resolved. */
+export const LOG_EIGENVALUE_RANGE = 60;
+
+/** Eigenvalues below this, relative to the largest of the form, count as zero. */
+export const KERNEL_TOLERANCE = 1e-11;
+
+/** Non-zero eigenvalues above this, relative, are clearly non-zero; between the two a kernel is undecided and said so. */
+export const KERNEL_GAP = 1e-8;
