@@ -51,3 +51,27 @@ export const WOLFE_CURVATURE = 0.5;
 
 /** Evaluations of one line search at most; 2^-60 of the first step is below rounding. */
 export const WOLFE_BISECTIONS = 60;
+
+/** Input that must be Hermitian, positive, of trace one, invariant or inside the algebra may miss it by this, relative to its size. */
+export const INPUT_TOLERANCE = 1e-9;
+
+/** ‖L−L^adjoint‖/‖L‖ in the weighted product below which a symmetry is held to be present; the same for the rebuilt canonical form. */
+export const SYMMETRY_TOLERANCE = 1e-9;
+
+/** Negative eigenvalues of the Choi-type matrices above −x times the largest modulus are rounding. */
+export const POSITIVITY_TOLERANCE = 1e-10;
+
+/** Energies, and Bohr frequencies, closer than x times the width of the spectrum of H (at least 1) are one. */
+export const ENERGY_TOLERANCE = 1e-9;
+
+/** Kossakowski eigenvalues below x times the largest are no jumps. */
+export const JUMP_TOLERANCE = 1e-12;
+
+/** An invariant state with smallest eigenvalue below x is not faithful, unless it is exactly diagonal and positive. */
+export const FAITHFUL_TOLERANCE = 1e-13;
+
+/** Eigenvalues of a generic element of a matrix algebra closer than x times its width belong to one minimal projection. */
+export const CLUSTER_TOLERANCE = 1e-8;
+
+/** Corners p_i Y p_j of a generic element smaller than x are zero; also the residual accepted for a span being an algebra. */
+export const ALGEBRA_TOLERANCE = 1e-8;
