@@ -75,3 +75,6 @@ export const CLUSTER_TOLERANCE = 1e-8;
 
 /** Corners p_i Y p_j of a generic element smaller than x are zero; also the residual accepted for a span being an algebra. */
 export const ALGEBRA_TOLERANCE = 1e-8;
+
+/** A semidefinite matrix may show eigenvalues down to minus this times n ε ‖A‖ by rounding. */
+export const SEMIDEFINITE_ROUNDING = 8;

@@ -4,3 +4,7 @@ export * from './symmetric-eigen.js';
 export * from './symmetric-smallest.js';
 export * from './symmetric-pencil.js';
 export * from './cholesky-real.js';
+export * from './cholesky-complex.js';
+export * from './hermitian-eigen.js';
+export * from './hermitian-pencil.js';
+export * from './matrix-function.js';

@@ -96,7 +96,7 @@ export function safeUnit(a: Float64Array, count: number): number {
   }
   if (top < EIGEN_SAFE_RANGE && top * EIGEN_SAFE_RANGE > 1) return 1;
   requireFinite(a, count);
-  return top > 0 ? 2 ** Math.max(-1000, Math.floor(Math.log2(top))) : 1;
+  return 2 ** Math.max(-1000, Math.floor(Math.log2(top)));
 }
 
 /** Stable insertion sort of the indices by |a_ii|. */
