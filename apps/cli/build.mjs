@@ -1,0 +1,60 @@
+import { copyFileSync, mkdirSync, readdirSync, renameSync, unlinkSync, writeFileSync } from 'node:fs';
+import { basename, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+
+const folder = fileURLToPath(new URL('.', import.meta.url));
+const dist = join(folder, 'dist');
+
+/** Commander is CommonJS and asks for Node's own modules through require. */
+const BANNER =
+  "import { createRequire as thalwegRequire } from 'node:module'; const require = thalwegRequire(import.meta.url);";
+
+try {
+  write(await bundle());
+} catch (error) {
+  if (!Array.isArray(error.errors)) throw error;
+  process.exitCode = 1; // esbuild has already said why
+}
+
+/** Bundles the command line with every package inside, split so that a verb loads only its own part. */
+async function bundle() {
+  const { outputFiles } = await build({
+    absWorkingDir: folder,
+    entryPoints: { thalweg: 'src/bin.ts', worker: 'src/compute/worker.ts' },
+    outdir: dist,
+    chunkNames: 'chunk-[hash]',
+    bundle: true,
+    splitting: true,
+    write: false,
+    format: 'esm',
+    platform: 'node',
+    target: 'node20.19',
+    conditions: ['source'],
+    minifySyntax: true,
+    minifyWhitespace: true,
+    legalComments: 'linked',
+    logLevel: 'error',
+    banner: { js: BANNER },
+  });
+  return outputFiles;
+}
+
+/**
+ * Chunks carry a hash in their names and are written first; entries are renamed into place, so that a command started
+ * meanwhile never meets a half-written one.
+ */
+function write(files) {
+  mkdirSync(dist, { recursive: true });
+  const isEntry = (file) => !basename(file.path).startsWith('chunk-');
+  for (const file of files.toSorted((a, b) => Number(isEntry(a)) - Number(isEntry(b)))) {
+    const partial = `${file.path}.${process.pid}.partial`;
+    writeFileSync(partial, file.contents);
+    renameSync(partial, file.path);
+  }
+  const current = new Set(files.map((file) => basename(file.path)));
+  for (const name of readdirSync(dist)) {
+    if (/^chunk-.*\.(js|txt)$/.test(name) && !current.has(name)) unlinkSync(join(dist, name));
+  }
+  copyFileSync(join(folder, '../../LICENSE'), join(folder, 'LICENSE'));
+}

@@ -1,0 +1,4 @@
+/** Shells that completion scripts are made for. */
+export const SHELLS = ['bash', 'zsh', 'fish'] as const;
+
+export type Shell = (typeof SHELLS)[number];

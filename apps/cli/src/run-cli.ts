@@ -1,0 +1,41 @@
+import { availableParallelism } from 'node:os';
+import { EXIT_STATUS, type ExitStatus } from './exit-status.js';
+import { createOutput, ignoreClosedPipes } from './output/output.js';
+import { printError } from './output/print-error.js';
+import { parseCommandLine } from './parse-command-line.js';
+import type { Terminal } from './terminal.js';
+import { loadVerb } from './verbs/load-verb.js';
+
+/** Runs one command line and resolves to its exit code. Everything it prints goes to the terminal's streams. */
+export async function runCli(argv: readonly string[], terminal: Terminal): Promise<ExitStatus> {
+  const restorePipes = ignoreClosedPipes([terminal.stdout, terminal.stderr]);
+  const interruption = new AbortController();
+  const interrupt = () => {
+    terminal.off('SIGINT', interrupt);
+    terminal.off('SIGTERM', interrupt);
+    interruption.abort();
+  };
+  terminal.on('SIGINT', interrupt);
+  terminal.on('SIGTERM', interrupt);
+  const style = { json: namesOption(argv, '--json'), color: !namesOption(argv, '--no-color') };
+  try {
+    const asked = await parseCommandLine(argv, terminal);
+    if (asked === null) return EXIT_STATUS.yes;
+    const verb = await loadVerb(asked.name);
+    const plan = verb.plan(asked.raw, { processors: availableParallelism() });
+    const output = createOutput(terminal, { ...style, quiet: asked.raw.quiet === true });
+    return await verb.effect(plan, { terminal, output, signal: interruption.signal });
+  } catch (error) {
+    return printError(error, terminal, style);
+  } finally {
+    terminal.off('SIGINT', interrupt);
+    terminal.off('SIGTERM', interrupt);
+    restorePipes();
+  }
+}
+
+/** Whether a flag stands among the options: needed before, and when, the command line cannot be parsed. */
+function namesOption(argv: readonly string[], flag: string): boolean {
+  const end = argv.indexOf('--');
+  return (end === -1 ? argv : argv.slice(0, end)).includes(flag);
+}

@@ -1,0 +1,21 @@
+import { MEAN_NAMES } from '@thalweg/core';
+import * as z from 'zod';
+import { globalOptions } from '../global-options.js';
+import { readConstantList, readName } from '../option-values.js';
+import { parseOptions, textOption } from '../parse-options.js';
+import type { Machine, RawOptions } from '../verb.js';
+
+export type ConstantsPlan = ReturnType<typeof planConstants>;
+
+/** `constants M [--only gap,ge:left] [--mean left]`. `only` is null for the whole sheet. */
+export function planConstants(raw: RawOptions, machine: Machine) {
+  const schema = z.object({
+    ...globalOptions(machine),
+    model: z.string(),
+    only: textOption((text) => readConstantList('--only', text))
+      .nullable()
+      .default(null),
+    mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),
+  });
+  return parseOptions(schema, raw);
+}

@@ -1,0 +1,25 @@
+import * as z from 'zod';
+import { CONVENTION_NAMES } from '../conventions.js';
+import { readDuration, readName, readWholeNumber } from './option-values.js';
+import { textOption } from './parse-options.js';
+import type { Machine } from './verb.js';
+
+export const DEFAULT_SEED = 1;
+export const DEFAULT_CONVENTION = '2alpha';
+const MOST_THREADS = 256;
+
+/** The options of every verb that computes, with their defaults. */
+export function globalOptions(machine: Machine) {
+  return {
+    json: z.boolean().default(false),
+    quiet: z.boolean().default(false),
+    color: z.boolean().default(true),
+    seed: textOption((text) => readWholeNumber('--seed', text, 0, Number.MAX_SAFE_INTEGER)).default(DEFAULT_SEED),
+    threads: textOption((text) => readWholeNumber('--threads', text, 1, MOST_THREADS)).default(machine.processors),
+    /** Milliseconds; null for no limit. */
+    timeLimit: textOption((text) => readDuration('--time-limit', text))
+      .nullable()
+      .default(null),
+    convention: textOption((text) => readName('--convention', text, CONVENTION_NAMES)).default(DEFAULT_CONVENTION),
+  };
+}

@@ -1,0 +1,17 @@
+import type { Verb } from './verb.js';
+
+/** Every verb, loaded when it is called: `--help` and `--version` then load none. */
+const VERBS = {
+  inspect: async () => (await import('./inspect/inspect-verb.js')).verb as Verb<unknown>,
+  constants: async () => (await import('./constants/constants-verb.js')).verb as Verb<unknown>,
+  check: async () => (await import('./check/check-verb.js')).verb as Verb<unknown>,
+  witness: async () => (await import('./witness/witness-verb.js')).verb as Verb<unknown>,
+  verify: async () => (await import('./verify/verify-verb.js')).verb as Verb<unknown>,
+  completion: async () => (await import('./completion/completion-verb.js')).verb as Verb<unknown>,
+};
+
+export type VerbName = keyof typeof VERBS;
+
+export function loadVerb(name: VerbName): Promise<Verb<unknown>> {
+  return VERBS[name]();
+}

@@ -1,0 +1,22 @@
+import { MEAN_NAMES } from '@thalweg/core';
+import * as z from 'zod';
+import { globalOptions } from '../global-options.js';
+import { readConstant, readName } from '../option-values.js';
+import { parseOptions, textOption } from '../parse-options.js';
+import type { Machine, RawOptions } from '../verb.js';
+
+export type WitnessPlan = ReturnType<typeof planWitness>;
+
+/** `witness M ge [--at rho.json] [-o w.json]`. `at` and `output` are null where not given; `mean` is that of `ge`. */
+export function planWitness(raw: RawOptions, machine: Machine) {
+  const schema = z.object({
+    ...globalOptions(machine),
+    model: z.string(),
+    constant: textOption((text) => readConstant('constant', text)),
+    at: z.string().nullable().default(null),
+    mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),
+    output: z.string().nullable().default(null),
+  });
+  const { constant, mean, ...rest } = parseOptions(schema, raw);
+  return { ...rest, constant: constant.id, mean: constant.mean ?? mean };
+}
