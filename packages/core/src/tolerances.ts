@@ -13,8 +13,8 @@ export const INVERSE_ITERATION_RESIDUAL = 4;
 /** Inverse iterations tried from one starting vector. */
 export const INVERSE_ITERATION_STEPS = 5;
 
-/** Step, relative to the state, of the central difference along the flow: fourth order, so its error is near 1e-12. */
-export const FLOW_STEP = 2e-3;
+/** Step, relative to the state, of the central difference along the flow: truncation 1e-10, rounding 1e-11, both relative. */
+export const FLOW_STEP = 1e-5;
 
 /** Relative size of [X,L(A)] − L([X,A]) below which a generator counts as commuting with the unitaries of its algebra. */
 export const COVARIANCE_TOLERANCE = 1e-11;
@@ -78,3 +78,27 @@ export const ALGEBRA_TOLERANCE = 1e-8;
 
 /** A semidefinite matrix may show eigenvalues down to minus this times n ε ‖A‖ by rounding. */
 export const SEMIDEFINITE_ROUNDING = 8;
+
+/** Eigenvalues of a density matrix within x·N of zero count as zero where supports are compared. */
+export const SUPPORT_TOLERANCE = EPSILON;
+
+/** D(ρ‖E†ρ) below which a state is too near its projection for I/D: by the metric form the relative error is 2⁻⁵²/√D. */
+export const ENTROPY_FLOOR = 1e-10;
+
+/** The same for generators without a metric form, where I is computed with cancellation: relative error 2⁻⁵²/D. */
+export const ENTROPY_FLOOR_PLAIN = 1e-5;
+
+/** Multiple of N·2⁻⁵² taken as the error of the matrix of a state and of sums over its eigenvectors. */
+export const QUOTIENT_ROUNDING = 4;
+
+/** Floors to which the eigenvalues of a witness state are raised in turn, none first: a matrix of doubles loses small ones. */
+export const WITNESS_FLOORS = [Number.MIN_VALUE, 1e-14, 1e-12, 1e-10, 1e-8, 1e-6, 1e-4];
+
+/** A search value within this, relative, of the gap is the limit towards the projection, and the gap is printed instead. */
+export const GAP_CLOSENESS = 1e-9;
+
+/** Dimension of M ⊗ M_k above which entropy constants are not searched over all of state space. */
+export const ENTROPY_SEARCH_LIMIT = 1024;
+
+/** Dimension of M above which a search start along the gap's eigenvector is left out. */
+export const GAP_START_LIMIT = 400;

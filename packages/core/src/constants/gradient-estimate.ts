@@ -1,0 +1,111 @@
+import { curvaturePencil, type CurvaturePencil } from '../metric/curvature-pencil.js';
+import type { MetricModel } from '../metric/metric-model.js';
+import { type MeanName, operatorMean } from '../metric/operator-mean.js';
+import { quotientAt, quotientError } from '../metric/quotient.js';
+import { type StateFrame, fromFrame } from '../metric/state-frame.js';
+import { type StateParameters, diagonalParameters, hermitianParameters } from '../metric/state-parameters.js';
+import { minimiseBfgs } from '../search/bfgs.js';
+import { minimiseScalar } from '../search/brent.js';
+import { type ComplexMatrix, zeros } from '../linalg/complex-matrix.js';
+import { LOG_EIGENVALUE_RANGE } from '../tolerances.js';
+import type { SearchStart } from './search-starts.js';
+
+/** Outcome of one start of a search for inf κ(ρ). */
+export interface GradientEstimateResult {
+  /** q_ρ(A)/‖A‖²_ρ re-evaluated plainly at the best state and observable. */
+  readonly value: number;
+  /** Bound on the rounding error of `value`. */
+  readonly error: number;
+  readonly state: ComplexMatrix;
+  readonly observable: ComplexMatrix;
+  /** Smallest eigenvalue of the best state: tiny when the infimum sits at the boundary of state space. */
+  readonly smallestEigenvalue: number;
+  readonly evaluations: number;
+}
+
+export interface GradientEstimateProblem {
+  readonly model: MetricModel;
+  readonly mean: MeanName;
+  /** The generator commutes with the unitaries of its algebra, so eigenvalues alone move. */
+  readonly covariant: boolean;
+}
+
+/** Run one start of the search for `ge` (§5): BFGS on ρ = exp(H), or Brent's method on two-level spectra. */
+export function runGradientEstimateStart(
+  problem: GradientEstimateProblem,
+  start: SearchStart,
+  stop?: () => boolean,
+): GradientEstimateResult {
+  const pencil = curvaturePencil(problem.model, problem.mean);
+  const parameters = parametersOf(problem);
+  const counter = { evaluations: 0 };
+  let x0: Float64Array = Float64Array.from(start.x);
+  if (start.kind === 'ray') x0 = alongRay(pencil, parameters, x0, counter, stop);
+  const found = minimiseBfgs(objective(pencil, parameters, counter), x0, { maxIterations: 400, stop });
+  return witnessAt(problem, parameters.frame(found.x), pencil, counter.evaluations);
+}
+
+/** κ(ρ) with its minimising observable, re-evaluated plainly. */
+export function witnessAt(
+  problem: GradientEstimateProblem,
+  frame: StateFrame,
+  pencil = curvaturePencil(problem.model, problem.mean),
+  evaluations = 1,
+): GradientEstimateResult {
+  const { observable } = pencil.at(frame);
+  const q = quotientAt(problem.model, operatorMean(problem.mean), frame, observable);
+  return {
+    value: q.curvature / q.metric,
+    error: quotientError(problem.model, q),
+    state: fromFrame(frame),
+    observable,
+    smallestEigenvalue: Math.min(...frame.lambda),
+    evaluations,
+  };
+}
+
+export function parametersOf(problem: GradientEstimateProblem): StateParameters {
+  const { algebra, commutative } = problem.model;
+  return commutative || problem.covariant ? diagonalParameters(algebra.size) : hermitianParameters(algebra);
+}
+
+/** κ and its gradient in the parameters; +∞ outside the range of eigenvalues where doubles resolve the forms. */
+function objective(pencil: CurvaturePencil, parameters: StateParameters, counter: { evaluations: number }) {
+  const slope = zeros(pencil.model.algebra.size);
+  return (x: Float64Array, gradient: Float64Array): number => {
+    const frame = parameters.frame(x);
+    counter.evaluations++;
+    if (!(Math.min(...frame.lambda) > Math.exp(-LOG_EIGENVALUE_RANGE))) return Infinity;
+    const kappa = pencil.withGradient(frame, slope);
+    if (!Number.isFinite(kappa)) return Infinity;
+    parameters.pullBack(frame, slope, gradient);
+    return kappa;
+  };
+}
+
+/** Minimise along the ray s·x from the maximally mixed state first: two-level spectra often carry the minimum. */
+function alongRay(
+  pencil: CurvaturePencil,
+  parameters: StateParameters,
+  direction: Float64Array,
+  counter: { evaluations: number },
+  stop?: () => boolean,
+): Float64Array {
+  const at = (s: number): number => {
+    if (stop?.()) return Infinity;
+    counter.evaluations++;
+    const { kappa } = pencil.at(parameters.frame(direction.map((v) => v * s)));
+    return Number.isFinite(kappa) ? kappa : Infinity;
+  };
+  let best = 0.1;
+  let lowest = Infinity;
+  for (const s of RAY_GRID) {
+    const value = at(s);
+    if (value < lowest) [lowest, best] = [value, s];
+  }
+  const { x } = minimiseScalar(at, best - RAY_STEP, best + RAY_STEP, 1e-9);
+  return direction.map((v) => v * x);
+}
+
+const RAY_STEP = 1;
+const RAY_GRID = Array.from({ length: 25 }, (_, k) => (k - 12) * RAY_STEP + 0.05);

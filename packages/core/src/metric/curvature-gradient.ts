@@ -1,0 +1,201 @@
+import { FLOW_STEP } from '../tolerances.js';
+import type { CurvatureForms } from './curvature-forms.js';
+import { type MeanTable, emptyMeanTable, fillMeanTable } from './mean-table.js';
+import type { MetricModel } from './metric-model.js';
+import { nearDiagonalEigen } from './near-diagonal-eigen.js';
+import type { OperatorMean } from './operator-mean.js';
+
+interface Parts {
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+}
+
+/**
+ * Derivative of a simple smallest eigenvalue of the curvature pencil with respect to the state, by the eigenvector
+ * formula: the gradient in ρ of q_ρ(A) − κ‖A‖²_ρ at fixed A with ‖A‖²_ρ = 1. Written in the frame of ρ into `out` (N×N
+ * Hermitian G, d = Re Tr G*dρ) from forms just evaluated there. The second derivative of ρ ↦ [ρ] along L†ρ is a central
+ * difference of the exact first one. No allocation.
+ */
+export interface CurvatureGradient {
+  /** a: the observable A in the frame of ρ, N×N. */
+  at(lambda: Float64Array, a: Parts, kappa: number, out: Parts): void;
+}
+
+export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms: CurvatureForms): CurvatureGradient {
+  const n = model.algebra.size;
+  const nn = n * n;
+  const parts = (): Parts => ({ re: new Float64Array(nn), im: new Float64Array(nn) });
+  const derivations = model.jumps.map(parts);
+  const [la, image, norm, moved, vectors, turned, product, slope] = Array.from({ length: 8 }, parts);
+  const values = new Float64Array(n);
+  const tables = model.frequencies.map(() => emptyMeanTable(n));
+  const { blockOf } = model.algebra;
+
+  function at(lambda: Float64Array, a: Parts, kappa: number, out: Parts): void {
+    clear(out);
+    clear(norm);
+    applyOnUnits(forms, a, la);
+    forms.usedJumps.forEach(({ index, weight, group }) => {
+      commutatorInto(derivations[index], forms.rotated[index], a, n);
+      commutatorInto(image, forms.rotated[index], la, n);
+      addFormGradient(norm, forms.tables[group], derivations[index], derivations[index], weight, n, blockOf);
+      addFormGradient(out, forms.tables[group], derivations[index], image, -weight, n, blockOf);
+    });
+    applyOnUnits(forms, norm, la);
+    addScaled(out, la, 0.5);
+    addFlowDerivative(lambda, out);
+    addScaled(out, norm, -kappa);
+  }
+
+  /** out += ½ d/ds ∇‖A‖²(ρ + s L†ρ) at s = 0. */
+  function addFlowDerivative(lambda: Float64Array, out: Parts): void {
+    const step = FLOW_STEP / relativeSpeed(forms.eta, lambda, n);
+    if (!Number.isFinite(step)) return;
+    for (const sign of [1, -1]) {
+      for (let p = 0; p < nn; p++) {
+        moved.re[p] = sign * step * forms.eta.re[p];
+        moved.im[p] = sign * step * forms.eta.im[p];
+      }
+      for (let i = 0; i < n; i++) moved.re[i * n + i] += lambda[i];
+      nearDiagonalEigen(moved.re, moved.im, n, vectors.re, vectors.im);
+      for (let i = 0; i < n; i++) values[i] = moved.re[i * n + i];
+      tables.forEach((table, k) => fillMeanTable(table, mean, values, model.frequencies[k]));
+      clear(slope);
+      forms.usedJumps.forEach(({ index, weight, group }) => {
+        conjugateInto(turned, derivations[index], vectors, product, n, true);
+        addFormGradient(slope, tables[group], turned, turned, weight, n, blockOf);
+      });
+      conjugateInto(turned, slope, vectors, product, n, false);
+      addScaled(out, turned, (0.25 * sign) / step);
+    }
+  }
+  return { at };
+}
+
+/** Largest |η_ij|/√(λ_iλ_j), times n: how fast the state moves relative to itself. */
+function relativeSpeed(eta: Parts, lambda: Float64Array, n: number): number {
+  let speed = 0;
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) {
+      const size = Math.hypot(eta.re[i * n + j], eta.im[i * n + j]) / Math.sqrt(lambda[i] * lambda[j]);
+      if (size > speed) speed = size;
+    }
+  }
+  return speed * n;
+}
+
+/** out = L(a) through the generator on matrix units. */
+function applyOnUnits(forms: CurvatureForms, a: Parts, out: Parts): void {
+  const { count: d, row, col, size: n } = forms.units;
+  const { re: gr, im: gi } = forms.generator;
+  clear(out);
+  for (let p = 0; p < d; p++) {
+    let re = 0;
+    let im = 0;
+    for (let q = 0; q < d; q++) {
+      const at = row[q] * n + col[q];
+      re += gr[p * d + q] * a.re[at] - gi[p * d + q] * a.im[at];
+      im += gr[p * d + q] * a.im[at] + gi[p * d + q] * a.re[at];
+    }
+    out.re[row[p] * n + col[p]] = re;
+    out.im[row[p] * n + col[p]] = im;
+  }
+}
+
+function commutatorInto(out: Parts, v: Parts, a: Parts, n: number): void {
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) {
+      let re = 0;
+      let im = 0;
+      for (let k = 0; k < n; k++) {
+        const ik = i * n + k;
+        const kj = k * n + j;
+        re += v.re[ik] * a.re[kj] - v.im[ik] * a.im[kj] - a.re[ik] * v.re[kj] + a.im[ik] * v.im[kj];
+        im += v.re[ik] * a.im[kj] + v.im[ik] * a.re[kj] - a.re[ik] * v.im[kj] - a.im[ik] * v.re[kj];
+      }
+      out.re[i * n + j] = re;
+      out.im[i * n + j] = im;
+    }
+  }
+}
+
+/** out = W* X W, or W X W* when `inwards` is false. */
+function conjugateInto(out: Parts, x: Parts, w: Parts, product: Parts, n: number, inwards: boolean): void {
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) {
+      let re = 0;
+      let im = 0;
+      for (let k = 0; k < n; k++) {
+        const wk = inwards ? k * n + j : j * n + k;
+        const wi = inwards ? w.im[wk] : -w.im[wk];
+        re += x.re[i * n + k] * w.re[wk] - x.im[i * n + k] * wi;
+        im += x.re[i * n + k] * wi + x.im[i * n + k] * w.re[wk];
+      }
+      product.re[i * n + j] = re;
+      product.im[i * n + j] = im;
+    }
+  }
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) {
+      let re = 0;
+      let im = 0;
+      for (let k = 0; k < n; k++) {
+        const wk = inwards ? k * n + i : i * n + k;
+        const wi = inwards ? -w.im[wk] : w.im[wk];
+        re += w.re[wk] * product.re[k * n + j] - wi * product.im[k * n + j];
+        im += w.re[wk] * product.im[k * n + j] + wi * product.re[k * n + j];
+      }
+      out.re[i * n + j] = re;
+      out.im[i * n + j] = im;
+    }
+  }
+}
+
+/** out += weight × the Hermitian part, blocks only, of the gradient in ρ of Re <X,[ρ]Y>. */
+function addFormGradient(
+  out: Parts,
+  table: MeanTable,
+  x: Parts,
+  y: Parts,
+  weight: number,
+  n: number,
+  blockOf: Int32Array,
+): void {
+  const { left, right } = table;
+  const half = weight / 2;
+  for (let a = 0; a < n; a++) {
+    for (let c = 0; c < n; c++) {
+      if (blockOf[a] !== blockOf[c]) continue;
+      let re = 0;
+      let im = 0;
+      for (let b = 0; b < n; b++) {
+        const t = left[(a * n + c) * n + b];
+        const ab = a * n + b;
+        const cb = c * n + b;
+        re += t * (x.re[ab] * y.re[cb] + x.im[ab] * y.im[cb]);
+        im += t * (x.im[ab] * y.re[cb] - x.re[ab] * y.im[cb]);
+        const s = right[(b * n + a) * n + c];
+        const bc = b * n + c;
+        const ba = b * n + a;
+        re += s * (x.re[bc] * y.re[ba] + x.im[bc] * y.im[ba]);
+        im += s * (x.im[bc] * y.re[ba] - x.re[bc] * y.im[ba]);
+      }
+      out.re[a * n + c] += half * re;
+      out.im[a * n + c] += half * im;
+      out.re[c * n + a] += half * re;
+      out.im[c * n + a] -= half * im;
+    }
+  }
+}
+
+function addScaled(out: Parts, x: Parts, c: number): void {
+  for (let p = 0; p < out.re.length; p++) {
+    out.re[p] += c * x.re[p];
+    out.im[p] += c * x.im[p];
+  }
+}
+
+function clear(x: Parts): void {
+  x.re.fill(0);
+  x.im.fill(0);
+}
