@@ -1,1 +1,41 @@
-export {};
+export { canonicalChunks } from './digest/canonical-chunks.js';
+export { digestModel } from './digest/digest-model.js';
+export { createSha256, sha256Hex, type RunningHash } from './digest/sha256.js';
+export { canonicalJson } from './json/canonical-json.js';
+export { jsonPointer, type PathSegment } from './json/json-pointer.js';
+export { type JsonValue } from './json/json-value.js';
+export { parseJson } from './json/parse-json.js';
+export { writeJson } from './json/write-json.js';
+export {
+  FILE_BYTES_LIMIT,
+  JSON_LIMITS,
+  LIST_LIMIT,
+  MATRIX_LIMITS,
+  type JsonLimits,
+  type MatrixLimits,
+} from './limits.js';
+export {
+  decodeMatrix,
+  isSparse,
+  toDense,
+  toSparse,
+  type DecodedMatrix,
+  type DecodeOptions,
+} from './matrix/decode-matrix.js';
+export { encodeMatrix } from './matrix/encode-matrix.js';
+export { type ReadFile } from './matrix/file-form.js';
+export * from './matrix/matrix-document.js';
+export { bathSpectrum } from './model/bath-spectrum.js';
+export * from './model/model-document.js';
+export { denseModel, resolveModel, type ResolvedModel, type ResolveOptions } from './model/resolve-model.js';
+export { readMtx } from './mtx/read-mtx.js';
+export { readNpy } from './npy/read-npy.js';
+export * from './schema/parse-document.js';
+export { matrixSchema } from './schema/matrix-schema.js';
+export { modelSchema } from './schema/model-schema.js';
+export { reportSchema, type ReportDocument } from './schema/report-schema.js';
+export { sheetSchema, type ConstantDocument, type SheetDocument } from './schema/sheet-schema.js';
+export { stateSchema, type StateDocument } from './schema/state-schema.js';
+export { verdictSchema, type VerdictDocument } from './schema/verdict-schema.js';
+export { witnessSchema, type WitnessDocument } from './schema/witness-schema.js';
+export { type EndDocument } from './schema/end-schema.js';

@@ -1,0 +1,33 @@
+/** Limits on input, checked before anything is allocated. Each is far above what the numerics can handle. */
+export interface JsonLimits {
+  /** Nesting of arrays and objects. */
+  readonly depth: number;
+  /** Length of the text, in UTF-16 units (bytes, when the text comes as bytes). */
+  readonly length: number;
+}
+
+export const JSON_LIMITS: JsonLimits = { depth: 64, length: 2 ** 28 };
+
+export interface MatrixLimits {
+  /** Rows or columns of any matrix. */
+  readonly side: number;
+  /** Entries of a dense matrix, zeros included: 2^22 complex numbers are 64 MiB. */
+  readonly denseEntries: number;
+  /** Stored entries of a sparse matrix. */
+  readonly sparseEntries: number;
+}
+
+/** Twelve qubits sparse, eleven dense. */
+export const MATRIX_LIMITS: MatrixLimits = { side: 4096, denseEntries: 2 ** 22, sparseEntries: 2 ** 21 };
+
+/** Bytes of one matrix file. */
+export const FILE_BYTES_LIMIT = 2 ** 28;
+
+/** Items of any list in a document other than the numbers of a matrix. */
+export const LIST_LIMIT = 10_000;
+
+/** UTF-16 units of a title, label, note or name. */
+export const TEXT_LIMIT = 2_000;
+
+/** Bytes of the header of a NumPy file; NumPy itself writes less than 200. */
+export const NPY_HEADER_LIMIT = 10_000;

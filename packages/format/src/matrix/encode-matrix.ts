@@ -1,0 +1,15 @@
+import type { DecodedMatrix } from './decode-matrix.js';
+import type { PartsForm, Rows } from './matrix-document.js';
+import { matrixRows } from './matrix-rows.js';
+
+/** The plain, dense form of a matrix: real rows when every imaginary part is zero, else both parts. Never a −0. */
+export function encodeMatrix(matrix: DecodedMatrix): Rows | PartsForm {
+  const re = [...matrixRows(matrix, 're')].map((row) => Array.from(row));
+  if (isReal(matrix)) return re;
+  return { re, im: [...matrixRows(matrix, 'im')].map((row) => Array.from(row)) };
+}
+
+/** True when no entry has an imaginary part. */
+export function isReal(matrix: DecodedMatrix): boolean {
+  return matrix.im.every((y) => y === 0);
+}

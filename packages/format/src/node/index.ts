@@ -1,0 +1,2 @@
+export { filesBeside, filesInFolder } from './folder-files.js';
+export { createNodeSha256 } from './node-sha256.js';

@@ -1,0 +1,75 @@
+import type { z } from 'zod';
+import { ThalwegError } from '@thalweg/core';
+import { describeValue } from '../describe-value.js';
+import { parseJson } from '../json/parse-json.js';
+import { valueAt } from '../json/value-at.js';
+import type { MatrixDocument } from '../matrix/matrix-document.js';
+import type { ModelDocument } from '../model/model-document.js';
+import { checkDocument } from './check-document.js';
+import { matrixSchema } from './matrix-schema.js';
+import { modelSchema } from './model-schema.js';
+import { reportSchema, type ReportDocument } from './report-schema.js';
+import { sheetSchema, type SheetDocument } from './sheet-schema.js';
+import { stateSchema, type StateDocument } from './state-schema.js';
+import { verdictSchema, type VerdictDocument } from './verdict-schema.js';
+import { witnessSchema, type WitnessDocument } from './witness-schema.js';
+
+/** Text or UTF-8 bytes of a document. */
+export type Source = string | Uint8Array;
+
+/** Every document of this package, told apart by `schema`. */
+export type AnyDocument =
+  ModelDocument | SheetDocument | ReportDocument | WitnessDocument | VerdictDocument | StateDocument;
+
+const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
+  'thalweg.model/1': modelSchema,
+  'thalweg.sheet/1': sheetSchema,
+  'thalweg.report/1': reportSchema,
+  'thalweg.witness/1': witnessSchema,
+  'thalweg.verdict/1': verdictSchema,
+  'thalweg.state/1': stateSchema,
+};
+
+/** Reads a document of any schema. All `parse…` functions throw the errors of `parseJson` and of `checkDocument`. */
+export function parseDocument(source: Source): AnyDocument {
+  const value = parseJson(source);
+  const name = valueAt(value, ['schema']);
+  if (typeof name === 'string' && Object.hasOwn(SCHEMAS, name)) {
+    return checkDocument(SCHEMAS[name as AnyDocument['schema']], value);
+  }
+  const known = Object.keys(SCHEMAS).join(', ');
+  const message = `expected a document whose "schema" is one of ${known}, got ${describeValue(name)}; correct it`;
+  throw new ThalwegError('wrong-schema', message, { pointer: '/schema' });
+}
+
+export function parseModel(source: Source): ModelDocument {
+  return checkModel(parseJson(source));
+}
+
+/** A model that is already a value, for example what an example's generator returned. */
+export function checkModel(value: unknown): ModelDocument {
+  return checkDocument(modelSchema, value);
+}
+
+/** A state: a `thalweg.state/1` document or a bare matrix. */
+export function parseState(source: Source): MatrixDocument {
+  const value = parseJson(source);
+  if (valueAt(value, ['schema']) === undefined) return checkDocument(matrixSchema, value);
+  return checkDocument(stateSchema, value).matrix;
+}
+
+export function parseWitness(source: Source): WitnessDocument {
+  return checkDocument(witnessSchema, parseJson(source));
+}
+
+export function parseSheet(source: Source): SheetDocument {
+  return checkDocument(sheetSchema, parseJson(source));
+}
+
+export function parseReport(source: Source): ReportDocument {
+  return checkDocument(reportSchema, parseJson(source));
+}
+
+export function parseVerdict(source: Source): VerdictDocument {
+  return checkDocument(verdictSchema, parseJson(source));
+}
