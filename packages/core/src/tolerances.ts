@@ -102,3 +102,42 @@ export const ENTROPY_SEARCH_LIMIT = 1024;
 
 /** Dimension of M above which a search start along the gap's eigenvector is left out. */
 export const GAP_START_LIMIT = 400;
+
+/** Limit on sweeps of one-sided Jacobi rotations; below ten are typical. */
+export const JACOBI_SWEEPS = 40;
+
+/** Entries of a triangular factor below this, relative to the largest, are dropped before its singular values are sought. */
+export const SVD_FLUSH = 1e-150;
+
+/** A least-squares column counts as dependent when what is left of it is below this times ε max(m, n) of the largest. */
+export const LEAST_SQUARES_RANK = 4;
+
+/** Limit on double QR steps per eigenvalue of a general real matrix (EISPACK's value). */
+export const QR_STEPS_PER_EIGENVALUE = 30;
+
+/** Largest ‖tL‖ of one Taylor step of an exponential's action: larger steps lose digits to cancellation. */
+export const TAYLOR_STEP_NORM = 2;
+
+/** Floors tried for the eigenvalues of a witness state written as a matrix of doubles; below the second nothing is resolved. */
+export const STATE_FLOORS = [0, 1e-14, 1e-13, 1e-12, 1e-11, 1e-10, 1e-9, 1e-8] as const;
+
+/** Relative residual below which a theorem's hypothesis on the form of a generator counts as met. */
+export const RULE_TOLERANCE = 1e-11;
+
+/** Lanczos stops when the residual of the wanted pair is below this, relative to the largest Ritz value. */
+export const LANCZOS_TOLERANCE = 1e-10;
+
+/** Eigenvalues of −L below this times the largest rate count as zero in a matrix-free search. */
+export const FIXED_POINT_TOLERANCE = 1e-9;
+
+/** Side of the eigenvalue problem, D times the largest block, above which the comparison with id − E is not attempted. */
+export const COMPARISON_LIMIT = 600;
+
+/** A bracket narrower than this, relative, is closed: its ends agree to the digits shown. */
+export const CLOSED_TOLERANCE = 1e-8;
+
+/** Lower ends may exceed upper ones by this, relative, before the order of a sheet counts as violated. */
+export const ORDER_TOLERANCE = 1e-9;
+
+/** A Krylov space counts as exhausted when the next direction is below this times ε ‖A‖ √dimension. */
+export const KRYLOV_BREAKDOWN = 8;
