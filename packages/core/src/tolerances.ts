@@ -141,3 +141,12 @@ export const ORDER_TOLERANCE = 1e-9;
 
 /** A Krylov space counts as exhausted when the next direction is below this times ε ‖A‖ √dimension. */
 export const KRYLOV_BREAKDOWN = 8;
+
+/** Algebra dimension up to which the generator is held as a D×D matrix; above it only the matrix-free gap is given. */
+export const DENSE_LIMIT = 1024;
+
+/** Largest D·max n_b for which Γ and Γ₂ are formed. */
+export const FORM_LIMIT = 600;
+
+/** Algebra dimension up to which searches over states are run. */
+export const SEARCH_LIMIT = 100;

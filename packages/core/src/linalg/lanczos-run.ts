@@ -1,0 +1,122 @@
+import { ThalwegError } from '../errors.js';
+import type { Random } from '../random.js';
+import { EPSILON, KRYLOV_BREAKDOWN } from '../tolerances.js';
+import { norm, orthogonalise } from './orthogonalise.js';
+import { symmetricEigen } from './symmetric-eigen.js';
+
+/** A symmetric operator with its account of work and the largest |Ritz value| seen. */
+export interface KrylovOperator {
+  readonly dimension: number;
+  readonly apply: (x: Float64Array, y: Float64Array) => void;
+  readonly maxMatvecs: number;
+  matvecs: number;
+  scale: number;
+}
+
+export interface LanczosRun {
+  readonly operator: KrylovOperator;
+  /** Orthonormal vectors the whole iteration stays orthogonal to. */
+  readonly locked: readonly Float64Array[];
+  readonly want: number;
+  readonly random: Random;
+  readonly tolerance: number;
+  /** The run may also end once the smallest Ritz value less its residual is above this: nothing below was seen. */
+  readonly floor: number;
+}
+
+interface Ritz {
+  readonly values: Float64Array;
+  readonly vectors: Float64Array[];
+}
+
+/** One thick-restart Lanczos iteration from a random start; `want` Ritz pairs, ascending, orthonormal vectors. */
+export function lanczosRun(run: LanczosRun): Ritz {
+  const { operator, locked, want, tolerance, floor } = run;
+  const size = Math.min(operator.dimension - locked.length, Math.max(2 * want + 20, 30));
+  const projected = new Float64Array(size * size);
+  let basis = [freshDirection(run, [])];
+  let kept = 0;
+  for (;;) {
+    const { coupling, next } = extend(run, basis, projected, size, kept);
+    const { values, vectors } = symmetricEigen(projected, size);
+    operator.scale = Math.max(operator.scale, Math.abs(values[0]), Math.abs(values[size - 1]));
+    const residual = (j: number): number => coupling * Math.abs(vectors[(size - 1) * size + j]);
+    let converged = true;
+    for (let j = 0; j < want; j++) converged &&= residual(j) <= tolerance * operator.scale;
+    if (converged || values[0] - residual(0) > floor) {
+      return { values: values.slice(0, want), vectors: combine(basis, vectors, size, want) };
+    }
+    kept = Math.min(size - 1, want + Math.floor((size - want) / 2));
+    basis = combine(basis, vectors, size, kept);
+    projected.fill(0);
+    for (let j = 0; j < kept; j++) projected[j * size + j] = values[j];
+    basis.push(next);
+  }
+}
+
+/** Grows the basis to full size, filling the projected matrix from column `from`; returns the last direction. */
+function extend(
+  run: LanczosRun,
+  basis: Float64Array[],
+  projected: Float64Array,
+  size: number,
+  from: number,
+): { coupling: number; next: Float64Array } {
+  const { operator, locked } = run;
+  let largest = operator.scale;
+  for (let j = from; ; j++) {
+    const w = multiply(operator, basis[j]);
+    largest = Math.max(largest, norm(w));
+    orthogonalise(w, locked);
+    const coefficients = orthogonalise(w, basis);
+    for (let i = 0; i <= j; i++) projected[i * size + j] = projected[j * size + i] = coefficients[i];
+    // Rounding left in w by the projections must not count as a new direction.
+    orthogonalise(w, locked);
+    let coupling = norm(w);
+    const exhausted = coupling <= KRYLOV_BREAKDOWN * EPSILON * largest * Math.sqrt(operator.dimension);
+    if (exhausted) coupling = 0;
+    if (j === size - 1) return { coupling, next: exhausted ? w : w.map((x) => x / coupling) };
+    basis.push(exhausted ? freshDirection(run, basis) : w.map((x) => x / coupling));
+  }
+}
+
+function multiply(operator: KrylovOperator, x: Float64Array): Float64Array {
+  if (operator.matvecs >= operator.maxMatvecs) {
+    throw new ThalwegError(
+      'no-convergence',
+      `expected Lanczos to converge within ${operator.maxMatvecs} products; allow more or ask for less accuracy`,
+    );
+  }
+  const y = new Float64Array(operator.dimension);
+  operator.apply(x, y);
+  operator.matvecs++;
+  return y;
+}
+
+/** A random unit vector orthogonal to everything so far. */
+function freshDirection({ operator, locked, random }: LanczosRun, basis: readonly Float64Array[]): Float64Array {
+  for (;;) {
+    const x = Float64Array.from({ length: operator.dimension }, () => random.normal());
+    const before = norm(x);
+    orthogonalise(x, locked);
+    orthogonalise(x, basis);
+    orthogonalise(x, locked);
+    const left = norm(x);
+    if (left > 1e-6 * before) return x.map((value) => value / left);
+  }
+}
+
+/** The first `count` columns of (basis as columns) · vectors. */
+function combine(basis: readonly Float64Array[], vectors: Float64Array, size: number, count: number): Float64Array[] {
+  const result: Float64Array[] = [];
+  for (let j = 0; j < count; j++) {
+    const x = new Float64Array(basis[0].length);
+    for (let i = 0; i < size; i++) {
+      const factor = vectors[i * size + j];
+      const v = basis[i];
+      for (let p = 0; p < x.length; p++) x[p] += factor * v[p];
+    }
+    result.push(x);
+  }
+  return result;
+}
