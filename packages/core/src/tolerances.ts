@@ -52,6 +52,9 @@ export const WOLFE_CURVATURE = 0.5;
 /** Evaluations of one line search at most; 2^-60 of the first step is below rounding. */
 export const WOLFE_BISECTIONS = 60;
 
+/** A line search ends when the decrease it predicts is below x·2⁻⁵² of the value. */
+export const WOLFE_VISIBLE = 0.25;
+
 /** Input that must be Hermitian, positive, of trace one, invariant or inside the algebra may miss it by this, relative to its size. */
 export const INPUT_TOLERANCE = 1e-9;
 
@@ -150,3 +153,7 @@ export const FORM_LIMIT = 600;
 
 /** Algebra dimension up to which searches over states are run. */
 export const SEARCH_LIMIT = 100;
+
+/** Products with at least this many multiplications, and a left factor at least this dense, take the packed path. */
+export const PACKED_PRODUCT_SIZE = 4096;
+export const PACKED_PRODUCT_DENSITY = 0.25;

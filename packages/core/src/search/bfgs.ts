@@ -1,5 +1,5 @@
 import { ThalwegError } from '../errors.js';
-import { WOLFE_BISECTIONS, WOLFE_CURVATURE, WOLFE_DECREASE } from '../tolerances.js';
+import { EPSILON, WOLFE_BISECTIONS, WOLFE_CURVATURE, WOLFE_DECREASE, WOLFE_VISIBLE } from '../tolerances.js';
 
 /** Fills `gradient` and returns the value at x; may return +∞ or NaN outside its domain, where the gradient is ignored. */
 export interface Objective {
@@ -156,6 +156,10 @@ function wolfeSearch(
   let bestValue = value;
   for (let evaluations = 1; evaluations <= WOLFE_BISECTIONS; evaluations++) {
     if (stop?.()) return { value: bestValue, evaluations: evaluations - 1, outcome: 'stopped' };
+    // A decrease below the rounding of the value cannot be seen.
+    if (-t * slope <= EPSILON * Math.abs(value) * WOLFE_VISIBLE) {
+      return { value: bestValue, evaluations: evaluations - 1, outcome: 'failed' };
+    }
     for (let i = 0; i < n; i++) trial[i] = x[i] + t * direction[i];
     const trialValue = objective(trial, trialGradient);
     if (trialValue <= value + WOLFE_DECREASE * t * slope) {
