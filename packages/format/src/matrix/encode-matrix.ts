@@ -4,12 +4,15 @@ import { matrixRows } from './matrix-rows.js';
 
 /** The plain, dense form of a matrix: real rows when every imaginary part is zero, else both parts. Never a −0. */
 export function encodeMatrix(matrix: DecodedMatrix): Rows | PartsForm {
-  const re = [...matrixRows(matrix, 're')].map((row) => Array.from(row));
-  if (isReal(matrix)) return re;
-  return { re, im: [...matrixRows(matrix, 'im')].map((row) => Array.from(row)) };
+  const re = denseRows(matrix, 're');
+  return isReal(matrix) ? re : { re, im: denseRows(matrix, 'im') };
 }
 
 /** True when no entry has an imaginary part. */
 export function isReal(matrix: DecodedMatrix): boolean {
   return matrix.im.every((y) => y === 0);
+}
+
+function denseRows(matrix: DecodedMatrix, part: 're' | 'im'): Rows {
+  return Array.from(matrixRows(matrix, part), (row) => Array.from(row));
 }

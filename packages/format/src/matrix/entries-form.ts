@@ -43,7 +43,7 @@ function findShapeFault(shape: unknown, limits: MatrixLimits): Fault | null {
   if (!valid) {
     return fault(
       'wrong-schema',
-      `expected a shape [rows, columns] of positive whole numbers, got ${JSON.stringify(shape)}; correct it`,
+      `expected a shape [rows, columns] of positive whole numbers, got ${describeShape(shape)}; correct it`,
     );
   }
   const [rows, cols] = shape as [number, number];
@@ -73,6 +73,11 @@ function findEntryFault(entry: unknown, rows: number, cols: number): Fault | nul
     return fault(code, `expected finite numbers re and im, got ${describeValue(part)}; correct the entry`);
   }
   return null;
+}
+
+function describeShape(shape: unknown): string {
+  const short = Array.isArray(shape) && shape.length <= 4 && shape.every((n) => typeof n === 'number');
+  return short ? `[${shape.join(',')}]` : describeValue(shape);
 }
 
 function isIndex(value: unknown, bound: number): value is number {

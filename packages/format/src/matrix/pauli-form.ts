@@ -9,7 +9,10 @@ const LETTERS = /^[IXYZ]+$/;
 
 /** The first fault of a Pauli string or combination of strings, or null. */
 export function findPauliFault({ pauli }: PauliForm, limits: MatrixLimits = MATRIX_LIMITS): Fault | null {
-  if (typeof pauli === 'string') return at(['pauli'], findStringFault(pauli, pauli.length, limits));
+  if (typeof pauli === 'string') {
+    const found = findStringFault(pauli, pauli.length, limits) ?? findSparseSizeFault(2 ** pauli.length, limits);
+    return at(['pauli'], found);
+  }
   const strings = Object.keys(pauli);
   const [first] = strings;
   if (first === undefined) {

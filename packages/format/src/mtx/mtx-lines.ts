@@ -58,7 +58,7 @@ export class MtxLines {
   whole(word: string | undefined, what: string, least = Number.MIN_SAFE_INTEGER): number {
     const value = /^[+-]?\d+$/.test(word ?? '') ? Number(word) : NaN;
     if (Number.isSafeInteger(value) && value >= least) return value;
-    throw this.fault(least > 0 ? `${what}, counted from ${least}` : what, describeValue(word), 'write a whole number');
+    throw this.fault(`${what}${BOUNDS.get(least) ?? ''}`, describeValue(word), 'write a whole number');
   }
 
   private nextLine(): string | null {
@@ -73,3 +73,8 @@ export class MtxLines {
 }
 
 const REAL = /^[+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?$/;
+
+const BOUNDS = new Map([
+  [0, ' of at least 0'],
+  [1, ', counted from 1'],
+]);

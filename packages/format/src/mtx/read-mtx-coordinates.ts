@@ -31,7 +31,7 @@ export function readMtxCoordinates(lines: MtxLines, banner: MtxBanner, limits: M
         `row ${i + 1}, column ${j + 1}`,
         'leave it out',
       );
-    if (i === j) requireDiagonal(lines, symmetry, value[1]);
+    if (i === j) requireDiagonal(symmetry, i, value);
     else triplets.push([j, i, ...mirrored(symmetry, value)]);
   }
   requireEnd(lines, expected);

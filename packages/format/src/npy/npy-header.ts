@@ -1,5 +1,5 @@
 import { ThalwegError } from '@thalweg/core';
-import { count, describeValue, shorten } from '../describe-value.js';
+import { describeValue } from '../describe-value.js';
 import { NPY_HEADER_LIMIT } from '../limits.js';
 
 /** What the header of a NumPy file says (format versions 1.0, 2.0 and 3.0, numpy.lib.format). */
@@ -164,11 +164,10 @@ class Tokens {
 
   fault(expected: string): ThalwegError {
     const rest = this.text.slice(this.position).trim();
-    const got = rest === '' ? 'its end' : describeValue(shorten(rest));
-    const place = `at character ${this.position} of ${count(this.text.length, 'character')}`;
+    const got = rest === '' ? 'its end' : describeValue(rest);
     return new ThalwegError(
       'bad-file',
-      `expected ${expected} in the NumPy header, got ${got} ${place}; save the array again with numpy.save`,
+      `expected ${expected} in the NumPy header, got ${got}; save the array again with numpy.save`,
     );
   }
 }
