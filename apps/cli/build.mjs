@@ -1,4 +1,4 @@
-import { copyFileSync, mkdirSync, readdirSync, renameSync, unlinkSync, writeFileSync } from 'node:fs';
+import { copyFileSync, mkdirSync, readFileSync, readdirSync, renameSync, unlinkSync, writeFileSync } from 'node:fs';
 import { basename, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
@@ -11,15 +11,17 @@ const BANNER =
   "import { createRequire as thalwegRequire } from 'node:module'; const require = thalwegRequire(import.meta.url);";
 
 try {
-  write(await bundle());
+  const { outputFiles, metafile } = await bundle();
+  write(outputFiles);
+  writeFileSync(join(dist, 'THIRD-PARTY-LICENSES.txt'), licences(Object.keys(metafile.inputs)));
 } catch (error) {
   if (!Array.isArray(error.errors)) throw error;
   process.exitCode = 1; // esbuild has already said why
 }
 
 /** Bundles the command line with every package inside, split so that a verb loads only its own part. */
-async function bundle() {
-  const { outputFiles } = await build({
+function bundle() {
+  return build({
     absWorkingDir: folder,
     entryPoints: { thalweg: 'src/bin.ts', worker: 'src/compute/worker.ts' },
     outdir: dist,
@@ -33,11 +35,11 @@ async function bundle() {
     conditions: ['source'],
     minifySyntax: true,
     minifyWhitespace: true,
-    legalComments: 'linked',
+    legalComments: 'none',
     logLevel: 'error',
     banner: { js: BANNER },
+    metafile: true,
   });
-  return outputFiles;
 }
 
 /**
@@ -57,4 +59,20 @@ function write(files) {
     if (/^chunk-.*\.(js|txt)$/.test(name) && !current.has(name)) unlinkSync(join(dist, name));
   }
   copyFileSync(join(folder, '../../LICENSE'), join(folder, 'LICENSE'));
+}
+
+/** Licence texts of the packages that ended up inside, as their licences ask for. */
+function licences(inputs) {
+  const folders = new Set(inputs.map((path) => /^.*node_modules\/(?:@[^/]+\/)?[^/]+/.exec(path)?.[0]));
+  folders.delete(undefined);
+  return [...folders]
+    .sort()
+    .map((path) => {
+      const packageFolder = join(folder, path);
+      const { name, version, license } = JSON.parse(readFileSync(join(packageFolder, 'package.json'), 'utf8'));
+      const file = readdirSync(packageFolder).find((entry) => /^licen[cs]e/i.test(entry));
+      if (file === undefined) throw new Error(`${name} has no licence file: add its text here`);
+      return `${name} ${version} (${license})\n\n${readFileSync(join(packageFolder, file), 'utf8').trim()}\n`;
+    })
+    .join(`\n${'-'.repeat(72)}\n\n`);
 }

@@ -41,6 +41,7 @@ export const EXIT_STATUS_OF_ERROR: Readonly<Record<ErrorCode, ExitStatus>> = {
   'spectrum-not-balanced': EXIT_STATUS.badDocument,
   'not-completely-positive': EXIT_STATUS.badDocument,
   'not-positive-definite': EXIT_STATUS.badDocument,
+  'singular-matrix': EXIT_STATUS.badDocument,
   'no-convergence': EXIT_STATUS.internal,
   'outside-folder': EXIT_STATUS.badDocument,
   'truncated-file': EXIT_STATUS.badDocument,

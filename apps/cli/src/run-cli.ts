@@ -1,6 +1,8 @@
 import { availableParallelism } from 'node:os';
+import { interruptedError } from './compute/interrupted-error.js';
+import { createSession } from './create-session.js';
 import { EXIT_STATUS, type ExitStatus } from './exit-status.js';
-import { createOutput, ignoreClosedPipes } from './output/output.js';
+import { ignoreClosedPipes } from './output/output.js';
 import { printError } from './output/print-error.js';
 import { parseCommandLine } from './parse-command-line.js';
 import type { Terminal } from './terminal.js';
@@ -13,6 +15,7 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
   const interrupt = () => {
     terminal.off('SIGINT', interrupt);
     terminal.off('SIGTERM', interrupt);
+    terminal.stdin.destroy();
     interruption.abort();
   };
   terminal.on('SIGINT', interrupt);
@@ -23,8 +26,9 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
     if (asked === null) return EXIT_STATUS.yes;
     const verb = await loadVerb(asked.name);
     const plan = verb.plan(asked.raw, { processors: availableParallelism() });
-    const output = createOutput(terminal, { ...style, quiet: asked.raw.quiet === true });
-    return await verb.effect(plan, { terminal, output, signal: interruption.signal });
+    const options = { ...style, quiet: asked.raw.quiet === true };
+    const effect = verb.effect(plan, createSession(terminal, options, interruption.signal));
+    return await orInterrupted(effect, interruption.signal);
   } catch (error) {
     return printError(error, terminal, style);
   } finally {
@@ -32,6 +36,14 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
     terminal.off('SIGTERM', interrupt);
     restorePipes();
   }
+}
+
+/** Stops waiting as soon as the signal is aborted, whatever the effect waits for. */
+async function orInterrupted<Result>(effect: Promise<Result>, signal: AbortSignal): Promise<Result> {
+  return new Promise((resolve, reject) => {
+    signal.addEventListener('abort', () => reject(interruptedError()), { once: true });
+    effect.then(resolve, reject);
+  });
 }
 
 /** Whether a flag stands among the options: needed before, and when, the command line cannot be parsed. */

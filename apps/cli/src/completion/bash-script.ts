@@ -24,7 +24,7 @@ _thalweg() {
   case "$verb:$previous" in
 ${valueCases(grammar)}
   esac
-  [[ -n $skip ]] && return
+  [[ -n $skip ]] && return 0
   case "$verb" in
     "")
       if [[ $current == -* ]]; then _thalweg_offer "${flags(grammar.options)} --help --version"
@@ -33,10 +33,11 @@ ${valueCases(grammar)}
     help) _thalweg_offer "${verbs.join(' ')}" ;;
 ${grammar.verbs.map((verb) => verbCase(verb.name, verb.positions, [...verb.options, ...grammar.options])).join('\n')}
   esac
+  return 0
 }
 _thalweg_offer() {
   local IFS=$' \\t\\n'
-  COMPREPLY=($(compgen -W "$1" -- "$current"))
+  COMPREPLY=($(compgen -W "$1" -- "$current" || true))
 }
 complete -o default -F _thalweg thalweg
 `;
@@ -51,7 +52,7 @@ function valueCases(grammar: Grammar): string {
 function valueCase(verb: string, option: OptionGrammar): string[] {
   if (option.values?.kind !== 'words') return [];
   const patterns = option.flags.map((flag) => `${verb}:${flag}`).join('|');
-  return [`    ${patterns}) _thalweg_offer "${option.values.words.join(' ')}"; return ;;`];
+  return [`    ${patterns}) _thalweg_offer "${option.values.words.join(' ')}"; return 0 ;;`];
 }
 
 function verbCase(name: string, positions: readonly { values: Values }[], options: readonly OptionGrammar[]): string {

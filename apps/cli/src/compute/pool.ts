@@ -1,6 +1,6 @@
-import { Worker } from 'node:worker_threads';
-import { ThalwegError } from '@thalweg/core';
-import { restoreError, type Task, type TaskRegistry, type TaskReply, type TaskRequest } from './protocol.js';
+import { interruptedError } from './interrupted-error.js';
+import { restoreError, type Task, type TaskRegistry, type TaskRequest } from './protocol.js';
+import { Thread } from './thread.js';
 
 /** After the time limit a task may still return what it has; this much later its thread is ended. */
 const GRACE_MILLISECONDS = 2000;
@@ -39,11 +39,11 @@ export interface Pool<Registry extends TaskRegistry> {
 
 /** Creates a pool; threads start when there are tasks for them and are kept until `close`. */
 export function createPool<Registry extends TaskRegistry>(options: PoolOptions): Pool<Registry> {
-  const idle: Worker[] = [];
+  const idle: Thread[] = [];
   return {
     run: (name, inputs) => new Batch(options, idle, name, inputs).run() as Promise<never>,
     close: async () => {
-      await Promise.all(idle.splice(0).map((worker) => worker.terminate()));
+      await Promise.all(idle.splice(0).map((thread) => thread.end()));
     },
   };
 }
@@ -51,17 +51,17 @@ export function createPool<Registry extends TaskRegistry>(options: PoolOptions):
 /** One call of `run`. */
 class Batch {
   readonly #options: PoolOptions;
-  readonly #idle: Worker[];
+  readonly #idle: Thread[];
   readonly #name: string;
   readonly #inputs: readonly unknown[];
   readonly #outcomes: TaskOutcome<unknown>[];
-  readonly #busy = new Map<Worker, number>();
+  readonly #busy = new Set<Thread>();
   readonly #deadline: number | null;
   #next = 0;
   #failure: { index: number; error: unknown } | null = null;
   #settle: () => void = () => undefined;
 
-  constructor(options: PoolOptions, idle: Worker[], name: string, inputs: readonly unknown[]) {
+  constructor(options: PoolOptions, idle: Thread[], name: string, inputs: readonly unknown[]) {
     this.#options = options;
     this.#idle = idle;
     this.#name = name;
@@ -73,7 +73,7 @@ class Batch {
   async run(): Promise<TaskOutcome<unknown>[]> {
     const { signal, timeLimit } = this.#options;
     const interrupt = () => {
-      this.#stop({ index: -1, error: new ThalwegError('interrupted', 'interrupted: nothing was written') });
+      this.#stop({ index: -1, error: interruptedError() });
     };
     const timer = timeLimit === null ? null : setTimeout(() => this.#stop(null), timeLimit + GRACE_MILLISECONDS);
     signal.addEventListener('abort', interrupt, { once: true });
@@ -94,41 +94,38 @@ class Batch {
   /** Gives tasks to threads, in order, while both are left. A failure keeps later tasks from starting. */
   #startMore(): void {
     while (this.#next < this.#inputs.length && this.#busy.size < this.#options.threads && this.#failure === null) {
-      const worker = this.#idle.pop() ?? new Worker(this.#options.worker);
+      const thread = this.#idle.pop() ?? new Thread(this.#options.worker);
       const index = this.#next;
       this.#next += 1;
-      this.#busy.set(worker, index);
-      this.#assign(worker, index);
+      this.#busy.add(thread);
+      this.#assign(thread, index);
     }
     if (this.#busy.size === 0) this.#settle();
   }
 
-  #assign(worker: Worker, index: number): void {
-    const release = (reusable: boolean) => {
-      worker.removeAllListeners();
-      this.#busy.delete(worker);
-      if (reusable) this.#idle.push(worker);
-      this.#startMore();
-    };
-    worker.on('message', (reply: TaskReply) => {
-      if (reply.kind === 'progress') {
-        this.#options.progress?.(reply.text);
-        return;
-      }
-      if (reply.kind === 'done') this.#outcomes[index] = { done: true, result: reply.result };
-      else this.#fail(index, restoreError(reply.error));
-      release(true);
-    });
-    worker.on('error', (error) => {
-      this.#fail(index, describeCrash(error));
-      release(false);
-    });
-    worker.on('messageerror', (error) => {
-      this.#fail(index, error);
-      release(false);
-    });
+  #assign(thread: Thread, index: number): void {
     const request: TaskRequest = { index, name: this.#name, input: this.#inputs[index], deadline: this.#deadline };
-    worker.postMessage(request);
+    thread.start(request, {
+      reply: (message) => {
+        if (message.kind === 'progress') {
+          this.#options.progress?.(message.text);
+          return;
+        }
+        if (message.kind === 'done') this.#outcomes[index] = { done: true, result: message.result };
+        else this.#fail(index, restoreError(message.error));
+        this.#idle.push(thread);
+        this.#release(thread);
+      },
+      crash: (error) => {
+        this.#fail(index, error);
+        this.#release(thread);
+      },
+    });
+  }
+
+  #release(thread: Thread): void {
+    this.#busy.delete(thread);
+    this.#startMore();
   }
 
   /** Keeps the failure of lowest index. Tasks start in order, so every task before it has started and will be awaited. */
@@ -139,20 +136,8 @@ class Batch {
   #stop(failure: { index: number; error: unknown } | null): void {
     this.#next = this.#inputs.length;
     if (failure !== null) this.#fail(failure.index, failure.error);
-    for (const worker of this.#busy.keys()) {
-      worker.removeAllListeners();
-      worker.on('error', () => undefined);
-      void worker.terminate();
-    }
+    for (const thread of this.#busy) void thread.end();
     this.#busy.clear();
     this.#settle();
   }
-}
-
-function describeCrash(error: unknown): unknown {
-  if ((error as NodeJS.ErrnoException).code !== 'ERR_WORKER_OUT_OF_MEMORY') return error;
-  return new ThalwegError(
-    'too-large',
-    'the computation needed more memory than a thread may use: give a smaller model or fewer constants (--only)',
-  );
 }

@@ -1,0 +1,77 @@
+import { expect, test } from 'vitest';
+import { planCheck } from '../../src/verbs/check/plan.js';
+import { planCompletion } from '../../src/verbs/completion/plan.js';
+import { planConstants } from '../../src/verbs/constants/plan.js';
+import { planInspect } from '../../src/verbs/inspect/plan.js';
+import { planVerify } from '../../src/verbs/verify/plan.js';
+import { planWitness } from '../../src/verbs/witness/plan.js';
+
+const machine = { processors: 3 };
+const defaults = {
+  json: false,
+  quiet: false,
+  color: true,
+  seed: 1,
+  threads: 3,
+  timeLimit: null,
+  convention: '2alpha',
+};
+
+test('a plan is fully defaulted', () => {
+  expect(planInspect({ model: 'm.json' }, machine)).toEqual({ ...defaults, model: 'm.json' });
+  expect(planConstants({ model: 'm.json' }, machine)).toEqual({
+    ...defaults,
+    model: 'm.json',
+    only: null,
+    mean: 'logarithmic',
+  });
+  expect(planVerify({ evidence: 'w.json' }, machine)).toEqual({ ...defaults, evidence: 'w.json', model: null });
+});
+
+test('global options are read', () => {
+  const raw = { model: '-', json: true, color: false, seed: '7', threads: '2', timeLimit: '5m', convention: '4alpha' };
+  expect(planInspect(raw, machine)).toEqual({
+    ...defaults,
+    model: '-',
+    json: true,
+    color: false,
+    seed: 7,
+    threads: 2,
+    timeLimit: 300_000,
+    convention: '4alpha',
+  });
+});
+
+test.each([
+  [{ seed: '-1' }, '--seed: expected a whole number from 0 to 9007199254740991, got "-1"'],
+  [{ threads: 'all' }, '--threads: expected a whole number from 1 to 256, got "all"'],
+  [{ timeLimit: 'soon' }, '--time-limit: expected a time above 0'],
+  [{ convention: '3alpha' }, '--convention: expected one of 2alpha, 4alpha, 1alpha, got "3alpha"'],
+])('refuses %o', (raw, message) => {
+  const plan = () => planInspect({ model: 'm.json', ...raw }, machine);
+  expect(plan).toThrow(message);
+  expect(plan).toThrow(expect.objectContaining({ code: 'usage' }));
+});
+
+test('check needs a claim and keeps their order', () => {
+  expect(() => planCheck({ model: 'm.json' }, machine)).toThrow('expected at least one claim');
+  const plan = planCheck({ model: 'm.json', atMost: ['mlsi=1'], atLeast: ['cge=0.5', 'gap=2'] }, machine);
+  expect(plan.claims).toEqual([
+    { constant: { id: 'cge', mean: null }, relation: 'at-least', bound: 0.5 },
+    { constant: { id: 'gap', mean: null }, relation: 'at-least', bound: 2 },
+    { constant: { id: 'mlsi', mean: null }, relation: 'at-most', bound: 1 },
+  ]);
+});
+
+test('the mean of witness: in the constant first, then --mean, then logarithmic', () => {
+  const meanOf = (constant: string, mean?: string) =>
+    planWitness({ model: 'm.json', constant, ...(mean === undefined ? {} : { mean }) }, machine).mean;
+  expect(meanOf('ge:left', 'right')).toBe('left');
+  expect(meanOf('ge', 'right')).toBe('right');
+  expect(meanOf('ge')).toBe('logarithmic');
+});
+
+test('completion knows three shells', () => {
+  expect(planCompletion({ shell: 'zsh' })).toEqual({ shell: 'zsh' });
+  expect(() => planCompletion({ shell: 'tcsh' })).toThrow('shell: expected one of bash, zsh, fish, got "tcsh"');
+});
