@@ -1,11 +1,11 @@
 import type { Generator } from '../generator/generator.js';
 import { hermitianPart } from '../linalg/complex-matrix.js';
 import type { End } from '../sheet/bracket.js';
+import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
 import { COMPARISON_LIMIT } from '../tolerances.js';
 import { carreDuChamp } from './carre-du-champ.js';
 import { degeneratePencil } from './degenerate-pencil.js';
-import { hasMetric } from './lsi-lower.js';
 
 /**
  * clsi ≥ c/2 for GNS-symmetric L, c the largest number with Γ_L − cΓ_{id−E} completely positive: a generalised
@@ -21,7 +21,7 @@ import { hasMetric } from './lsi-lower.js';
  */
 export function clsiByComparison(structure: Structure): End | null {
   const { generator, algebra, fixedPoints } = structure;
-  if (!fixedPoints || !hasMetric(structure) || fixedPoints.dimension === algebra.dimension) return null;
+  if (!fixedPoints || !hasGradientMetric(structure) || fixedPoints.dimension === algebra.dimension) return null;
   if (algebra.dimension * Math.max(...algebra.blocks) > COMPARISON_LIMIT) return null;
   const here = carreDuChamp(generator);
   const there = carreDuChamp(minusProjection(structure, fixedPoints.expectation));

@@ -1,7 +1,7 @@
 import { isCommutative } from '../algebra/block-algebra.js';
 import type { End } from '../sheet/bracket.js';
 import type { Structure } from '../structure/structure.js';
-import { inheritedEnd, positiveBound, scaledEnd } from './lower-ends.js';
+import { positiveBound, scaledEnd } from './lower-ends.js';
 
 /**
  * lsi ≥ gap · lsi(id − E_σ), as −<A,LA>_σ ≥ gap ‖A − Tr(σA)‖²_σ says that the Dirichlet form of L is at least gap times
@@ -23,18 +23,6 @@ export function lsiFromGap(structure: Structure, gap: End | null): End | null {
     return scaledEnd(input, lsiOfProjection(1 / algebra.size), by);
   }
   return null;
-}
-
-/** mlsi ≥ lsi for GNS-symmetric primitive generators (Kastoryano & Temme, J. Math. Phys. 54 (2013)). Null otherwise. */
-export function mlsiFromLsi(structure: Structure, lsi: End | null): End | null {
-  const input = positiveBound(lsi);
-  if (!input || !hasMetric(structure) || !structure.fixedPoints?.primitive) return null;
-  return inheritedEnd(input, `lsi (primitive, GNS-symmetric): ${input.by}`);
-}
-
-/** GNS symmetry, tracial included. */
-export function hasMetric({ symmetry }: Structure): boolean {
-  return symmetry?.kind === 'GNS' || symmetry?.kind === 'tracial';
 }
 
 /** 2(1−2s)/log(1/s−1) = u/artanh u with u = 1−2s, 1 at s = ½. */

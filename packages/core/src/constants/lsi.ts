@@ -19,7 +19,6 @@ import {
 import { matrixFunction } from '../linalg/matrix-function.js';
 import { fromFrame } from '../metric/state-frame.js';
 import type { BfgsOptions } from '../search/bfgs.js';
-import type { End } from '../sheet/bracket.js';
 import type { Structure } from '../structure/structure.js';
 import { EPSILON, QUOTIENT_ROUNDING } from '../tolerances.js';
 import {
@@ -30,7 +29,7 @@ import {
 } from './entropy-search.js';
 import { type EntropySearchOptions, entropyStarts } from './entropy-starts.js';
 import { type EntropyQuotient, requireResolved } from './mlsi-quotient.js';
-import { everythingFixed, searchUpper, stateOf } from './mlsi.js';
+import { everythingFixed, stateOf } from './mlsi.js';
 
 /**
  * Independent starts of the search for `lsi`, the largest α with 2 E₂(X) ≥ α D(ρ‖σ), X = σ^{-1/4} ρ^{1/2} σ^{-1/4},
@@ -50,14 +49,6 @@ export function runLsiStart(
   options: BfgsOptions = {},
 ): EntropyResult | null {
   return runEntropyStart(lsiProblem(structure), start, options);
-}
-
-/**
- * Upper end of `lsi` from the results of a search and the gap (an upper end): along the gap's eigenvector the quotient
- * tends to at most the gap at σ, as D is at least twice the KMS variance there.
- */
-export function lsiUpper(gap: End | null, results: readonly (EntropyResult | null)[]): End | null {
-  return searchUpper(gap, results);
 }
 
 /**

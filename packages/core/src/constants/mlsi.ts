@@ -50,20 +50,11 @@ export function mlsiProblem(structure: Structure, amplification: number): Entrop
 }
 
 /**
- * Upper end of `mlsi` or `clsi` from the results of a search and the gap (an upper end). Under KMS symmetry the gap's
- * eigenvector makes the quotient tend to the gap at σ, so the gap is an upper end too; a search value not clearly below
- * it is that limit, and the gap is returned.
+ * Upper end of `mlsi`, `clsi` or `lsi` from the results of a search and the gap (an upper end); null when there is neither.
+ * Give the gap only where it bounds the constant: under KMS symmetry its eigenvector makes the quotient tend to at most the
+ * gap at σ. A search value not clearly below it is that limit, and the gap is returned.
  */
-export function mlsiUpper(
-  structure: Structure,
-  gap: End | null,
-  results: readonly (EntropyResult | null)[],
-): End | null {
-  return searchUpper(structure.symmetry?.kind === 'none' ? null : gap, results);
-}
-
-/** The lower of a gap and the best search value; null when there is neither. */
-export function searchUpper(gap: End | null, results: readonly (EntropyResult | null)[]): End | null {
+export function entropyUpper(gap: End | null, results: readonly (EntropyResult | null)[]): End | null {
   const best = bestOf(results);
   if (!best) return gap;
   const value = best.value + best.margin;

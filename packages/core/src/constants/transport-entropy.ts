@@ -1,7 +1,7 @@
 import type { End } from '../sheet/bracket.js';
+import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
 import { inheritedEnd, positiveBound } from './lower-ends.js';
-import { hasMetric } from './lsi-lower.js';
 
 /**
  * t2 ≥ mlsi: I ≥ 2κD gives W(ρ,σ)² ≤ (2/κ)D(ρ‖σ), as along the flow dW ≤ √I dt ≤ −√(2/κ) d√D (Otto & Villani 2000;
@@ -21,5 +21,5 @@ export function transportEntropyUpper(structure: Structure, gap: End | null): En
 
 /** Where the transport distance joins any two states. */
 export function isPrimitiveMetric(structure: Structure): boolean {
-  return hasMetric(structure) && structure.fixedPoints?.primitive === true;
+  return hasGradientMetric(structure) && structure.fixedPoints?.primitive === true;
 }

@@ -1,10 +1,11 @@
 import { type BlockAlgebra, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
+import { blockEigen } from '../algebra/block-eigen.js';
 import { ThalwegError } from '../errors.js';
 import { applyGenerator, applyGeneratorAdjoint } from '../generator/apply-generator.js';
 import { type ComplexMatrix, addScaledInto, identity, kronecker, zeros } from '../linalg/complex-matrix.js';
 import { hermitianEigen } from '../linalg/hermitian-eigen.js';
 import { type SparseMatrix, sparseFromDense, sparseKronecker } from '../linalg/sparse-matrix.js';
-import { blockEigen, fromFrame } from '../metric/state-frame.js';
+import { fromFrame } from '../metric/state-frame.js';
 import type { ReferenceState } from '../structure/reference-state.js';
 import type { Structure } from '../structure/structure.js';
 import { ENTROPY_FLOOR, ENTROPY_FLOOR_PLAIN, EPSILON } from '../tolerances.js';

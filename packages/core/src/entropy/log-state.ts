@@ -1,7 +1,8 @@
 import type { BlockAlgebra } from '../algebra/block-algebra.js';
+import { blockEigen } from '../algebra/block-eigen.js';
 import { ThalwegError } from '../errors.js';
 import { type ComplexMatrix, hermiticityResidual, maxAbs, trace } from '../linalg/complex-matrix.js';
-import { type StateFrame, blockEigen, fromFrame } from '../metric/state-frame.js';
+import { type StateFrame, fromFrame } from '../metric/state-frame.js';
 import { INPUT_TOLERANCE } from '../tolerances.js';
 
 /** A faithful state with the logarithms of its eigenvalues: exact where an eigenvalue itself would be lost in the matrix. */
@@ -26,8 +27,8 @@ export function stateOfLogs(algebra: BlockAlgebra, logs: Float64Array, u: Comple
   for (const p of logs) top = Math.max(top, p);
   let sum = 0;
   for (const p of logs) sum += Math.exp(p - top);
-  const shift = top + Math.log(sum);
-  const normalised = logs.map((p) => p - shift);
+  const logSum = Math.log(sum);
+  const normalised = logs.map((p) => p - top - logSum);
   return { algebra, logs: normalised, lambda: normalised.map(Math.exp), u };
 }
 
