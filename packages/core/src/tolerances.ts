@@ -4,8 +4,8 @@ export const EPSILON = 2 ** -52;
 /** Limit on implicit QL sweeps, per eigenvalue (LAPACK's value; two are typical). */
 export const QL_SWEEPS_PER_EIGENVALUE = 30;
 
-/** Entries are rescaled before a symmetric eigenproblem when the largest is outside [1/x, x]: cubes stay in range. */
-export const EIGEN_SAFE_RANGE = 1e90;
+/** Entries are rescaled before a decomposition when the largest is outside [1/x, x]: cubes stay in range. */
+export const SAFE_RANGE = 1e90;
 
 /** Residual accepted from inverse iteration, in units of n ε ‖T‖. */
 export const INVERSE_ITERATION_RESIDUAL = 4;
@@ -155,5 +155,17 @@ export const FORM_LIMIT = 600;
 export const SEARCH_LIMIT = 100;
 
 /** Products with at least this many multiplications, and a left factor at least this dense, take the packed path. */
-export const PACKED_PRODUCT_SIZE = 4096;
+export const PACKED_PRODUCT_SIZE = 512;
 export const PACKED_PRODUCT_DENSITY = 0.25;
+
+/** A rate below x·‖L‖, computed as the square of a jump's entry, is the square of a rounding error. */
+export const NOISE_RATE = EPSILON * EPSILON;
+
+/** The maximally mixed state is invariant when ‖L†(1)‖ is below x·N·2⁻⁵²·‖L‖·‖1‖. */
+export const STATE_ROUNDING = 8;
+
+/** Absolute error of an eigenvalue of a computed invariant state, in units of 2⁻⁵²; divided by the eigenvalue it blurs log σ. */
+export const STATE_ERROR = 256;
+
+/** Given jumps count as modular, traceless, orthogonal and paired when they miss it by less than x of their size. */
+export const GIVEN_JUMP_TOLERANCE = 1e-10;

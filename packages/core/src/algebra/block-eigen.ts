@@ -20,7 +20,9 @@ export function blockEigen(algebra: BlockAlgebra, a: ComplexMatrix): BlockEigen 
   algebra.blocks.forEach((size, b) => {
     const start = algebra.offsets[b];
     const block = submatrix(a, start, size);
-    const eigen = isDiagonal(block) ? { values: values.slice(start, start + size), vectors: identity(size) } : hermitianEigen(block);
+    const eigen = isDiagonal(block)
+      ? { values: values.slice(start, start + size), vectors: identity(size) }
+      : hermitianEigen(block);
     values.set(eigen.values, start);
     for (let i = 0; i < size; i++) {
       const from = i * size;

@@ -1,4 +1,11 @@
-import { type ComplexMatrix, addScaledInto, adjoint, copy, frobeniusNorm, innerProduct } from '../linalg/complex-matrix.js';
+import {
+  type ComplexMatrix,
+  addScaledInto,
+  adjoint,
+  copy,
+  frobeniusNorm,
+  innerProduct,
+} from '../linalg/complex-matrix.js';
 
 /**
  * How far a list {V_j} is from being closed under adjoints up to unitary mixing, relative to its size: the positive

@@ -7,7 +7,11 @@ import { ALGEBRA_TOLERANCE } from '../tolerances.js';
  * An orthonormal basis (coordinates in the Hermitian basis of M) of the Hermitian part of the complex span of the given
  * matrices, after checking that the span is a *-subalgebra with 1. Throws `not-an-algebra` naming what fails.
  */
-export function algebraSpan(algebra: BlockAlgebra, matrices: readonly ComplexMatrix[], pointer: string): Float64Array[] {
+export function algebraSpan(
+  algebra: BlockAlgebra,
+  matrices: readonly ComplexMatrix[],
+  pointer: string,
+): Float64Array[] {
   matrices.forEach((a, k) => requireInside(algebra, a, `${pointer}/${k}`));
   const basis: Float64Array[] = [];
   for (const a of matrices) {
@@ -46,7 +50,9 @@ function requireInside(algebra: BlockAlgebra, a: ComplexMatrix, pointer: string)
 }
 
 function fail(pointer: string, expected: string, advice: string): never {
-  throw new ThalwegError('not-an-algebra', `expected the span ${expected}, got one that does not; ${advice}`, { pointer });
+  throw new ThalwegError('not-an-algebra', `expected the span ${expected}, got one that does not; ${advice}`, {
+    pointer,
+  });
 }
 
 /** Append the normalised part of x orthogonal to the basis, unless it is negligible. */

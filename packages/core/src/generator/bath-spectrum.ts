@@ -43,14 +43,19 @@ function requirePositive(x: number, pointer: string, what: string): void {
   throw new ThalwegError('usage', `expected ${what} to be positive, got ${x}`, { pointer });
 }
 
-function tabulated(values: readonly (readonly [number, number])[], beta: number, tolerance: number): (w: number) => number {
+function tabulated(
+  values: readonly (readonly [number, number])[],
+  beta: number,
+  tolerance: number,
+): (w: number) => number {
   const find = (w: number): number | undefined => values.find(([x]) => Math.abs(x - w) <= tolerance)?.[1];
   values.forEach(([w, g], k) => {
     requireFiniteNumber(w, `${POINTER}/values/${k}/0`, 'a frequency');
     requireRate(g, `${POINTER}/values/${k}/1`, 'a rate');
     const mirrored = find(-w);
     const expected = Math.exp(-beta * w) * g;
-    if (mirrored === undefined || Math.abs(mirrored - expected) <= INPUT_TOLERANCE * Math.max(mirrored, expected)) return;
+    if (mirrored === undefined || Math.abs(mirrored - expected) <= INPUT_TOLERANCE * Math.max(mirrored, expected))
+      return;
     throw new ThalwegError(
       'spectrum-not-balanced',
       `expected g(−ω) = e^{−βω}g(ω) = ${expected} at ω = ${w}, got ${mirrored}; leave one of ±ω out to have it filled in`,

@@ -15,6 +15,7 @@ import { ENERGY_TOLERANCE, EPSILON, INPUT_TOLERANCE } from '../tolerances.js';
 import { adjointClosureResidual } from './adjoint-closure.js';
 import { requireAlgebraPreserved } from './algebra-preservation.js';
 import { type BathSpectrum, bathRate } from './bath-spectrum.js';
+import { clusterMiddles } from './cluster-values.js';
 import type { Generator, Jump } from './generator.js';
 import { type MatrixInput, requireFiniteNumber, requireHermitian, squareDense } from './matrix-input.js';
 
@@ -52,7 +53,10 @@ export function daviesGenerator(form: DaviesForm): Generator {
     const rotated = multiplyAdjointFirst(vectors, multiply(s, vectors));
     return energyParts(rotated, energies, tolerance).map(({ frequency, part }): Jump => {
       const jump = multiplyAdjointSecond(multiply(vectors, part), vectors);
-      return { label: `S${k + 1}(${rounded(frequency)})`, matrix: sparseFromDense(scale(jump, Math.sqrt(rate(frequency)))) };
+      return {
+        label: `S${k + 1}(${rounded(frequency)})`,
+        matrix: sparseFromDense(scale(jump, Math.sqrt(rate(frequency)))),
+      };
     });
   });
   return requireAlgebraPreserved(
@@ -69,7 +73,11 @@ export function daviesGenerator(form: DaviesForm): Generator {
 }
 
 /** The parts of S (in the energy basis) of each Bohr frequency ω = E'−E, ω ascending and closed under sign; negligible parts are left out. */
-function energyParts(s: ComplexMatrix, energies: Float64Array, tolerance: number): { frequency: number; part: ComplexMatrix }[] {
+function energyParts(
+  s: ComplexMatrix,
+  energies: Float64Array,
+  tolerance: number,
+): { frequency: number; part: ComplexMatrix }[] {
   const n = energies.length;
   const differences = new Float64Array(n * n);
   for (let i = 0; i < n; i++) for (let j = 0; j < n; j++) differences[i * n + j] = energies[j] - energies[i];
@@ -83,22 +91,6 @@ function energyParts(s: ComplexMatrix, energies: Float64Array, tolerance: number
     if (frobeniusNorm(part) > negligible) parts.push({ frequency, part });
   }
   return parts;
-}
-
-/** Each value replaced by the middle of its cluster; clusters are split where sorted neighbours differ by more than the tolerance. */
-function clusterMiddles(values: Float64Array, tolerance: number): Float64Array {
-  const order = Array.from(values.keys()).sort((a, b) => values[a] - values[b]);
-  const out = new Float64Array(values.length);
-  let start = 0;
-  for (let k = 1; k <= order.length; k++) {
-    if (k < order.length && values[order[k]] - values[order[k - 1]] <= tolerance) continue;
-    const cluster = order.slice(start, k);
-    // The middle, unlike a running mean, changes sign exactly with the list.
-    const middle = (values[cluster[0]] + values[cluster[cluster.length - 1]]) / 2;
-    for (const i of cluster) out[i] = middle;
-    start = k;
-  }
-  return out;
 }
 
 function gibbsState(energies: Float64Array, vectors: ComplexMatrix, beta: number): ComplexMatrix {

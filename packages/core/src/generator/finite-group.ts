@@ -108,7 +108,11 @@ function fromTable(table: readonly (readonly number[])[]): FiniteGroup {
       const ab = table[a][b];
       const c = table[ab].findIndex((x, h) => x !== table[a][table[b][h]]);
       if (c < 0) continue;
-      notAGroup('an associative product', `(${a}·${b})·${c} = ${table[ab][c]} but ${a}·(${b}·${c}) = ${table[a][table[b][c]]}`, pointer);
+      notAGroup(
+        'an associative product',
+        `(${a}·${b})·${c} = ${table[ab][c]} but ${a}·(${b}·${c}) = ${table[a][table[b][c]]}`,
+        pointer,
+      );
     }
   }
   return group;
@@ -118,7 +122,11 @@ function notAGroup(expected: string, got: string, pointer: string): never {
   throw new ThalwegError('not-a-group', `expected ${expected} in the multiplication table, got ${got}`, { pointer });
 }
 
-function build(order: number, multiply: (g: number, h: number) => number, generators: readonly number[] | null): FiniteGroup {
+function build(
+  order: number,
+  multiply: (g: number, h: number) => number,
+  generators: readonly number[] | null,
+): FiniteGroup {
   const product = new Int32Array(order * order);
   for (let g = 0; g < order; g++) for (let h = 0; h < order; h++) product[g * order + h] = multiply(g, h);
   const identity = Array.from({ length: order }, (_, g) => g).findIndex((g) => product[g * order + g] === g);

@@ -42,9 +42,13 @@ export function gromovForm(group: FiniteGroup, values: Float64Array): Float64Arr
 function wordLength(group: FiniteGroup): Float64Array {
   const { generators } = group;
   if (!generators) {
-    throw new ThalwegError('usage', 'expected explicit lengths for a group given by its table, got "word"; list ℓ(g) for each g', {
-      pointer: POINTER,
-    });
+    throw new ThalwegError(
+      'usage',
+      'expected explicit lengths for a group given by its table, got "word"; list ℓ(g) for each g',
+      {
+        pointer: POINTER,
+      },
+    );
   }
   const values = new Float64Array(group.order).fill(-1);
   values[group.identity] = 0;
@@ -67,9 +71,13 @@ function wordLength(group: FiniteGroup): Float64Array {
 function requireLength(group: FiniteGroup, values: Float64Array): void {
   const { order, identity, inverse } = group;
   if (values.length !== order) {
-    throw new ThalwegError('dimension-mismatch', `expected ${order} lengths, one for each element, got ${values.length}`, {
-      pointer: POINTER,
-    });
+    throw new ThalwegError(
+      'dimension-mismatch',
+      `expected ${order} lengths, one for each element, got ${values.length}`,
+      {
+        pointer: POINTER,
+      },
+    );
   }
   const bad = values.findIndex((x) => !Number.isFinite(x));
   if (bad >= 0) {

@@ -42,7 +42,14 @@ export function sumGenerator(terms: readonly SumTerm[]): Generator {
     for (const jump of g.jumps) jumps.push({ ...jump, matrix: scaleSparse(jump.matrix, Math.sqrt(weight)) });
     superoperator = addScaled(superoperator, g.superoperator, weight);
   });
-  const sum: Generator = { algebra, hamiltonian, jumps, superoperator, declaredState: null, origin: { kind: 'sum', terms } };
+  const sum: Generator = {
+    algebra,
+    hamiltonian,
+    jumps,
+    superoperator,
+    declaredState: null,
+    origin: { kind: 'sum', terms },
+  };
   return { ...sum, declaredState: commonState(sum, terms) };
 }
 

@@ -41,7 +41,11 @@ export function superoperatorGenerator(form: SuperoperatorForm): Generator {
   };
 }
 
-function stackedMap(n: number, matrix: SparseMatrix, stacking: 'rows' | 'columns'): (a: ComplexMatrix) => ComplexMatrix {
+function stackedMap(
+  n: number,
+  matrix: SparseMatrix,
+  stacking: 'rows' | 'columns',
+): (a: ComplexMatrix) => ComplexMatrix {
   const place = stacking === 'rows' ? (k: number) => k : (k: number) => (k % n) * n + Math.floor(k / n);
   return (a) => {
     const out = zeros(n);
@@ -57,7 +61,11 @@ function stackedMap(n: number, matrix: SparseMatrix, stacking: 'rows' | 'columns
   };
 }
 
-function requireWellBehaved(algebra: BlockAlgebra, map: (a: ComplexMatrix) => ComplexMatrix, matrix: SparseMatrix): void {
+function requireWellBehaved(
+  algebra: BlockAlgebra,
+  map: (a: ComplexMatrix) => ComplexMatrix,
+  matrix: SparseMatrix,
+): void {
   let skew = 0;
   let off = 0;
   for (let k = 0; k < algebra.dimension; k++) {

@@ -62,7 +62,10 @@ function unitImages(g: Generator): (ComplexMatrix | null)[] {
   const { size: n, dimension: d, row, col, blockOf } = algebra;
   const s = g.superoperator as Float64Array;
   const column = (k: number): ComplexMatrix =>
-    fromCoordinates(algebra, Float64Array.from({ length: d }, (_, at) => s[at * d + k]));
+    fromCoordinates(
+      algebra,
+      Float64Array.from({ length: d }, (_, at) => s[at * d + k]),
+    );
   const place = new Map(Array.from(row, (i, k) => [i * n + col[k], k]));
   return Array.from({ length: n * n }, (_, at) => {
     const i = Math.floor(at / n);
@@ -85,7 +88,12 @@ function unitImages(g: Generator): (ComplexMatrix | null)[] {
 }
 
 /** out += id ⊗ S_f ⊗ id in the Hermitian basis of the product, column by column. */
-function addFactor(out: Float64Array, tensor: TensorAlgebra, f: number, images: readonly (ComplexMatrix | null)[]): void {
+function addFactor(
+  out: Float64Array,
+  tensor: TensorAlgebra,
+  f: number,
+  images: readonly (ComplexMatrix | null)[],
+): void {
   const { algebra, factors, position } = tensor;
   const { dimension: d, size: n, row, col } = algebra;
   const m = factors[f].size;
