@@ -25,7 +25,8 @@ export {
 export { encodeMatrix } from './matrix/encode-matrix.js';
 export { type ReadFile } from './matrix/file-form.js';
 export * from './matrix/matrix-document.js';
-export { bathSpectrum } from './model/bath-spectrum.js';
+export { buildGenerator } from './model/build-generator.js';
+export { loadModel, type LoadedModel } from './model/load-model.js';
 export * from './model/model-document.js';
 export { denseModel, resolveModel, type ResolvedModel, type ResolveOptions } from './model/resolve-model.js';
 export { readMtx } from './mtx/read-mtx.js';
@@ -39,3 +40,5 @@ export { stateSchema, type StateDocument } from './schema/state-schema.js';
 export { verdictSchema, type VerdictDocument } from './schema/verdict-schema.js';
 export { witnessSchema, type WitnessDocument } from './schema/witness-schema.js';
 export { type EndDocument } from './schema/end-schema.js';
+export { encodeBracket, encodeEnd } from './encode/encode-end.js';
+export { decodeWitness, encodeWitness } from './encode/encode-witness.js';

@@ -91,7 +91,11 @@ export interface DaviesForm<M> {
   spectrum: SpectrumDocument;
 }
 
-/** The bath spectrum g(w), w the energy the system loses (a rate); each satisfies g(−w) = e^{−beta w} g(w). */
+/**
+ * The bath spectrum g(w), a rate, w the energy that the system loses; each satisfies g(−w) = e^{−beta w} g(w):
+ * flat: strength/(1+e^{−beta w}); ohmic: strength·w e^{−|w|/cutoff}/(1−e^{−beta w}), without cutoff when it is left out;
+ * metropolis: strength·min(1, e^{beta w}); table: [w, g(w)] for each Bohr frequency, one of ±w is enough.
+ */
 export type SpectrumDocument =
   | { kind: 'flat'; strength: number }
   | { kind: 'ohmic'; strength: number; cutoff?: number }

@@ -1,6 +1,5 @@
 import { z } from 'zod';
 import { fault, type Fault } from '../fault.js';
-import { findSpectrumFault } from '../model/bath-spectrum.js';
 import type { GroupDocument, LengthForm } from '../model/model-document.js';
 import { finite, list, oneOf, strict, text, whole, withoutFault } from './fields.js';
 import { matrixSchema, rowsSchema } from './matrix-schema.js';
@@ -54,16 +53,13 @@ export const lengthSchema = withoutFault(
 
 export const schurSchema = strict({ form: z.literal('schur'), points: rowsSchema });
 
-export const daviesSchema = withoutFault(
-  strict({
-    form: z.literal('davies'),
-    hamiltonian: matrixSchema,
-    couplings: list(matrixSchema, 1),
-    beta: finite.nonnegative(),
-    spectrum: spectrumSchema,
-  }),
-  findSpectrumFault,
-);
+export const daviesSchema = strict({
+  form: z.literal('davies'),
+  hamiltonian: matrixSchema,
+  couplings: list(matrixSchema, 1),
+  beta: finite,
+  spectrum: spectrumSchema,
+});
 
 export const superoperatorSchema = strict({
   form: z.literal('superoperator'),

@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { blocksSchema } from './generator-forms.js';
 import { finite, list, oneOf, strict, text, whole } from './fields.js';
 import { matrixSchema } from './matrix-schema.js';
 import { modelSummarySchema, symmetrySchema, toolSchema } from './sheet-schema.js';
@@ -16,18 +15,22 @@ export const reportSchema = strict({
   markov: strict({
     hermitian: checkSchema,
     unital: checkSchema,
-    completelyPositive: strict({ holds: z.boolean(), smallestEigenvalue: finite }),
+    /** By form: it follows from jumps with rates of at least 0, and no eigenvalue was computed. */
+    completelyPositive: strict({ holds: z.boolean(), smallestEigenvalue: finite, byForm: z.boolean().optional() }),
   }),
   symmetry: strict({ kind: symmetrySchema, residuals: z.record(z.string(), finite.nonnegative()) }),
   state: matrixSchema.nullable(),
-  fixedPoints: strict({ dimension: whole(1), blocks: blocksSchema }).nullable(),
-  primitive: z.boolean(),
+  /** Blocks are empty when the fixed points are no algebra. */
+  fixedPoints: strict({ dimension: whole(1), blocks: list(whole(1)) }).nullable(),
+  primitive: z.boolean().nullable(),
   /** The canonical form; null without GNS symmetry. */
   jumps: list(
     strict({ label: text.optional(), frequency: finite, norm: finite.nonnegative(), matrix: matrixSchema.optional() }),
   ).nullable(),
+  /** ‖L − L rebuilt from the jumps‖/‖L‖. */
+  canonicalResidual: finite.nonnegative().optional(),
   /** Eigenvalues of −L, [re, im] where they are not real. */
-  spectrum: list(oneOf('a number or [re, im]', [finite, complexSchema])),
+  spectrum: list(oneOf('a number or [re, im]', [finite, complexSchema])).nullable(),
   notes: list(text).optional(),
   tool: toolSchema,
 });

@@ -17,7 +17,8 @@ export const modelSummarySchema = strict({
   dimension: whole(1),
   blocks: blocksSchema,
   symmetry: symmetrySchema,
-  primitive: z.boolean(),
+  /** Null where it was not found out: no Markov semigroup, or an algebra too large for it. */
+  primitive: z.boolean().nullable(),
 });
 
 export const constantSchema = withoutFault(
