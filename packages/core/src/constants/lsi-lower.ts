@@ -18,7 +18,7 @@ export function lsiFromGap(structure: Structure, gap: End | null): End | null {
     const by = 'gap times the constant of id − E_σ, smallest weight of σ (primitive; Diaconis & Saloff-Coste 1996)';
     return scaledEnd(input, lsiOfProjection(state.smallest), by);
   }
-  if (algebra.blocks.length === 1 && symmetry?.kind === 'tracial') {
+  if (algebra.blocks.length === 1 && symmetry.kind === 'tracial') {
     const by = 'gap times the constant of id − E_σ, σ = 1/n (primitive; Müller-Hermes, Stilck França & Wolf 2016)';
     return scaledEnd(input, lsiOfProjection(1 / algebra.size), by);
   }

@@ -40,8 +40,8 @@ export function mixingUpper(
 export function mixingLower(structure: Structure, epsilon: number, gap: End | null): End | null {
   requireDistance(epsilon);
   const input = positiveBound(gap);
-  const kind = structure.symmetry?.kind;
-  if (!input || epsilon >= 1 || kind === undefined || kind === 'none') return null;
+  const kind = structure.symmetry.kind;
+  if (!input || epsilon >= 1 || kind === 'none') return null;
   return decayTime(input, -Math.log(epsilon), 'eigenvector of the gap (KMS-symmetric)');
 }
 

@@ -42,13 +42,19 @@ export interface EntropyJump {
 
 /**
  * Prepare entropies for the amplification by M_k. Throws `not-supported` without a faithful invariant state, to which
- * every entropy refers.
+ * every entropy refers, and `too-large` where its fixed points were not found.
  */
 export function entropyModel(structure: Structure, amplification = 1): EntropyModel {
   const known = models.get(structure)?.get(amplification);
   if (known) return known;
   const { generator, algebra: base, state, fixedPoints, canonical } = structure;
-  if (!state || !state.faithful || !fixedPoints) {
+  if (state?.faithful && !fixedPoints) {
+    throw new ThalwegError(
+      'too-large',
+      `expected an algebra whose fixed points could be found, got dimension ${base.dimension}; entropies refer to them`,
+    );
+  }
+  if (!state?.faithful || !fixedPoints) {
     throw new ThalwegError(
       'not-supported',
       'expected a generator with a faithful invariant state, got one without; entropy constants are not defined for it',
