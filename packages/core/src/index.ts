@@ -43,3 +43,4 @@ export { referenceState, type ReferenceState } from './structure/reference-state
 export { symmetryOf, type Symmetry, type SymmetryKind } from './structure/symmetry.js';
 export { fixedPoints, type FixedPoints } from './structure/fixed-points.js';
 export { canonicalForm, type CanonicalForm, type CanonicalJump } from './structure/canonical-form.js';
+export * from './families/index.js';

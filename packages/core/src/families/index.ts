@@ -1,0 +1,16 @@
+export { birthDeath, path } from './birth-death.js';
+export { completeGraph } from './complete-graph.js';
+export { cycle } from './cycle.js';
+export { dephasing } from './dephasing.js';
+export { depolarising } from './depolarising.js';
+export { fermionicNumber } from './fermionic-number.js';
+export { generalisedDepolarising } from './generalised-depolarising.js';
+export { hypercube } from './hypercube.js';
+export { localDepolarising } from './local-depolarising.js';
+export { mixedSpinSystem } from './mixed-spin-system.js';
+export { pauliJumps } from './pauli-jumps.js';
+export { pauliString } from './pauli-string.js';
+export { thermalQubit } from './thermal-qubit.js';
+export { truncatedOscillator } from './truncated-oscillator.js';
+export { weylJumps } from './weyl-jumps.js';
+export { weylOperator } from './weyl-operator.js';
