@@ -208,10 +208,8 @@ export function kronecker(a: ComplexMatrix, b: ComplexMatrix): ComplexMatrix {
 
 /** Block-diagonal matrix with the given blocks, in order. */
 export function directSum(blocks: readonly ComplexMatrix[]): ComplexMatrix {
-  const c = zeros(
-    blocks.reduce((n, b) => n + b.rows, 0),
-    blocks.reduce((n, b) => n + b.cols, 0),
-  );
+  const total = (side: 'rows' | 'cols'): number => blocks.reduce((n, b) => n + b[side], 0);
+  const c = zeros(total('rows'), total('cols'));
   let row = 0;
   let col = 0;
   for (const b of blocks) {
@@ -233,7 +231,6 @@ export function hermitianPart(a: ComplexMatrix): ComplexMatrix {
 
 /** ‖A − A*‖_F. */
 export function hermiticityResidual(a: ComplexMatrix): number {
-  requireSquare(a);
   return frobeniusNorm(subtract(a, adjoint(a)));
 }
 

@@ -1,7 +1,8 @@
 import { requireFinite, requireSquare } from './shape-checks.js';
 import { zeros, type ComplexMatrix } from './complex-matrix.js';
 import { accumulateHermitian, reduceHermitian } from './hermitian-tridiagonal.js';
-import { orderDiagonal, safeUnit, sortPairs, symmetricEigenInto, symmetricWork } from './symmetric-eigen.js';
+import { safeUnit } from './safe-unit.js';
+import { orderDiagonal, sortPairs, symmetricEigenInto, symmetricWork } from './symmetric-eigen.js';
 import { tridiagonalQL } from './tridiagonal-ql.js';
 
 /** Eigenvalues ascending; column k of the unitary `vectors` belongs to values[k]. */

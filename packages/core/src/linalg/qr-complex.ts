@@ -1,4 +1,5 @@
 import { zeros, copy, type ComplexMatrix } from './complex-matrix.js';
+import { safeUnit } from './safe-unit.js';
 import { requireFinite } from './shape-checks.js';
 
 /**
@@ -21,13 +22,14 @@ export function qrComplex(a: ComplexMatrix): { q: ComplexMatrix; r: ComplexMatri
 export function packedComplexQR(a: ComplexMatrix, pivoting: boolean): PackedComplexQR {
   requireFinite(a.re);
   requireFinite(a.im);
+  const inverse = 1 / Math.max(safeUnit(a.re, a.re.length), safeUnit(a.im, a.im.length));
   const packed = copy(a);
   const steps = Math.min(a.rows, a.cols);
   const scale = new Float64Array(steps);
   const pivots = Int32Array.from({ length: a.cols }, (_, j) => j);
   const work = zeros(1, a.cols);
   for (let k = 0; k < steps; k++) {
-    if (pivoting) swapColumns(packed, pivots, k, largestColumn(packed, k, work.re));
+    if (pivoting) swapColumns(packed, pivots, k, largestColumn(packed, k, work.re, inverse));
     scale[k] = formReflector(packed, k);
     if (scale[k] > 0) reflectColumns(packed, k, scale[k], work);
   }
@@ -66,10 +68,11 @@ export function upperTriangleComplex({ packed }: PackedComplexQR): ComplexMatrix
   return r;
 }
 
-function largestColumn(a: ComplexMatrix, k: number, sums: Float64Array): number {
+function largestColumn(a: ComplexMatrix, k: number, sums: Float64Array, inverse: number): number {
   sums.fill(0);
   for (let i = k; i < a.rows; i++) {
-    for (let j = k, p = i * a.cols + k; j < a.cols; j++, p++) sums[j] += a.re[p] * a.re[p] + a.im[p] * a.im[p];
+    for (let j = k, p = i * a.cols + k; j < a.cols; j++, p++)
+      sums[j] += (a.re[p] * inverse) ** 2 + (a.im[p] * inverse) ** 2;
   }
   let best = k;
   for (let j = k + 1; j < a.cols; j++) if (sums[j] > sums[best]) best = j;

@@ -1,3 +1,4 @@
+import { safeUnit } from './safe-unit.js';
 import { requireFinite, requireLength } from './shape-checks.js';
 
 /**
@@ -27,6 +28,7 @@ export function qrReal(a: Float64Array, m: number, n: number): { q: Float64Array
 export function packedQR(a: Float64Array, m: number, n: number, pivoting: boolean): PackedQR {
   requireLength(a, m * n);
   requireFinite(a);
+  const inverse = 1 / safeUnit(a, a.length);
   const packed = a.slice();
   const steps = Math.min(m, n);
   const scale = new Float64Array(steps);
@@ -35,7 +37,7 @@ export function packedQR(a: Float64Array, m: number, n: number, pivoting: boolea
   for (let k = 0; k < steps; k++) {
     if (pivoting) {
       // Norms are recomputed, not downdated: one more pass over the block, and no cancellation.
-      const best = largestColumn(packed, m, n, k, work);
+      const best = largestColumn(packed, m, n, k, work, inverse);
       if (best !== k) swapColumns(packed, m, n, pivots, k, best);
     }
     scale[k] = formReflector(packed, m, n, k);
@@ -72,10 +74,10 @@ export function upperTriangle({ m, n, packed }: PackedQR): Float64Array {
   return r;
 }
 
-function largestColumn(a: Float64Array, m: number, n: number, k: number, sums: Float64Array): number {
+function largestColumn(a: Float64Array, m: number, n: number, k: number, sums: Float64Array, inverse: number): number {
   sums.fill(0);
   for (let i = k; i < m; i++) {
-    for (let j = k, p = i * n + k; j < n; j++, p++) sums[j] += a[p] * a[p];
+    for (let j = k, p = i * n + k; j < n; j++, p++) sums[j] += (a[p] * inverse) ** 2;
   }
   let best = k;
   for (let j = k + 1; j < n; j++) if (sums[j] > sums[best]) best = j;

@@ -13,7 +13,7 @@ import {
 } from './complex-matrix.js';
 import { packedComplexQR, unitaryColumns, upperTriangleComplex } from './qr-complex.js';
 import { completeOrthonormal } from './orthonormal-completion.js';
-import { safeUnit } from './symmetric-eigen.js';
+import { safeUnit } from './safe-unit.js';
 
 /** A = u diag(s) v*: u is m × k and v is n × k with orthonormal columns, k = min(m, n), s descending and ≥ 0. */
 export interface ComplexSVD {

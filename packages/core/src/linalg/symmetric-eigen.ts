@@ -1,5 +1,5 @@
-import { EIGEN_SAFE_RANGE } from '../tolerances.js';
-import { requireFinite, requireLength } from './shape-checks.js';
+import { safeUnit } from './safe-unit.js';
+import { requireLength } from './shape-checks.js';
 import { accumulateReflectors, reduceSymmetric } from './symmetric-tridiagonal.js';
 import { tridiagonalQL } from './tridiagonal-ql.js';
 
@@ -85,18 +85,6 @@ export function loadSymmetric(a: Float64Array, n: number, work: SymmetricWork): 
     work.a[i * n + i] = a[row + col] / unit;
   }
   return unit;
-}
-
-/** A power of two that brings the largest entry near 1 if it is outside the safe range, else 1; checks finiteness. */
-export function safeUnit(a: Float64Array, count: number): number {
-  let top = 0;
-  for (let k = 0; k < count; k++) {
-    const x = Math.abs(a[k]);
-    if (!(x <= top)) top = x;
-  }
-  if (top < EIGEN_SAFE_RANGE && top * EIGEN_SAFE_RANGE > 1) return 1;
-  requireFinite(a, count);
-  return 2 ** Math.max(-1000, Math.floor(Math.log2(top)));
 }
 
 /** Stable insertion sort of the indices by |a_ii|. */
