@@ -29,9 +29,9 @@ export default {
     {
       name: 'other-packages-through-their-index',
       severity: 'error',
-      comment: 'Internals of a package are not importable from outside it.',
+      comment: 'What a package offers is what its manifest exports: src/index.ts, and src/node/index.ts for Node.js only.',
       from: { path: '^(packages|apps)/([^/]+)/' },
-      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/index\\.ts$', '^$1/$2/'] },
+      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/(node/)?index\\.ts$', '^$1/$2/'] },
     },
     {
       name: 'no-cycles',

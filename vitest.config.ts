@@ -1,18 +1,24 @@
 import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'vitest/config';
 
-const source = (path: string) => fileURLToPath(new URL(path, import.meta.url));
+const root = fileURLToPath(new URL('.', import.meta.url));
+const source = (path: string) => `${root}${path}`;
 
 /** Tests run against the sources: packages are resolved to src, so no build is needed for the pure tier. */
 export default defineConfig({
   resolve: {
-    alias: {
-      '@thalweg/core': source('packages/core/src/index.ts'),
-      '@thalweg/format': source('packages/format/src/index.ts'),
-    },
+    alias: [
+      { find: /^@thalweg\/(core|format)$/, replacement: source('packages/$1/src/index.ts') },
+      { find: /^@thalweg\/(core|format)\/(\w+)$/, replacement: source('packages/$1/src/$2/index.ts') },
+    ],
   },
   test: {
-    include: ['packages/*/test/**/*.test.ts', 'apps/*/test/**/*.test.ts', 'tests/**/*.test.ts'],
+    include: [
+      'packages/*/test/**/*.test.ts',
+      'apps/*/test/**/*.test.ts',
+      'tests/**/*.test.ts',
+      'packages/setup/test/**/*.test.mjs',
+    ],
     testTimeout: 60_000,
     hookTimeout: 60_000,
     benchmark: { include: ['tests/bench/**/*.bench.ts', 'packages/*/bench/**/*.bench.ts'] },

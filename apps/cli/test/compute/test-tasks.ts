@@ -16,6 +16,7 @@ export const TEST_TASKS = {
   crash: (_: null): number => {
     throw new TypeError('a fault of the task');
   },
+  // eslint-disable-next-line no-restricted-syntax -- the death of a thread is what is tested.
   exit: (_: null): never => process.exit(3) as never,
   spin: (_: null): never => {
     for (;;);
