@@ -48,7 +48,7 @@ function expectation(issue: Issue): string {
     case 'invalid_value':
       return alternatives(issue.values);
     case 'invalid_union':
-      return alternatives((issue as { options?: unknown[] }).options ?? []);
+      return 'options' in issue ? alternatives(issue.options as unknown[]) : 'plain JSON data';
     case 'too_small':
       return sized(issue.origin, 'at least', issue.minimum, issue.inclusive);
     case 'too_big':
@@ -79,7 +79,7 @@ function sized(origin: string, relation: 'at least' | 'at most', bound: number |
   if (origin === 'array') return `a list of ${relation} ${count(Number(bound), 'item')}`;
   if (origin === 'string') return `a text of ${relation} ${count(Number(bound), 'character')}`;
   const strictly = relation === 'at least' ? 'above' : 'below';
-  return `a ${origin === 'int' ? 'whole number' : 'number'} ${inclusive ? relation : strictly} ${bound}`;
+  return `a number ${inclusive ? `of ${relation}` : strictly} ${bound}`;
 }
 
 function correction(path: readonly PathSegment[]): string {

@@ -13,7 +13,7 @@ export const digest = z.string().regex(/^[0-9a-f]{64}$/, 'expected a SHA-256 dig
 
 /** A whole number of at least `least`. */
 export function whole(least: number) {
-  return z.int().min(least);
+  return z.int().min(least, `expected a whole number of at least ${least}`);
 }
 
 /** An object with exactly these fields; an unknown one is reported with the known ones. */

@@ -21,14 +21,19 @@ export function mainIssue(issues: readonly Issue[], value: unknown): Issue {
   return { ...inner, path: [...issue.path, ...inner.path] };
 }
 
-/** The branch with the fewest missing and unknown fields; null when two tie or none has the right type. */
+/** The branch with the fewest missing and unknown fields; null when two tie or none knows anything of the value. */
 function meantBranch(branches: readonly (readonly Issue[])[], value: unknown): readonly Issue[] | null {
   const ranked = branches
     .map((issues) => ({ issues, cost: branchCost(issues, value) }))
     .sort((a, b) => a.cost - b.cost);
   const [best, second] = ranked;
-  if (!best || best.cost === Infinity || best.cost === second?.cost) return null;
+  if (!best || best.cost === Infinity || best.cost === second?.cost || knowsNothing(best.issues, value)) return null;
   return best.issues;
+}
+
+function knowsNothing(issues: readonly Issue[], value: unknown): boolean {
+  const unknown = issues.find((issue) => issue.code === 'unrecognized_keys' && issue.path.length === 0);
+  return unknown?.code === 'unrecognized_keys' && unknown.keys.length === Object.keys(value ?? {}).length;
 }
 
 function branchCost(issues: readonly Issue[], value: unknown): number {

@@ -2,6 +2,7 @@ import type { z } from 'zod';
 import { ThalwegError } from '@thalweg/core';
 import { describeValue } from '../describe-value.js';
 import { parseJson } from '../json/parse-json.js';
+import { requireDepth } from '../json/require-depth.js';
 import { valueAt } from '../json/value-at.js';
 import type { MatrixDocument } from '../matrix/matrix-document.js';
 import type { ModelDocument } from '../model/model-document.js';
@@ -43,11 +44,12 @@ export function parseDocument(source: Source): AnyDocument {
 }
 
 export function parseModel(source: Source): ModelDocument {
-  return checkModel(parseJson(source));
+  return checkDocument(modelSchema, parseJson(source));
 }
 
 /** A model that is already a value, for example what an example's generator returned. */
 export function checkModel(value: unknown): ModelDocument {
+  requireDepth(value);
   return checkDocument(modelSchema, value);
 }
 
