@@ -169,3 +169,13 @@ export const STATE_ERROR = 256;
 
 /** Given jumps count as modular, traceless, orthogonal and paired when they miss it by less than x of their size. */
 export const GIVEN_JUMP_TOLERANCE = 1e-10;
+
+/** Values below this times the gap are compared to this times the gap when a bracket's width is judged: a zero can close. */
+export const CLOSED_FLOOR = 1e-3;
+
+/** Lanczos works in the whole space up to this dimension, and otherwise keeps this many vectors beside two per eigenpair. */
+export const LANCZOS_WHOLE = 160;
+export const LANCZOS_SUBSPACE = 40;
+
+/** A witness may state a value below its own quotient by this, relative: decimal rounding of the document. */
+export const WITNESS_TOLERANCE = 1e-12;

@@ -1,6 +1,7 @@
 import { ThalwegError } from '../errors.js';
 import { EPSILON, QR_STEPS_PER_EIGENVALUE } from '../tolerances.js';
 import { balance, reduceHessenberg } from './hessenberg.js';
+import { safeUnit } from './safe-unit.js';
 import { requireFinite, requireLength } from './shape-checks.js';
 
 /** Eigenvalue k is re[k] + i im[k]; conjugate pairs are neighbours with the positive imaginary part first. */
@@ -17,7 +18,8 @@ export interface GeneralEigenvalues {
 export function eigenvaluesGeneral(a: Float64Array, n: number): GeneralEigenvalues {
   requireLength(a, n * n);
   requireFinite(a);
-  const h = a.slice();
+  const unit = safeUnit(a, a.length);
+  const h = a.map((x) => x / unit);
   balance(h, n);
   reduceHessenberg(h, n);
   const found = { re: new Float64Array(n), im: new Float64Array(n) };
@@ -40,7 +42,7 @@ export function eigenvaluesGeneral(a: Float64Array, n: number): GeneralEigenvalu
     if (steps % 10 === 0) shift += exceptionalShift(h, n, end);
     doubleShiftStep(h, n, start, end, steps % 10 === 0);
   }
-  return sorted(found);
+  return sorted(found, unit);
 }
 
 /** The least index whose block up to `end` has no negligible subdiagonal element. */
@@ -191,9 +193,9 @@ function chase(
   }
 }
 
-function sorted({ re, im }: GeneralEigenvalues): GeneralEigenvalues {
+function sorted({ re, im }: GeneralEigenvalues, unit: number): GeneralEigenvalues {
   const order = Array.from(re, (_, k) => k).sort(
     (i, k) => re[i] - re[k] || Math.abs(im[i]) - Math.abs(im[k]) || im[k] - im[i],
   );
-  return { re: Float64Array.from(order, (k) => re[k]), im: Float64Array.from(order, (k) => im[k]) };
+  return { re: Float64Array.from(order, (k) => re[k] * unit), im: Float64Array.from(order, (k) => im[k] * unit) };
 }

@@ -1,6 +1,6 @@
 import { ThalwegError } from '../errors.js';
 import type { Random } from '../random.js';
-import { EPSILON, KRYLOV_BREAKDOWN } from '../tolerances.js';
+import { EPSILON, KRYLOV_BREAKDOWN, LANCZOS_SUBSPACE, LANCZOS_WHOLE } from '../tolerances.js';
 import { norm, orthogonalise } from './orthogonalise.js';
 import { symmetricEigen } from './symmetric-eigen.js';
 
@@ -32,7 +32,7 @@ interface Ritz {
 /** One thick-restart Lanczos iteration from a random start; `want` Ritz pairs, ascending, orthonormal vectors. */
 export function lanczosRun(run: LanczosRun): Ritz {
   const { operator, locked, want, tolerance, floor } = run;
-  const size = Math.min(operator.dimension - locked.length, Math.max(2 * want + 20, 30));
+  const size = subspaceSize(operator.dimension - locked.length, want);
   const projected = new Float64Array(size * size);
   let basis = [freshDirection(run, [])];
   let kept = 0;
@@ -54,6 +54,11 @@ export function lanczosRun(run: LanczosRun): Ritz {
   }
 }
 
+/** Small problems are solved whole, which also settles spectra too close for restarts. */
+function subspaceSize(available: number, want: number): number {
+  return available <= LANCZOS_WHOLE ? available : Math.min(available, 2 * want + LANCZOS_SUBSPACE);
+}
+
 /** Grows the basis to full size, filling the projected matrix from column `from`; returns the last direction. */
 function extend(
   run: LanczosRun,
@@ -73,7 +78,8 @@ function extend(
     // Rounding left in w by the projections must not count as a new direction.
     orthogonalise(w, locked);
     let coupling = norm(w);
-    const exhausted = coupling <= KRYLOV_BREAKDOWN * EPSILON * largest * Math.sqrt(operator.dimension);
+    const whole = basis.length + locked.length === operator.dimension;
+    const exhausted = whole || coupling <= KRYLOV_BREAKDOWN * EPSILON * largest * Math.sqrt(operator.dimension);
     if (exhausted) coupling = 0;
     if (j === size - 1) return { coupling, next: exhausted ? w : w.map((x) => x / coupling) };
     basis.push(exhausted ? freshDirection(run, basis) : w.map((x) => x / coupling));
