@@ -3,7 +3,8 @@
 import numpy as np
 import scipy.optimize
 
-LARGEST_LOGARITHM = 40.0  # eigenvalues of H are kept within this distance of each other
+LARGEST_LOGARITHM = 20.0  # eigenvalues of H are kept this close, so that rho still carries its smallest ones (1e-7)
+OUTSIDE = 1e6  # value given to points where f cannot be evaluated
 
 
 def state_from_coordinates(algebra, x):
@@ -19,7 +20,10 @@ def minimise(algebra, f, seed=0, starts=8, spread=1.0):
     rng = np.random.default_rng(seed)
 
     def objective(x):
-        return f(state_from_coordinates(algebra, x))
+        if not np.abs(x).max() < 1e3:
+            return OUTSIDE
+        value = f(state_from_coordinates(algebra, x))
+        return value if np.isfinite(value) else OUTSIDE
 
     best, where = np.inf, None
     for start in range(starts):

@@ -19,6 +19,7 @@ import generators as gen
 import group_algebra
 import search
 import semigroup as sg
+from model import semigroup_of
 
 SEED = 7
 
@@ -131,8 +132,59 @@ def closed_forms():
         length = group_algebra.word_length(group, table)
         direct = bakry_emery.cbe(group_algebra.length_semigroup(table, length))
         yield "group %s, cbe from k o k - K k" % group, direct - group_algebra.cbe_of_length(table, length), 1e-8
-    value = search.minimise(gen.expectation_onto([2], "scalars").algebra, qubit_mlsi, SEED, 2)[0]
+    for n in (3, 4):
+        value = curvature.kappa(curvature.Geometry(gen.expectation_onto([n], "scalars")), two_level_state(n, 0.35))[0]
+        yield "depolarising %d, kappa at (1,1,r,..,r)" % n, value - two_level_kappa(n, 0.35), 1e-10
+    qubit = gen.expectation_onto([2], "scalars")
+    amplified = bakry_emery.be(gen.amplify(qubit, 2), SEED, 2)[0]
+    yield "be of L (x) id_2 = cbe of L", amplified - bakry_emery.cbe(qubit), 1e-6
+    value = search.minimise(qubit.algebra, qubit_mlsi, SEED, 2)[0]
     yield "depolarising 2, mlsi = 1", value - 1, 1e-5
+
+
+def two_level_state(n, r):
+    values = np.array([1.0, 1.0] + [r] * (n - 2))
+    return np.diag(values / values.sum()).astype(complex)
+
+
+def two_level_kappa(n, r):
+    """q/norm at that state for a traceless observable of the two equal levels, from
+    kappa = 1/2 + sum (Lambda^2/(lambda_a lambda_b)) w_ab / (2n sum Lambda w_ab), w_ab = sum_j |(d_j A)_ab|^2."""
+    mean = (1 - r) / -np.log(r)
+    return 0.5 + (2 + (n - 2) * mean**2 / r) * (2 + (n - 2) * r) / (2 + (n - 2) * mean) / (2 * n)
+
+
+def same_semigroup():
+    """(law, residual, tolerance): one thermal qubit written in six forms of thalweg.model/1."""
+    beta, e01 = 0.8, [[0, 1], [0, 0]]
+    e10, state = [[0, 0], [1, 0]], [[1 / (1 + np.exp(-beta)), 0], [0, 1 / (1 + np.exp(beta))]]
+    down, up = 2 * np.exp(beta / 2), 2 * np.exp(-beta / 2)
+    terms = [{"matrix": e01, "frequency": -beta}, {"matrix": e10, "frequency": beta}]
+    jumps = [{"matrix": e01, "rate": down}, {"matrix": e10, "rate": up}]
+    lindblad = {"form": "lindblad", "jumps": jumps}
+    reference = semigroup_of({"algebra": [2], "generator": lindblad})
+    full = reference.generator  # M = M_2: matrix-unit coordinates are rows stacked
+    swap = [0, 2, 1, 3]
+    columns = full[np.ix_(swap, swap)].real.tolist()
+    schroedinger = full.conj().T.real.tolist()
+    flat = {"kind": "flat", "strength": down + up}
+    quarter, rest = {"weight": 0.25, "generator": lindblad}, {"weight": 0.75, "generator": lindblad}
+    forms = {
+        "balanced": {"form": "balanced", "state": state, "terms": terms},
+        "davies": {"form": "davies", "hamiltonian": [[0, 0], [0, 1]], "couplings": [[[0, 1], [1, 0]]], "beta": beta,
+                   "spectrum": flat},
+        "superoperator, columns": {"form": "superoperator", "matrix": columns, "picture": "heisenberg",
+                                   "stacking": "columns"},
+        "superoperator, states": {"form": "superoperator", "matrix": schroedinger, "picture": "schroedinger",
+                                  "stacking": "rows"},
+        "sum": {"form": "sum", "terms": [quarter, rest]},
+    }
+    for name, form in forms.items():
+        model = semigroup_of({"algebra": [2], "generator": form})
+        yield "%s = lindblad" % name, np.abs(model.generator - full).max(), 1e-12
+        yield "%s has the Gibbs state" % name, np.abs(sg.reference_state(model) - np.array(state)).max(), 1e-12
+    gap = sg.spectrum(reference)[1].real
+    yield "gap = 2 cosh(beta/2)", gap - 2 * np.cosh(beta / 2), 1e-12
 
 
 def qubit_mlsi(rho):
@@ -142,7 +194,7 @@ def qubit_mlsi(rho):
 def main():
     broken = 0
     laws = [(name, law) for name, model in sample_models().items() for law in model_laws(name, model)]
-    laws += [("closed form", law) for law in closed_forms()]
+    laws += [("closed form", law) for law in closed_forms()] + [("thermal qubit", law) for law in same_semigroup()]
     for name, (law, residual, tolerance) in laws:
         holds = abs(residual) <= tolerance
         broken += not holds
