@@ -1,0 +1,60 @@
+import { expect, it } from 'vitest';
+import * as format from '../src/index.js';
+import * as node from '../src/node/index.js';
+
+it('exports these names', () => {
+  expect(Object.keys(format).sort()).toMatchInlineSnapshot(`
+    [
+      "FILE_BYTES_LIMIT",
+      "JSON_LIMITS",
+      "LIST_LIMIT",
+      "MATRIX_LIMITS",
+      "buildGenerator",
+      "canonicalChunks",
+      "canonicalJson",
+      "checkModel",
+      "createSha256",
+      "decodeMatrix",
+      "decodeWitness",
+      "denseModel",
+      "digestModel",
+      "encodeBracket",
+      "encodeEnd",
+      "encodeMatrix",
+      "encodeWitness",
+      "isSparse",
+      "jsonPointer",
+      "loadModel",
+      "matrixForm",
+      "matrixSchema",
+      "modelSchema",
+      "parseDocument",
+      "parseJson",
+      "parseModel",
+      "parseReport",
+      "parseSheet",
+      "parseState",
+      "parseVerdict",
+      "parseWitness",
+      "readMtx",
+      "readNpy",
+      "reportSchema",
+      "resolveModel",
+      "sha256Hex",
+      "sheetSchema",
+      "stateSchema",
+      "toDense",
+      "toSparse",
+      "verdictSchema",
+      "witnessSchema",
+      "writeJson",
+    ]
+  `);
+  expect(Object.keys(node).sort()).toMatchInlineSnapshot(`
+    [
+      "createNodeSha256",
+      "filesBeside",
+      "filesInFolder",
+    ]
+  `);
+});
