@@ -9,6 +9,8 @@ from semigroup import NULL_TOLERANCE, evolve, evolve_state
 
 STEP = 0.02  # first step of the finite differences over min(1/||L||, smallest eigenvalue of rho / ||L^dagger rho||)
 
+SMOOTH_AT_ZERO = ("arithmetic", "left", "right")  # the means that are linear, so that boundary states are allowed
+
 
 class Geometry:
     """Derivations of a GNS-symmetric semigroup, as N^2 x D matrices on the Hermitian coordinates of M."""
@@ -57,6 +59,9 @@ def multiplication_derivative(algebra, rho, eta, omega, mean="logarithmic"):
 def norm_and_q_matrices(geometry, rho, mean="logarithmic"):
     """Hermitian D x D matrices G, Q on Hermitian coordinates with ||A||^2_rho = <A,G A> and q_rho(A) = <A,Q A>."""
     a = geometry.algebra
+    smallest = a.eigh(rho)[0].min()
+    if smallest <= 0 and mean not in SMOOTH_AT_ZERO:
+        raise ValueError("expected a faithful state for the %s mean; got smallest eigenvalue %g" % (mean, smallest))
     eta = geometry.semigroup.apply_adjoint(rho)
     g = np.zeros((a.dimension, a.dimension), dtype=complex)
     half = np.zeros_like(g)
