@@ -8,6 +8,7 @@ import {
   subtract,
   transpose,
   zeros,
+  type ComplexMatrix,
 } from '../../src/linalg/complex-matrix.js';
 import { nullSpace, nullSpaceReal } from '../../src/linalg/null-space.js';
 import { svdComplex } from '../../src/linalg/svd-complex.js';
@@ -78,7 +79,7 @@ describe('nullSpace', () => {
   it('finds the commutant of a spin: multiples of the identity', () => {
     const x = { ...zeros(2), re: Float64Array.of(0, 1, 1, 0) };
     const z = diagonal([1, -1]);
-    const bracket = (h: typeof x): typeof x =>
+    const bracket = (h: ComplexMatrix): ComplexMatrix =>
       subtract(kronecker(h, identity(2)), kronecker(identity(2), transpose(h)));
     const stacked = { ...zeros(8, 4), re: Float64Array.of(...bracket(x).re, ...bracket(z).re) };
     const { basis, dimension } = nullSpaceReal(stacked.re, 8, 4, 1e-12);
