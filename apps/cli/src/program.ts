@@ -1,7 +1,6 @@
-import { CONSTANT_IDS, MEAN_NAMES } from '@thalweg/core';
+import { CONSTANT_IDS, CONVENTION_NAMES, MEAN_NAMES } from '@thalweg/core';
 import { Argument, Command, Option } from 'commander';
 import { SHELLS } from './completion/shells.js';
-import { CONVENTION_NAMES } from './conventions.js';
 import type { VerbName } from './verbs/load-verb.js';
 import type { RawOptions } from './verbs/verb.js';
 import { VERSION } from './version.js';

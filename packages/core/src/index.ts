@@ -1,5 +1,6 @@
 export * from './linalg/index.js';
 export * from './search/index.js';
+export * from './entropy/index.js';
 export { ERROR_CODES, ThalwegError, type ErrorCode, type ErrorContext } from './errors.js';
 export { seededRandom, type Random } from './random.js';
 export { MEAN_NAMES, type MeanName } from './metric/operator-mean.js';
@@ -44,3 +45,5 @@ export { symmetryOf, type Symmetry, type SymmetryKind } from './structure/symmet
 export { fixedPoints, type FixedPoints } from './structure/fixed-points.js';
 export { canonicalForm, type CanonicalForm, type CanonicalJump } from './structure/canonical-form.js';
 export * from './families/index.js';
+export * from './constants/index.js';
+export { verifyWitness, type WitnessCheck } from './witness/verify-witness.js';

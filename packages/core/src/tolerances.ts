@@ -179,3 +179,73 @@ export const LANCZOS_SUBSPACE = 40;
 
 /** A witness may state a value below its own quotient by this, relative: decimal rounding of the document. */
 export const WITNESS_TOLERANCE = 1e-12;
+
+/** D(ρ‖E†ρ) above which a search takes the entropy production from its definition: relative error near 1e-15/x. */
+export const QUICK_ENTROPY = 0.01;
+
+/** D(ρ‖E†ρ) below which a search stops: it is on its way to the projection, where the quotient's limits are known. */
+export const SEARCH_NEARNESS = 1e-7;
+
+/** Dimension up to which L is applied by its D×D matrix in entropy computations. */
+export const MATRIX_ACTION_LIMIT = 256;
+
+/** Relative gap and infeasibilities at which a semidefinite programme is solved. */
+export const PROGRAMME_TOLERANCE = 1e-9;
+
+/** The same, with which a programme whose progress ends in rounding still counts as solved. */
+export const PROGRAMME_ACCEPTED = 1e-7;
+
+/** Limit on interior-point iterations; 15 are typical, 40 occur without an interior. */
+export const PROGRAMME_ITERATIONS = 100;
+
+/** Iterations without a better point after which an interior-point method has stalled. */
+export const PROGRAMME_PATIENCE = 12;
+
+/** A direction of infeasibility may miss its cone or its equations by this, relative to its gain. */
+export const INFEASIBILITY_TOLERANCE = 1e-8;
+
+/** ‖A(X)‖/|<C, X>| below which a projection of X is tried as a proof of infeasibility. */
+export const INFEASIBILITY_CANDIDATE = 0.1;
+
+/** Pivot of the Gram matrix of unit coefficients, a squared distance, below which dependence is looked into. */
+export const DEPENDENCE_PIVOT = 1e-11;
+
+/** ‖Σ c_j A_j‖/Σ|c_j| for unit A_j below which they are dependent. */
+export const DEPENDENCE_RESIDUAL = 1e-13;
+
+/** |Σ c_j b_j|/Σ|c_j b_j| above which dependent coefficients contradict the objective. */
+export const OBJECTIVE_CONSISTENCY = 1e-10;
+
+/** Share of non-zero coordinates from which a coefficient is stored densely. */
+export const DENSE_COEFFICIENT = 0.3;
+
+/** Speed, in products per nanosecond, of the register-blocked kernel and of single inner products (measured). */
+export const DENSE_RATE = 2;
+export const DOT_RATE = 0.7;
+
+/** Pivots of the Schur complement below x times the diagonal entry they came from are rounding. */
+export const SCHUR_PIVOT = 1e-16;
+
+/** Conjugate-gradient steps on a Schur complement after its Cholesky solve. */
+export const SCHUR_REFINEMENTS = 20;
+
+/** Relative residual at which they end. */
+export const SCHUR_RESIDUAL = 1e-14;
+
+/** Lanczos steps for one step length at most. */
+export const LANCZOS_STEPS = 60;
+
+/** Relative residual of a Ritz value that is good enough for a step length. */
+export const LANCZOS_ACCURACY = 0.01;
+
+/** Norm of C − S − Aᵀy, in units of ‖C‖, from which S is recomputed from y. */
+export const DUAL_DRIFT = 1e-12;
+
+/** A point of an interior-point method counts as progress when its worst measure falls below this share of the best one. */
+export const PROGRESS = 0.9;
+
+/** Step lengths below this are no step. */
+export const SHORTEST_STEP = 1e-8;
+
+/** Scaled barrier parameter below which the centring rule stops being superlinear. */
+export const SMALL_BARRIER = 1e-6;

@@ -1,11 +1,11 @@
 import * as z from 'zod';
-import { CONVENTION_NAMES } from '../conventions.js';
+import { CONVENTION_NAMES } from '@thalweg/core';
 import { readDuration, readName, readWholeNumber } from './option-values.js';
 import { textOption } from './parse-options.js';
 import type { Machine } from './verb.js';
 
 export const DEFAULT_SEED = 1;
-export const DEFAULT_CONVENTION = '2alpha';
+export const DEFAULT_CONVENTION = 'two-alpha';
 const MOST_THREADS = 256;
 
 /** The options of every verb that computes, with their defaults. */

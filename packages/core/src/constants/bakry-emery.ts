@@ -49,9 +49,7 @@ export function bakryEmery(
     const vectors = complete ? [unit(size, 0)] : startVectors(size, options.starts ?? 12, options.random);
     for (const start of vectors) {
       if (best && options.stop?.()) return;
-      const found = complete
-        ? solveObservable(gamma, gamma2, start)
-        : alternate(gamma, gamma2, start, options.stop);
+      const found = complete ? solveObservable(gamma, gamma2, start) : alternate(gamma, gamma2, start, options.stop);
       if (best && found.pencil.value >= best.value) continue;
       best = {
         value: found.pencil.value,

@@ -50,7 +50,13 @@ export function degeneratePencil(x: ComplexMatrix, y: ComplexMatrix, scale = fro
   if (kernel > 0) {
     const onKernel = kernelPart(x, xRange, nullBasis, scale);
     if (onKernel.direction) {
-      return { value: -Infinity, vector: onKernel.direction, margin: 0, ...settled, decided: settled.decided && onKernel.decided };
+      return {
+        value: -Infinity,
+        vector: onKernel.direction,
+        margin: 0,
+        ...settled,
+        decided: settled.decided && onKernel.decided,
+      };
     }
     reduced = p;
     addScaledInto(reduced, multiplyAdjointFirst(onKernel.cross, onKernel.solved), -1);
@@ -64,7 +70,12 @@ export function degeneratePencil(x: ComplexMatrix, y: ComplexMatrix, scale = fro
   const c = columns(vectors, 0, 1);
   const vector = multiply(range, c);
   if (kernel > 0) addScaledInto(vector, multiply(nullBasis, multiply(lift, c)), -1);
-  return { value: values[0], vector, margin: rounding / (kept * top) + 8 * n * EPSILON * Math.abs(values[0]), ...settled };
+  return {
+    value: values[0],
+    vector,
+    margin: rounding / (kept * top) + 8 * n * EPSILON * Math.abs(values[0]),
+    ...settled,
+  };
 }
 
 interface KernelPart {
@@ -83,7 +94,12 @@ function kernelPart(x: ComplexMatrix, xRange: ComplexMatrix, nullBasis: ComplexM
   const m = z.rows;
   const none = zeros(m, cross.cols);
   if (eigen.values[0] < -KERNEL_TOLERANCE * scale) {
-    return { cross, solved: none, direction: multiply(nullBasis, columns(eigen.vectors, 0, 1)), decided: eigen.values[0] < -KERNEL_GAP * scale };
+    return {
+      cross,
+      solved: none,
+      direction: multiply(nullBasis, columns(eigen.vectors, 0, 1)),
+      decided: eigen.values[0] < -KERNEL_GAP * scale,
+    };
   }
   let zero = 0;
   while (zero < m && eigen.values[zero] <= KERNEL_TOLERANCE * scale) zero++;
@@ -122,4 +138,3 @@ function rowNorm(a: ComplexMatrix, i: number): number {
   for (let j = 0; j < a.cols; j++) sum += a.re[i * a.cols + j] ** 2 + a.im[i * a.cols + j] ** 2;
   return Math.sqrt(sum);
 }
-

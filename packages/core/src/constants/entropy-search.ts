@@ -4,7 +4,7 @@ import { type LogState, exponentialState, matrixOf, stateOfLogs } from '../entro
 import { ThalwegError } from '../errors.js';
 import { type ComplexMatrix, identity } from '../linalg/complex-matrix.js';
 import { type BfgsOptions, type BfgsReason, minimiseBfgs } from '../search/bfgs.js';
-import { WITNESS_FLOORS } from '../tolerances.js';
+import { SEARCH_NEARNESS, WITNESS_FLOORS } from '../tolerances.js';
 import type { EntropyQuotient } from './mlsi-quotient.js';
 
 /** Where one run of a search for an entropy constant begins: plain data, for any thread. */
@@ -31,11 +31,20 @@ export interface EntropyResult extends EntropyQuotient {
   readonly reason: BfgsReason;
 }
 
+/** A quotient at one state. */
+export interface EntropyEvaluation {
+  readonly value: number;
+  /** D(ρ‖E†ρ). */
+  readonly entropy: number;
+  /** Derivative in H, ρ = exp(H)/Tr exp(H). */
+  readonly gradient: () => ComplexMatrix;
+}
+
 /** What tells the entropy constants apart in a search. */
 export interface EntropyQuotientProblem {
   readonly model: EntropyModel;
-  /** Value at a state and, if asked for, its derivative in H; null where the state is too near its projection. */
-  readonly evaluate: (state: LogState) => { readonly value: number; readonly gradient: ComplexMatrix } | null;
+  /** Null where the state is too near its projection. */
+  readonly evaluate: (state: LogState) => EntropyEvaluation | null;
   /** Plain re-evaluation at a matrix; throws where it cannot be resolved. */
   readonly at: (rho: ComplexMatrix) => EntropyQuotient;
 }
@@ -51,16 +60,25 @@ export function runEntropyStart(
     start.diagonal
       ? stateOfLogs(algebra, x, identity(algebra.size))
       : exponentialState(algebra, fromCoordinates(algebra, x));
+  let lowest = Infinity;
+  let entropyAtLowest = Infinity;
   const objective = (x: Float64Array, gradient: Float64Array): number => {
     const found = problem.evaluate(stateAt(x));
     if (!found) return Infinity;
-    if (start.diagonal) for (let a = 0; a < x.length; a++) gradient[a] = found.gradient.re[a * x.length + a];
-    else toCoordinates(algebra, found.gradient, gradient);
+    if (found.value < lowest) [lowest, entropyAtLowest] = [found.value, found.entropy];
+    const h = found.gradient();
+    if (start.diagonal) for (let a = 0; a < x.length; a++) gradient[a] = h.re[a * x.length + a];
+    else toCoordinates(algebra, h, gradient);
     return found.value;
   };
   const x0 = Float64Array.from(start.x);
   if (!problem.evaluate(stateAt(x0))) return null;
-  const found = minimiseBfgs(objective, x0, { maxIterations: 400, valueTolerance: 1e-13, ...options });
+  const found = minimiseBfgs(objective, x0, {
+    maxIterations: 400,
+    valueTolerance: 1e-12,
+    ...options,
+    stop: () => entropyAtLowest < SEARCH_NEARNESS || (options.stop?.() ?? false),
+  });
   const witness = bestMatrix(problem, stateAt(found.x));
   if (!witness) return null;
   const { constant, label, amplification } = start;

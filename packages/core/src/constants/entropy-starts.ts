@@ -80,7 +80,7 @@ function innerTilts(structure: Structure, state: ReferenceState, diagonal: boole
       [2, -2, 6],
     );
   }
-  for (let i = 1; i < Math.min(n, SPECTRUM_STARTS); i++) {
+  for (let i = 1; i < Math.min(n, EIGENSTATE_STARTS); i++) {
     if (!diagonal || structure.algebra.blocks.length > 1)
       add(
         'eigenstate',
@@ -97,8 +97,9 @@ function innerTilts(structure: Structure, state: ReferenceState, diagonal: boole
   return tilts;
 }
 
-/** Structured starts of one kind at most. */
+/** Limits on structured starts of one kind. */
 const SPECTRUM_STARTS = 8;
+const EIGENSTATE_STARTS = 5;
 
 /** Projections on Σ_i √w_i v_i ⊗ e_i over one block, uniform w and w = σ. */
 function entangledTilts(structure: Structure, state: ReferenceState, k: number): Tilt[] {

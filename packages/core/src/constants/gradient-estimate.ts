@@ -1,13 +1,14 @@
+import { ThalwegError } from '../errors.js';
 import { curvaturePencil, type CurvaturePencil } from '../metric/curvature-pencil.js';
 import type { MetricModel } from '../metric/metric-model.js';
 import { type MeanName, operatorMean } from '../metric/operator-mean.js';
 import { quotientAt, quotientError } from '../metric/quotient.js';
-import { type StateFrame, fromFrame } from '../metric/state-frame.js';
+import { type StateFrame, blockEigen, fromFrame } from '../metric/state-frame.js';
 import { type StateParameters, diagonalParameters, hermitianParameters } from '../metric/state-parameters.js';
 import { minimiseBfgs } from '../search/bfgs.js';
 import { minimiseScalar } from '../search/brent.js';
 import { type ComplexMatrix, zeros } from '../linalg/complex-matrix.js';
-import { LOG_EIGENVALUE_RANGE } from '../tolerances.js';
+import { LOG_EIGENVALUE_RANGE, STATE_FLOORS } from '../tolerances.js';
 import type { SearchStart } from './search-starts.js';
 
 /** Outcome of one start of a search for inf κ(ρ). */
@@ -45,23 +46,79 @@ export function runGradientEstimateStart(
   return witnessAt(problem, parameters.frame(found.x), pencil, counter.evaluations);
 }
 
-/** κ(ρ) with its minimising observable, re-evaluated plainly. */
+/**
+ * The witness at a state, as it can be written down: the state is rounded to a matrix of doubles first, its eigenvalues
+ * raised to the floor among STATE_FLOORS that gives the lowest value, then κ is taken there and re-evaluated plainly.
+ */
 export function witnessAt(
   problem: GradientEstimateProblem,
   frame: StateFrame,
   pencil = curvaturePencil(problem.model, problem.mean),
   evaluations = 1,
 ): GradientEstimateResult {
-  const { observable } = pencil.at(frame);
+  let best: GradientEstimateResult | null = null;
+  for (const floor of STATE_FLOORS) {
+    const raised = raisedFrame(frame, floor);
+    if (best && raised === frame) continue;
+    const found = writtenWitness(problem, fromFrame(raised), pencil, evaluations);
+    if (found && (!best || found.value + found.error < best.value + best.error)) best = found;
+  }
+  if (!best)
+    throw new ThalwegError(
+      'internal',
+      'expected a state whose metric doubles can resolve, found none; report the model',
+    );
+  return best;
+}
+
+/** κ at a density matrix of doubles; throws `state-not-positive` when it is not faithful. */
+export function gradientEstimateAt(problem: GradientEstimateProblem, rho: ComplexMatrix): GradientEstimateResult {
+  const found = writtenWitness(problem, rho, curvaturePencil(problem.model, problem.mean), 1);
+  if (!found) {
+    throw new ThalwegError(
+      'state-not-positive',
+      `expected a state with all eigenvalues above ${STATE_FLOORS[1]}, got a smallest eigenvalue of ${smallestOf(problem, rho)}; mix in a little of the reference state`,
+    );
+  }
+  return found;
+}
+
+function writtenWitness(
+  problem: GradientEstimateProblem,
+  rho: ComplexMatrix,
+  pencil: CurvaturePencil,
+  evaluations: number,
+): GradientEstimateResult | null {
+  const frame = frameOf(problem, rho);
+  const smallestEigenvalue = Math.min(...frame.lambda);
+  if (!(smallestEigenvalue > STATE_FLOORS[1] / 2)) return null;
+  const { observable, kappa } = pencil.at(frame);
+  if (!Number.isFinite(kappa)) return null;
   const q = quotientAt(problem.model, operatorMean(problem.mean), frame, observable);
   return {
     value: q.curvature / q.metric,
     error: quotientError(problem.model, q),
-    state: fromFrame(frame),
+    state: rho,
     observable,
-    smallestEigenvalue: Math.min(...frame.lambda),
+    smallestEigenvalue,
     evaluations,
   };
+}
+
+function frameOf(problem: GradientEstimateProblem, rho: ComplexMatrix): StateFrame {
+  const { values, vectors } = blockEigen(problem.model.algebra, rho);
+  return { lambda: values, u: problem.model.commutative ? null : vectors };
+}
+
+function smallestOf(problem: GradientEstimateProblem, rho: ComplexMatrix): number {
+  return Math.min(...frameOf(problem, rho).lambda);
+}
+
+function raisedFrame(frame: StateFrame, floor: number): StateFrame {
+  if (Math.min(...frame.lambda) >= floor) return frame;
+  const raised = frame.lambda.map((x) => Math.max(x, floor));
+  const sum = raised.reduce((total, x) => total + x, 0);
+  return { lambda: raised.map((x) => x / sum), u: frame.u };
 }
 
 export function parametersOf(problem: GradientEstimateProblem): StateParameters {

@@ -8,6 +8,7 @@ import type { ReferenceState } from '../structure/reference-state.js';
 import type { Structure } from '../structure/structure.js';
 import { GAP_CLOSENESS } from '../tolerances.js';
 import {
+  type EntropyEvaluation,
   type EntropyQuotientProblem,
   type EntropyResult,
   type EntropyStart,
@@ -38,12 +39,13 @@ export function mlsiProblem(structure: Structure, amplification: number): Entrop
   const model = entropyModel(structure, amplification);
   return {
     model,
-    evaluate(state: LogState): { value: number; gradient: ComplexMatrix } | null {
-      const forms = entropyForms(model, state);
+    evaluate(state: LogState): EntropyEvaluation | null {
+      const forms = entropyForms(model, state, true);
       const { production, entropy } = forms;
       if (!(entropy >= model.entropyFloor)) return null;
       const value = production / (2 * entropy);
-      return { value, gradient: pullBackToLogarithm(state, forms, 1 / (2 * entropy), -value / entropy) };
+      const gradient = (): ComplexMatrix => pullBackToLogarithm(state, forms, 1 / (2 * entropy), -value / entropy);
+      return { value, entropy, gradient };
     },
     at: (rho) => mlsiAt(structure, rho, amplification),
   };

@@ -9,6 +9,7 @@ export interface HermitianFormConverter {
   doubled(re: Float64Array, im: Float64Array, out: Float64Array): void;
 }
 
+// eslint-disable-next-line max-lines-per-function -- two conversions over one workspace
 export function hermitianFormConverter(algebra: BlockAlgebra, units: MatrixUnits): HermitianFormConverter {
   const d = units.count;
   const n = algebra.size;

@@ -69,6 +69,7 @@ export function addJumpForms(
 }
 
 /** Terms in which the first factor is Σ_k V_ka e_kb: b fixed. */
+// eslint-disable-next-line max-lines-per-function -- a numeric kernel whose loops share their products
 function columnTerms(
   forms: readonly Float64Array[],
   units: MatrixUnits,
@@ -185,6 +186,7 @@ function columnTerms(
 }
 
 /** Terms in which the first factor is −Σ_l V_bl e_al: a fixed. */
+// eslint-disable-next-line max-lines-per-function -- a numeric kernel whose loops share their products
 function rowTerms(
   forms: readonly Float64Array[],
   units: MatrixUnits,

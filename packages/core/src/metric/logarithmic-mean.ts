@@ -32,7 +32,8 @@ export function logarithmicMeanDifference(x1: number, x2: number, y: number): nu
   for (let k = 0; k < 3; k++) {
     sum +=
       GAUSS_WEIGHTS[k] *
-      (logarithmicMeanSlope(centre + half * GAUSS_NODES[k], y) + logarithmicMeanSlope(centre - half * GAUSS_NODES[k], y));
+      (logarithmicMeanSlope(centre + half * GAUSS_NODES[k], y) +
+        logarithmicMeanSlope(centre - half * GAUSS_NODES[k], y));
   }
   return sum / 2;
 }
@@ -52,5 +53,5 @@ const INVERSE_FACTORIALS = Array.from({ length: 17 }, (_, k) => {
 });
 
 /** Six-point Gauss–Legendre nodes and weights on [−1,1] (Abramowitz & Stegun 1964, table 25.4). */
-const GAUSS_NODES = [0.238619186083196908630501721681, 0.661209386466264513661399595020, 0.932469514203152027812301554494];
-const GAUSS_WEIGHTS = [0.467913934572691047389870343990, 0.360761573048138607569833513838, 0.171324492379170345040296142173];
+const GAUSS_NODES = [0.2386191860831969, 0.6612093864662645, 0.932469514203152];
+const GAUSS_WEIGHTS = [0.467913934572691, 0.3607615730481386, 0.1713244923791703];

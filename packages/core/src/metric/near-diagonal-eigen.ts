@@ -5,7 +5,13 @@ import { EPSILON } from '../tolerances.js';
  * im) ends diagonal, v (n×n) holds the eigenvectors in columns, close to the identity; values are left unsorted on the
  * diagonal of `re`. Keeps small eigenvalues of graded matrices accurate (Demmel & Veselić, SIAM J. Matrix Anal. 13 (1992)).
  */
-export function nearDiagonalEigen(re: Float64Array, im: Float64Array, n: number, vr: Float64Array, vi: Float64Array): void {
+export function nearDiagonalEigen(
+  re: Float64Array,
+  im: Float64Array,
+  n: number,
+  vr: Float64Array,
+  vi: Float64Array,
+): void {
   vr.fill(0);
   vi.fill(0);
   for (let i = 0; i < n; i++) vr[i * n + i] = 1;

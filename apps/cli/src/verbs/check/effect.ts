@@ -1,8 +1,52 @@
-import { ThalwegError } from '@thalweg/core';
-import type { ExitStatus } from '../../exit-status.js';
+import type { RowKey } from '@thalweg/core';
+import type { ConstantDocument, VerdictDocument } from '@thalweg/format';
+import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { readSource } from '../../input/read-source.js';
+import { renderVerdict } from '../../render/render-verdict.js';
 import type { Session } from '../../session.js';
+import { computeSheet } from '../../sheet/compute-sheet.js';
+import { decideClaim } from './decide.js';
 import type { CheckPlan } from './plan.js';
 
-export async function checkEffect(_plan: CheckPlan, _session: Session): Promise<ExitStatus> {
-  throw new ThalwegError('not-supported', 'check: this version does not compute it yet');
+/** Rounding allowed to a claim, relative to the larger of 1 and its bound; printed with the answer. */
+export const CLAIM_SLACK = 1e-9;
+
+/** Decides claims about a model: all hold, one is refuted, or undecided. */
+export async function checkEffect(plan: CheckPlan, session: Session): Promise<ExitStatus> {
+  const source = await readSource(plan.model, session.terminal.stdin);
+  const { seed, convention, threads, timeLimit, claims, mean } = plan;
+  const keys = claims.map(({ constant }): RowKey =>
+    constant.id === 'ge' ? { id: 'ge', mean: constant.mean ?? mean } : { id: constant.id },
+  );
+  const job = { source, rows: distinct(keys), seed, convention, limits: { threads, timeLimit } };
+  const { sheet, unfinished } = await computeSheet(job, session);
+  const verdict: VerdictDocument = {
+    schema: 'thalweg.verdict/1',
+    verb: 'check',
+    model: sheet.model.digest,
+    convention,
+    claims: claims.map((claim, k) => decideClaim(claim, rowOf(sheet.constants, keys[k]), CLAIM_SLACK)),
+    seed,
+    tool: sheet.tool,
+  };
+  const { output } = session;
+  if (output.json) output.document(verdict);
+  else output.result(renderVerdict(verdict, output));
+  if (unfinished > 0) output.note('The time limit ended some searches early: more time may refute more.');
+  return statusOf(verdict);
+}
+
+function statusOf({ claims }: VerdictDocument): ExitStatus {
+  if (claims.some(({ verdict }) => verdict === 'refuted')) return EXIT_STATUS.no;
+  return claims.every(({ verdict }) => verdict === 'holds') ? EXIT_STATUS.yes : EXIT_STATUS.undecided;
+}
+
+function rowOf(rows: readonly ConstantDocument[], key: RowKey | undefined): ConstantDocument {
+  const found = rows.find(({ id, mean }) => id === key?.id && mean === key.mean);
+  if (found === undefined) throw new Error(`no row for ${key?.id ?? 'a claim'}`);
+  return found;
+}
+
+function distinct(keys: readonly RowKey[]): RowKey[] {
+  return [...new Map(keys.map((key) => [`${key.id}:${key.mean ?? ''}`, key])).values()];
 }

@@ -1,8 +1,28 @@
-import { ThalwegError } from '@thalweg/core';
-import type { ExitStatus } from '../../exit-status.js';
+import { FULL_SHEET, type RowKey } from '@thalweg/core';
+import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { readSource } from '../../input/read-source.js';
+import { renderSheet } from '../../render/render-sheet.js';
 import type { Session } from '../../session.js';
+import { computeSheet } from '../../sheet/compute-sheet.js';
 import type { ConstantsPlan } from './plan.js';
 
-export async function constantsEffect(_plan: ConstantsPlan, _session: Session): Promise<ExitStatus> {
-  throw new ThalwegError('not-supported', 'constants: this version does not compute it yet');
+/** Computes the sheet of a model and prints it. */
+export async function constantsEffect(plan: ConstantsPlan, session: Session): Promise<ExitStatus> {
+  const source = await readSource(plan.model, session.terminal.stdin);
+  const { seed, convention, threads, timeLimit } = plan;
+  const job = { source, rows: rowsOf(plan), seed, convention, limits: { threads, timeLimit } };
+  const { sheet, unfinished } = await computeSheet(job, session);
+  const { output } = session;
+  if (output.json) output.document(sheet);
+  else output.result(renderSheet(sheet, output));
+  if (unfinished > 0)
+    output.note('The time limit ended some searches early: observed ends may be lower with more time.');
+  return EXIT_STATUS.yes;
+}
+
+/** The rows of a full sheet or those asked for; `--mean` decides the mean of a `ge` that names none. */
+function rowsOf({ only, mean }: ConstantsPlan): RowKey[] {
+  const rows: readonly { id: RowKey['id']; mean?: RowKey['mean'] | null }[] =
+    only ?? FULL_SHEET.map(({ id }) => ({ id }));
+  return rows.map((row) => (row.id === 'ge' ? { id: row.id, mean: row.mean ?? mean } : { id: row.id }));
 }

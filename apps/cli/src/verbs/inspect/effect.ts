@@ -1,8 +1,17 @@
-import { ThalwegError } from '@thalweg/core';
-import type { ExitStatus } from '../../exit-status.js';
+import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { readSource } from '../../input/read-source.js';
+import { only } from '../../compute/only.js';
+import { renderReport } from '../../render/render-report.js';
 import type { Session } from '../../session.js';
 import type { InspectPlan } from './plan.js';
 
-export async function inspectEffect(_plan: InspectPlan, _session: Session): Promise<ExitStatus> {
-  throw new ThalwegError('not-supported', 'inspect: this version does not compute it yet');
+/** Tells what a model is. Ends with `no` when it is no Markov semigroup. */
+export async function inspectEffect(plan: InspectPlan, session: Session): Promise<ExitStatus> {
+  const source = await readSource(plan.model, session.terminal.stdin);
+  const report = await session.compute(plan, async (pool) => only(await pool.run('report', [{ source }])));
+  const { output } = session;
+  if (output.json) output.document(report);
+  else output.result(renderReport(report, output));
+  const { hermitian, unital, completelyPositive } = report.markov;
+  return hermitian.holds && unital.holds && completelyPositive.holds ? EXIT_STATUS.yes : EXIT_STATUS.no;
 }

@@ -1,0 +1,130 @@
+import {
+  densityMatrix,
+  gradientEstimateAt,
+  hasGradientMetric,
+  isUnitarilyCovariant,
+  lsiAt,
+  metricOf,
+  mlsiAt,
+  ThalwegError,
+  verifyWitness,
+  type ComplexMatrix,
+  type ConstantId,
+  type MeanName,
+  type Structure,
+  type Witness,
+} from '@thalweg/core';
+import {
+  decodeMatrix,
+  decodeWitness,
+  encodeWitness,
+  parseState,
+  readMtx,
+  readNpy,
+  toDense,
+  type VerdictDocument,
+  type WitnessDocument,
+} from '@thalweg/format';
+import { filesInFolder } from '@thalweg/format/node';
+import type { DocumentSource } from '../../input/read-source.js';
+import { TOOL } from '../../version.js';
+import { markovModel } from './model-cache.js';
+
+/** The witness at a given state: for `ge` the best observable there, for entropy constants the state alone. */
+export function witnessAtState({
+  source,
+  state,
+  constant,
+  mean,
+}: {
+  readonly source: DocumentSource;
+  readonly state: DocumentSource;
+  readonly constant: ConstantId;
+  readonly mean: MeanName;
+}): WitnessDocument {
+  const { structure, digest } = markovModel(source);
+  const rho = densityMatrix(structure.algebra, matrixOf(structure, state), '');
+  return encodeWitness(witnessOf(structure, rho, constant, mean), digest, TOOL);
+}
+
+function witnessOf(structure: Structure, rho: ComplexMatrix, constant: ConstantId, mean: MeanName): Witness {
+  switch (constant) {
+    case 'ge': {
+      requireMetric(structure);
+      const covariant = isUnitarilyCovariant(structure.generator);
+      const { value, observable } = gradientEstimateAt({ model: metricOf(structure), mean, covariant }, rho);
+      return { constant, mean, value, state: rho, observable, amplification: 1 };
+    }
+    case 'mlsi':
+      return { constant, value: mlsiAt(structure, rho).value, state: rho, observable: null, amplification: 1 };
+    case 'lsi':
+      return { constant, value: lsiAt(structure, rho).value, state: rho, observable: null, amplification: 1 };
+    default:
+      throw new ThalwegError('usage', `expected ge, mlsi or lsi for a witness at a given state, got ${constant}`);
+  }
+}
+
+function requireMetric(structure: Structure): void {
+  if (hasGradientMetric(structure)) return;
+  throw new ThalwegError(
+    'not-symmetric',
+    'expected a GNS-symmetric generator for ge, got one that is not; gap, be, cbe, mlsi and lsi are still given by thalweg constants',
+  );
+}
+
+function matrixOf(structure: Structure, { bytes, name, folder }: DocumentSource): ComplexMatrix {
+  const { size } = structure.algebra;
+  const matrix = /\.npy$/i.test(name)
+    ? toDense(readNpy(bytes))
+    : /\.mtx$/i.test(name)
+      ? toDense(readMtx(bytes))
+      : toDense(decodeMatrix(parseState(bytes), { readFile: filesInFolder(folder) }));
+  if (matrix.rows !== size || matrix.cols !== size) {
+    throw new ThalwegError(
+      'dimension-mismatch',
+      `expected a ${size}×${size} density matrix for this model, got ${matrix.rows}×${matrix.cols} in ${name}`,
+    );
+  }
+  return matrix;
+}
+
+/** Evaluate a witness afresh on its model and compare with the value it states. */
+export function checkWitness({
+  source,
+  document,
+}: {
+  readonly source: DocumentSource;
+  readonly document: WitnessDocument;
+}): VerdictDocument {
+  const { structure, digest } = markovModel(source);
+  if (document.model !== digest) {
+    throw new ThalwegError(
+      'dimension-mismatch',
+      `expected the model with digest ${document.model}, got ${digest}; the witness belongs to another model`,
+      { pointer: '/model' },
+    );
+  }
+  const { holds, value, margin, error } = verifyWitness(structure, decodeWitness(document));
+  const { constant, mean } = document;
+  return {
+    schema: 'thalweg.verdict/1',
+    verb: 'verify',
+    model: digest,
+    claims: [
+      {
+        constant,
+        ...(mean === undefined ? {} : { mean }),
+        relation: 'at-most',
+        value: document.value,
+        verdict: holds ? 'holds' : 'refuted',
+        bracket: {
+          lower: null,
+          upper: { value: value + margin, grade: 'certified', by: 'witness evaluated afresh', margin },
+        },
+        ...(holds ? {} : { note: `the witness gives ${value}, not ${document.value}` }),
+      },
+    ],
+    checks: [{ name: 'value of the witness', holds, value: error, bound: margin }],
+    tool: TOOL,
+  };
+}

@@ -1,0 +1,10 @@
+export { CONSTANT_IDS, type Bracket, type ConstantId, type End, type Grade, type Witness } from './bracket.js';
+export { bracketText, type BracketText } from './bracket-text.js';
+export { closeBrackets, nameOf, type SheetRow } from './close-brackets.js';
+export { hasGradientMetric } from './hypotheses.js';
+export { orderRelations, type OrderRelation, type RowKey } from './order-relations.js';
+export { FULL_SHEET, planEigenproblems, planSearches, type SheetRequest, type SheetTask } from './sheet-plan.js';
+export { metricOf, runSheetTask, type SheetFinding } from './run-sheet-task.js';
+export { assembleSheet, closedRows } from './assemble-sheet.js';
+export { computeSheet } from './compute-sheet.js';
+export { bestWitness } from './best-witness.js';

@@ -1,0 +1,82 @@
+import {
+  type BakryEmeryResult,
+  type CompleteBakryEmery,
+  bakryEmery,
+  completeBakryEmery,
+} from '../constants/bakry-emery.js';
+import { carreDuChamp } from '../constants/carre-du-champ.js';
+import { clsiByComparison } from '../constants/clsi-comparison.js';
+import type { EntropyResult } from '../constants/entropy-search.js';
+import { type Gap, gapDense } from '../constants/gap.js';
+import { type LanczosGap, gapMatrixFree } from '../constants/gap-matrix-free.js';
+import { type GradientEstimateResult, runGradientEstimateStart } from '../constants/gradient-estimate.js';
+import { runLsiStart } from '../constants/lsi.js';
+import { runMlsiStart } from '../constants/mlsi.js';
+import { type MetricModel, metricModel } from '../metric/metric-model.js';
+import type { MeanName } from '../metric/operator-mean.js';
+import { seededRandom } from '../random.js';
+import type { CanonicalForm } from '../structure/canonical-form.js';
+import type { FixedPoints } from '../structure/fixed-points.js';
+import type { Structure } from '../structure/structure.js';
+import { DENSE_LIMIT } from '../tolerances.js';
+import type { End } from './bracket.js';
+import type { SheetTask } from './sheet-plan.js';
+
+/** What one task found; plain data. */
+export type SheetFinding =
+  | { readonly kind: 'gap'; readonly dense: Gap | null; readonly lanczos: LanczosGap | null }
+  | { readonly kind: 'bakry-emery'; readonly complete: CompleteBakryEmery; readonly plain: BakryEmeryResult | null }
+  | { readonly kind: 'comparison'; readonly end: End | null }
+  | { readonly kind: 'ge'; readonly mean: MeanName; readonly result: GradientEstimateResult }
+  | { readonly kind: 'entropy'; readonly result: EntropyResult | null };
+
+/** Run one task of `planSheet`; `stop` ends a search early at the best it has. */
+export function runSheetTask(structure: Structure, task: SheetTask, stop?: () => boolean): SheetFinding {
+  switch (task.kind) {
+    case 'gap':
+      return gapFinding(structure);
+    case 'bakry-emery':
+      return bakryEmeryFinding(structure, task.seed, task.withPlain, stop);
+    case 'comparison':
+      return { kind: 'comparison', end: clsiByComparison(structure) };
+    case 'ge': {
+      const problem = { model: metricOf(structure), mean: task.mean, covariant: task.covariant };
+      return { kind: 'ge', mean: task.mean, result: runGradientEstimateStart(problem, task.start, stop) };
+    }
+    case 'entropy': {
+      const run = task.start.constant === 'lsi' ? runLsiStart : runMlsiStart;
+      return { kind: 'entropy', result: run(structure, task.start, stop ? { stop } : {}) };
+    }
+  }
+}
+
+/** The metric of a GNS-symmetric structure; the caller has checked `hasGradientMetric`. */
+export function metricOf(structure: Structure): MetricModel {
+  return metricModel(structure.canonical as CanonicalForm, structure.fixedPoints as FixedPoints);
+}
+
+function gapFinding(structure: Structure): SheetFinding {
+  const { generator, state, fixedPoints, algebra, symmetry } = structure;
+  if (algebra.dimension > DENSE_LIMIT) {
+    const usable = symmetry.kind === 'tracial' || (state?.faithful && symmetry.kind !== 'none');
+    const lanczos = usable
+      ? gapMatrixFree(generator, symmetry.kind === 'tracial' ? null : state, seededRandom('gap'))
+      : null;
+    return { kind: 'gap', dense: null, lanczos };
+  }
+  const dense = state?.faithful && fixedPoints ? gapDense(generator, state, fixedPoints) : null;
+  return { kind: 'gap', dense, lanczos: null };
+}
+
+function bakryEmeryFinding(
+  structure: Structure,
+  seed: number | string,
+  withPlain: boolean,
+  stop?: () => boolean,
+): SheetFinding {
+  const forms = carreDuChamp(structure.generator);
+  const complete = completeBakryEmery(forms);
+  const random = seededRandom(`be ${seed}`);
+  const plain = withPlain ? bakryEmery(structure.generator, forms, { random, ...(stop ? { stop } : {}) }) : null;
+  return { kind: 'bakry-emery', complete, plain };
+}
