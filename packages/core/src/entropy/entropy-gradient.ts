@@ -7,41 +7,74 @@ import {
   scale,
   zeros,
 } from '../linalg/complex-matrix.js';
+import { QUICK_ENTROPY } from '../tolerances.js';
 import type { EntropyModel } from './entropy-model.js';
 import { productionOf } from './entropy-production.js';
 import { type LogState, logarithmOf, matrixOf } from './log-state.js';
 import { meanOfLogs } from './log-terms.js';
 import { relativeEntropyOfStates } from './relative-entropy.js';
 
-/** I and D(·‖E†·) at a state, with the matrices their derivatives are made of, all in the eigenbasis of the state. */
-export interface EntropyForms {
-  /** I(ρ), a rate. */
-  readonly production: number;
+/** D(·‖E†·) at a state, with what its derivative is made of, in the eigenbasis of the state. */
+export interface DivergenceForms {
   /** D(ρ‖E†ρ), nats. */
   readonly entropy: number;
-  /** −L(log ρ − log σ). */
-  readonly potential: ComplexMatrix;
-  /** L†ρ. */
-  readonly flow: ComplexMatrix;
   /** log ρ − log E†ρ. */
   readonly difference: ComplexMatrix;
   /** Λ(λ_a, λ_b) over pairs in one block, N×N; 0 outside the blocks. */
   readonly mean: Float64Array;
 }
 
-export function entropyForms(model: EntropyModel, rho: LogState): EntropyForms {
+/** The same with the entropy production. */
+export interface EntropyForms extends DivergenceForms {
+  /** I(ρ), a rate. */
+  readonly production: number;
+  /** −L(log ρ − log σ). */
+  readonly potential: ComplexMatrix;
+  /** L†ρ. */
+  readonly flow: ComplexMatrix;
+}
+
+export function divergenceForms(model: EntropyModel, rho: LogState): DivergenceForms {
   const tau = model.reference(rho);
-  const logRho = logarithmOf(rho);
-  const inFrame = (a: ComplexMatrix): ComplexMatrix => multiplyAdjointFirst(rho.u, multiply(a, rho.u));
-  const potential = scale(model.apply(addScaledInto(logarithmOf(rho), model.logSigma, -1)), -1);
   return {
-    production: productionOf(model, rho),
     entropy: relativeEntropyOfStates(rho, tau),
-    potential: inFrame(potential),
-    flow: inFrame(model.applyAdjoint(matrixOf(rho))),
-    difference: inFrame(addScaledInto(logRho, logarithmOf(tau), -1)),
+    difference: toFrame(rho, addScaledInto(logarithmOf(rho), logarithmOf(tau), -1)),
     mean: meanTable(rho),
   };
+}
+
+/**
+ * Evaluate all. `quick` takes the production as −Tr ρL(log ρ − log σ) where D is large enough for its cancellation to be
+ * harmless: good for a search, not for a printed value.
+ */
+export function entropyForms(model: EntropyModel, rho: LogState, quick = false): EntropyForms {
+  const divergence = divergenceForms(model, rho);
+  const potential = toFrame(rho, scale(model.apply(addScaledInto(logarithmOf(rho), model.logSigma, -1)), -1));
+  const isPlain = quick && divergence.entropy > QUICK_ENTROPY;
+  return {
+    ...divergence,
+    production: isPlain ? diagonalMean(rho, potential) : productionOf(model, rho),
+    potential,
+    flow: toFrame(rho, model.applyAdjoint(matrixOf(rho))),
+  };
+}
+
+/** U*AU, the matrix of A in the eigenbasis of ρ. */
+export function toFrame({ u }: LogState, a: ComplexMatrix): ComplexMatrix {
+  return multiplyAdjointFirst(u, multiply(a, u));
+}
+
+/** UAU*, back to the original basis. */
+export function fromStateFrame({ u }: LogState, a: ComplexMatrix): ComplexMatrix {
+  return multiply(u, multiplyAdjointSecond(a, u));
+}
+
+/** Tr ρA for A in the eigenbasis of ρ. */
+function diagonalMean({ lambda }: LogState, a: ComplexMatrix): number {
+  const n = lambda.length;
+  let sum = 0;
+  for (let i = 0; i < n; i++) sum += lambda[i] * a.re[i * n + i];
+  return sum;
 }
 
 /**
@@ -62,7 +95,7 @@ export function productionGradient({ potential, flow, mean }: EntropyForms): Com
  * Derivative of D(ρ‖E†ρ) in ρ, in the eigenbasis of ρ. As D(ρ‖E†ρ) = D(ρ‖σ) − D(E†ρ‖σ) it is
  * log ρ − log σ − E(log E†ρ − log σ), and log E†ρ − log σ is a fixed point of E: log ρ − log E†ρ.
  */
-export function entropyGradient({ difference }: EntropyForms): ComplexMatrix {
+export function entropyGradient({ difference }: DivergenceForms): ComplexMatrix {
   return difference;
 }
 
@@ -84,7 +117,7 @@ export function pullBackToLogarithm(
   }
   const total = cI * production + cD * entropy;
   for (let a = 0; a < n; a++) frame.re[a * n + a] -= total * rho.lambda[a];
-  return multiply(rho.u, multiplyAdjointSecond(frame, rho.u));
+  return fromStateFrame(rho, frame);
 }
 
 /** Λ(λ_a, λ_b) inside the blocks. */

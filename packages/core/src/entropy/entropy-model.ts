@@ -1,16 +1,18 @@
-import { type BlockAlgebra, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
+import type { BlockAlgebra } from '../algebra/block-algebra.js';
 import { blockEigen } from '../algebra/block-eigen.js';
 import { ThalwegError } from '../errors.js';
-import { applyGenerator, applyGeneratorAdjoint } from '../generator/apply-generator.js';
-import { type ComplexMatrix, addScaledInto, identity, kronecker, zeros } from '../linalg/complex-matrix.js';
+import { applyGenerator, applyGeneratorAdjoint, generatorMatrix } from '../generator/apply-generator.js';
+import type { Generator } from '../generator/generator.js';
+import { type ComplexMatrix, identity, kronecker } from '../linalg/complex-matrix.js';
 import { hermitianEigen } from '../linalg/hermitian-eigen.js';
 import { type SparseMatrix, sparseFromDense, sparseKronecker } from '../linalg/sparse-matrix.js';
 import { fromFrame } from '../metric/state-frame.js';
 import type { ReferenceState } from '../structure/reference-state.js';
 import type { Structure } from '../structure/structure.js';
-import { ENTROPY_FLOOR, ENTROPY_FLOOR_PLAIN, EPSILON } from '../tolerances.js';
+import { ENTROPY_FLOOR, ENTROPY_FLOOR_PLAIN, EPSILON, MATRIX_ACTION_LIMIT } from '../tolerances.js';
 import { amplifiedAlgebra, amplifyMap, amplifyOperator, ancillaTrace } from './amplify.js';
 import { type LogState, stateOfLogs } from './log-state.js';
+import { matrixAction } from './matrix-action.js';
 
 /** What entropies of states of M ⊗ M_k under L ⊗ id_k need, prepared once. */
 export interface EntropyModel {
@@ -62,14 +64,15 @@ export function entropyModel(structure: Structure, amplification = 1): EntropyMo
   }
   const k = amplification;
   const n = base.size;
+  const { heisenberg, schroedinger } = actions(generator);
   const model: EntropyModel = {
     algebra: amplifiedAlgebra(base, k),
     amplification: k,
     jumps: canonical ? pairedJumps(canonical.jumps, k) : null,
     logSigma: amplifyOperator(fromFrame({ lambda: state.values.map(Math.log), u: state.vectors }), k),
     entropyFloor: canonical ? ENTROPY_FLOOR : ENTROPY_FLOOR_PLAIN,
-    apply: (a) => amplifyMap((x) => applyGenerator(generator, x), n, k, a),
-    applyAdjoint: (rho) => amplifyMap((x) => applyGeneratorAdjoint(generator, x), n, k, rho),
+    apply: (a) => amplifyMap(heisenberg, n, k, a),
+    applyAdjoint: (rho) => amplifyMap(schroedinger, n, k, rho),
     reference: fixedPoints.primitive
       ? productReference(base, state, k)
       : conditionedReference(base, fixedPoints.expectation, k),
@@ -80,6 +83,19 @@ export function entropyModel(structure: Structure, amplification = 1): EntropyMo
 }
 
 const models = new WeakMap<Structure, Map<number, EntropyModel>>();
+
+/** L and L† on N×N matrices: by the D×D matrix of L where it is small, which is quicker than many jumps. */
+function actions(generator: Generator): Record<'heisenberg' | 'schroedinger', (a: ComplexMatrix) => ComplexMatrix> {
+  const { algebra } = generator;
+  if (algebra.dimension > MATRIX_ACTION_LIMIT) {
+    return {
+      heisenberg: (a) => applyGenerator(generator, a),
+      schroedinger: (rho) => applyGeneratorAdjoint(generator, rho),
+    };
+  }
+  const l = generatorMatrix(generator);
+  return { heisenberg: matrixAction(algebra, l, false), schroedinger: matrixAction(algebra, l, true) };
+}
 
 function pairedJumps(
   jumps: readonly { readonly matrix: ComplexMatrix; readonly frequency: number; readonly partner: number }[],
@@ -113,28 +129,10 @@ function productReference(base: BlockAlgebra, state: ReferenceState, k: number):
 /** E†ρ from the matrix of E on observables, D×D in the Hermitian basis. */
 function conditionedReference(base: BlockAlgebra, expectation: Float64Array, k: number): (rho: LogState) => LogState {
   const algebra = amplifiedAlgebra(base, k);
-  const onStates = (a: ComplexMatrix): ComplexMatrix => transposedAction(base, expectation, a);
+  const onStates = matrixAction(base, expectation, true);
   return (rho) => {
     const { values, vectors } = blockEigen(algebra, amplifyMap(onStates, base.size, k, fromFrame(rho)));
     const logs = values.map((x) => Math.log(Math.max(x, algebra.size * EPSILON)));
     return stateOfLogs(algebra, logs, vectors);
   };
-}
-
-/** The complex-linear map with real matrix mᵀ in the Hermitian basis. */
-function transposedAction(algebra: BlockAlgebra, m: Float64Array, a: ComplexMatrix): ComplexMatrix {
-  const d = algebra.dimension;
-  const out = zeros(algebra.size);
-  const minusI: ComplexMatrix = { rows: a.rows, cols: a.cols, re: a.im, im: a.re.map((x) => -x) };
-  [a, minusI].forEach((part, imaginary) => {
-    const x = toCoordinates(algebra, part);
-    const y = new Float64Array(d);
-    for (let p = 0; p < d; p++) {
-      const xp = x[p];
-      if (xp === 0) continue;
-      for (let q = 0; q < d; q++) y[q] += m[p * d + q] * xp;
-    }
-    addScaledInto(out, fromCoordinates(algebra, y), imaginary ? 0 : 1, imaginary);
-  });
-  return out;
 }

@@ -2,9 +2,7 @@ import { ThalwegError } from '../errors.js';
 import { EPSILON, WOLFE_BISECTIONS, WOLFE_CURVATURE, WOLFE_DECREASE, WOLFE_VISIBLE } from '../tolerances.js';
 
 /** Fills `gradient` and returns the value at x; may return +∞ or NaN outside its domain, where the gradient is ignored. */
-export interface Objective {
-  (x: Float64Array, gradient: Float64Array): number;
-}
+export type Objective = (x: Float64Array, gradient: Float64Array) => number;
 
 export interface BfgsOptions {
   /** Steps at most; default 500. */

@@ -3,7 +3,8 @@ import { fromCoordinates, toCoordinates } from '../../src/algebra/block-algebra.
 import { bestOf, type EntropyResult } from '../../src/constants/entropy-search.js';
 import { gapDense } from '../../src/constants/gap.js';
 import { lsiFromGap, lsiOfProjection } from '../../src/constants/lsi-lower.js';
-import { lsiAt, lsiProblem, lsiTasks, runLsiStart } from '../../src/constants/lsi.js';
+import { lsiAt, lsiProblem } from '../../src/constants/lsi-quotient.js';
+import { lsiTasks, runLsiStart } from '../../src/constants/lsi.js';
 import { mlsiTasks, runMlsiStart } from '../../src/constants/mlsi.js';
 import { exponentialState } from '../../src/entropy/log-state.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
@@ -92,7 +93,7 @@ describe('derivative of the quotient', () => {
     const value = (y: Float64Array): number =>
       problem.evaluate(exponentialState(algebra, fromCoordinates(algebra, y)))!.value;
     const { gradient } = problem.evaluate(exponentialState(algebra, fromCoordinates(algebra, x)))!;
-    const analytic = toCoordinates(algebra, gradient);
+    const analytic = toCoordinates(algebra, gradient());
     const step = 1e-5;
     for (let i = 0; i < x.length; i++) {
       const ahead = value(x.map((v, j) => (i === j ? v + step : v)));
