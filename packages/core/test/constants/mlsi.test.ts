@@ -143,6 +143,16 @@ describe('search for mlsi', () => {
     expect(value).toBeGreaterThan(0);
   });
 
+  it('does not feel a Hamiltonian that keeps the reference state, though it breaks the symmetry', () => {
+    const { generator } = depolarising(3);
+    const driven = analyse({ ...generator, hamiltonian: sparseFromDense(randomHermitianMatrix(3, random)) });
+    expect(driven.symmetry.kind).toBe('none');
+    expect(driven.canonical).toBeNull();
+    const { value, margin } = search(driven);
+    expect(margin).toBeLessThan(1e-11);
+    expect(Math.abs(value - depolarisingMlsi(1 / 3))).toBeLessThan(1e-10);
+  });
+
   it('has no tasks when nothing moves', () => {
     expect(mlsiTasks(analyse(ratesGenerator([[0]])), { seed: 1 })).toEqual([]);
   });

@@ -2,14 +2,16 @@ import { describe, expect, it } from 'vitest';
 import { toCoordinates } from '../../src/algebra/block-algebra.js';
 import { entropyModel } from '../../src/entropy/entropy-model.js';
 import { entropyProduction, metricProduction, plainProduction } from '../../src/entropy/entropy-production.js';
-import { logStateOf } from '../../src/entropy/log-state.js';
+import { entropyForms } from '../../src/entropy/entropy-gradient.js';
+import { logStateOf, matrixOf } from '../../src/entropy/log-state.js';
+import { matrixAction } from '../../src/entropy/matrix-action.js';
 import { relativeEntropy } from '../../src/entropy/relative-entropy.js';
-import { applyGeneratorAdjoint } from '../../src/generator/apply-generator.js';
+import { applyGenerator, applyGeneratorAdjoint, generatorMatrix } from '../../src/generator/apply-generator.js';
 import { blockAlgebra } from '../../src/algebra/block-algebra.js';
 import { tensorGenerator } from '../../src/generator/tensor-generator.js';
 import { lindbladGenerator } from '../../src/generator/lindblad-generator.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
-import { addScaledInto, copy, frobeniusNorm, subtract } from '../../src/linalg/complex-matrix.js';
+import { addScaledInto, copy, frobeniusNorm, scale, subtract } from '../../src/linalg/complex-matrix.js';
 import { seededRandom } from '../../src/random.js';
 import { analyse } from '../../src/structure/structure.js';
 import { dephasing, depolarising, generalisedDepolarising, randomChain, randomDavies } from './models.js';
@@ -86,6 +88,32 @@ describe('entropyProduction', () => {
       }),
     );
     expect(() => entropyProduction(decay, pure)).toThrowError(/faithful invariant state/);
+  });
+});
+
+describe('quick paths', () => {
+  it('take the production from its definition far from σ, and the metric form near it', () => {
+    const structure = randomDavies([2, 1], random);
+    const model = entropyModel(structure);
+    const far = logStateOf(model.algebra, randomState(model.algebra, random));
+    const quick = entropyForms(model, far, true);
+    const plain = entropyForms(model, far);
+    expect(quick.entropy).toBeGreaterThan(0.01);
+    expect(quick.production).not.toBe(plain.production);
+    expect(Math.abs(quick.production / plain.production - 1)).toBeLessThan(1e-12);
+    const { sigma } = structure.state!;
+    const near = logStateOf(model.algebra, addScaledInto(scale(sigma, 0.99), matrixOf(far), 0.01));
+    expect(entropyForms(model, near, true).production).toBe(entropyForms(model, near).production);
+  });
+
+  it('apply L by its matrix as by its jumps, on matrices that are not Hermitian too', () => {
+    const { generator, algebra } = randomDavies([2, 1], random);
+    const a = addScaledInto(randomHermitian(algebra, random), randomHermitian(algebra, random), 0, 1);
+    const byMatrix = matrixAction(algebra, generatorMatrix(generator), false)(a);
+    expect(frobeniusNorm(subtract(byMatrix, applyGenerator(generator, a)))).toBeLessThan(1e-13 * frobeniusNorm(a));
+    const onStates = matrixAction(algebra, generatorMatrix(generator), true)(a);
+    const expected = applyGeneratorAdjoint(generator, a);
+    expect(frobeniusNorm(subtract(onStates, expected))).toBeLessThan(1e-13 * frobeniusNorm(a));
   });
 });
 
