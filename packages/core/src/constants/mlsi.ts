@@ -35,7 +35,7 @@ export function runMlsiStart(
 }
 
 /** I/(2D) with its derivative in log ρ, over states of M ⊗ M_k. */
-export function mlsiProblem(structure: Structure, amplification: number): EntropyQuotientProblem {
+function mlsiProblem(structure: Structure, amplification: number): EntropyQuotientProblem {
   const model = entropyModel(structure, amplification);
   return {
     model,
