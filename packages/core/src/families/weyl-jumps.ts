@@ -3,7 +3,7 @@ import { ThalwegError } from '../errors.js';
 import type { Generator } from '../generator/generator.js';
 import { lindbladGenerator } from '../generator/lindblad-generator.js';
 import { INPUT_TOLERANCE } from '../tolerances.js';
-import { requireWhole } from './check-parameter.js';
+import { requireNonNegative, requireWhole } from './check-parameter.js';
 import { weylOperator } from './weyl-operator.js';
 
 interface WeylTerm {
@@ -14,7 +14,7 @@ interface WeylTerm {
 
 /**
  * Jumps V = √rate · W/2 along Weyl operators W = X^aZ^b of Z_n together with their adjoints, which are added where not listed:
- * L(A) = Σ rate/2 (W*AW − A). For n = 2 these are Pauli jumps. Throws `usage` for a repeated term or adjoints of different rate.
+ * L(A) = Σ rate/2 (W*AW − A). For n = 2 these are Pauli jumps. Throws `usage` for a repeated term, a negative rate or adjoints of different rate.
  */
 export function weylJumps(n: number, terms: readonly WeylTerm[]): Generator {
   requireWhole(n, 2, 64, 'the dimension');
@@ -23,6 +23,7 @@ export function weylJumps(n: number, terms: readonly WeylTerm[]): Generator {
   for (const { a, b, rate } of terms) {
     requireWhole(a, -n, n, 'a');
     requireWhole(b, -n, n, 'b');
+    requireNonNegative(rate, `the rate of (${a}, ${b})`);
     const at = place(a, b);
     if (rates.has(at)) throw new ThalwegError('usage', `expected each Weyl operator once, got (${a}, ${b}) again`);
     rates.set(at, rate);

@@ -18,8 +18,8 @@ import {
 } from '../linalg/complex-matrix.js';
 import { EPSILON, FAITHFUL_TOLERANCE, INPUT_TOLERANCE, STATE_ROUNDING } from '../tolerances.js';
 import { diagonalRates } from './diagonal-rates.js';
-import { evolvedState } from './evolved-state.js';
 import { kernelPair, projectionFactor } from './kernel.js';
+import { krylovLimit } from './krylov-limit.js';
 import { limitDistribution } from './limit-distribution.js';
 
 /** An invariant state with its eigenvectors. */
@@ -86,7 +86,7 @@ function computedState(g: Generator): ReferenceState {
   }
   const rates = diagonalRates(g);
   if (rates) return describe(g, diagonal(limitDistribution(rates, n)), false, true);
-  const limit = algebra.dimension <= MAX_DENSE_DIMENSION ? limitFromKernel(g, mixed) : evolvedState(g, mixed);
+  const limit = algebra.dimension <= MAX_DENSE_DIMENSION ? limitFromKernel(g, mixed) : krylovLimit(g, mixed);
   const sigma = hermitianPart(limit);
   return describe(g, scale(sigma, 1 / trace(sigma).re), false, false);
 }
