@@ -1,6 +1,7 @@
 import { type ComplexMatrix, addScaledInto, adjoint, zeros } from '../linalg/complex-matrix.js';
 import { fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
 import { type Deflation, deflateSymmetric, deflation, inflate } from './deflate.js';
+import { chainPencil } from './chain-pencil.js';
 import { curvatureGradient } from './curvature-gradient.js';
 import { curvatureForms } from './curvature-forms.js';
 import { hermitianFormConverter } from './hermitian-forms.js';
@@ -33,6 +34,11 @@ export interface CurvaturePencil {
  * symmetric, where observables are not self-adjoint. Workspace is kept between calls.
  */
 export function curvaturePencil(model: MetricModel, mean: MeanName): CurvaturePencil {
+  return model.commutative ? chainPencil(model, mean) : densePencil(model, mean);
+}
+
+/** The pencil on any algebra, commutative ones included: the plain path that `chainPencil` is tested against. */
+export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil {
   const operator = operatorMean(mean);
   const forms = curvatureForms(model, operator, operator.symmetric);
   const converter = hermitianFormConverter(model.algebra, forms.units);
