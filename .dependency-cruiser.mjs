@@ -29,7 +29,8 @@ export default {
     {
       name: 'other-packages-through-their-index',
       severity: 'error',
-      comment: 'What a package offers is what its manifest exports: src/index.ts, and src/node/index.ts for Node.js only.',
+      comment:
+        'What a package offers is what its manifest exports: src/index.ts, and src/node/index.ts for Node.js only.',
       from: { path: '^(packages|apps)/([^/]+)/' },
       to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/(node/)?index\\.ts$', '^$1/$2/'] },
     },

@@ -62,7 +62,7 @@ export default tseslint.config(
     },
   },
   {
-    files: ['apps/*/src/**/*.ts', 'packages/format/src/**/*.ts'],
+    files: ['apps/*/src/**/*.ts'],
     languageOptions: { parserOptions: { projectService: true } },
     rules: {
       '@typescript-eslint/no-floating-promises': 'error',
