@@ -48,22 +48,6 @@ export function decodeMatrix(matrix: MatrixDocument, options: DecodeOptions = {}
   }
 }
 
-/** The first fault of a matrix whose fields have the right JSON types, or null. Files are not opened. */
-export function findMatrixFault(matrix: MatrixDocument, limits: MatrixLimits = MATRIX_LIMITS): Fault | null {
-  switch (matrixForm(matrix)) {
-    case 'rows':
-      return findRowsFault(matrix, limits);
-    case 'parts':
-      return findPartsFault(matrix as PartsForm, limits);
-    case 'entries':
-      return findEntriesFault(matrix as EntriesForm, limits);
-    case 'pauli':
-      return findPauliFault(matrix as PauliForm, limits);
-    case 'file':
-      return findFileFault(matrix as FileForm);
-  }
-}
-
 export function isSparse(matrix: DecodedMatrix): matrix is SparseMatrix {
   return 'rowStart' in matrix;
 }
@@ -78,6 +62,22 @@ export function toDense(matrix: DecodedMatrix, limits: MatrixLimits = MATRIX_LIM
 
 export function toSparse(matrix: DecodedMatrix): SparseMatrix {
   return isSparse(matrix) ? matrix : sparseFromDense(matrix);
+}
+
+/** The first fault of a matrix whose fields have the right JSON types, or null. Files are not opened. */
+function findMatrixFault(matrix: MatrixDocument, limits: MatrixLimits): Fault | null {
+  switch (matrixForm(matrix)) {
+    case 'rows':
+      return findRowsFault(matrix, limits);
+    case 'parts':
+      return findPartsFault(matrix as PartsForm, limits);
+    case 'entries':
+      return findEntriesFault(matrix as EntriesForm, limits);
+    case 'pauli':
+      return findPauliFault(matrix as PauliForm, limits);
+    case 'file':
+      return findFileFault(matrix as FileForm);
+  }
 }
 
 /** Errors of a file reader know the file only; this adds where the document names it. */

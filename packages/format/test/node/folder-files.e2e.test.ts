@@ -1,4 +1,3 @@
-import { execFileSync } from 'node:child_process';
 import { mkdirSync, mkdtempSync, rmSync, symlinkSync, truncateSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -6,6 +5,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { FILE_BYTES_LIMIT } from '../../src/limits.js';
 import { filesBeside, filesInFolder } from '../../src/node/folder-files.js';
 import { refusal } from '../support/caught-error.js';
+import { runPython } from '../support/run-python.js';
 
 const top = mkdtempSync(join(tmpdir(), 'thalweg-files-'));
 const folder = join(top, 'model');
@@ -29,7 +29,7 @@ beforeAll(() => {
   symlinkSync('model', join(top, 'link-to-model'));
   writeFileSync(join(folder, 'huge.npy'), '');
   truncateSync(join(folder, 'huge.npy'), FILE_BYTES_LIMIT + 1);
-  execFileSync('mkfifo', [join(folder, 'pipe.npy')]);
+  runPython(new URL('make_pipe.py', import.meta.url), [join(folder, 'pipe.npy')]);
 });
 
 afterAll(() => rmSync(top, { recursive: true }));
