@@ -40,4 +40,4 @@ export const INVERSE_ITERATIONS = 6;
 export const JACOBI_SWEEP_LIMIT = 60;
 
 /** Steps of the power iteration that finds weights for the norm of a non-negative matrix. */
-export const NORM_ITERATIONS = 4;
+export const NORM_ITERATIONS = 6;
