@@ -53,15 +53,15 @@ export function symmetricSmallestInto(
   for (let i = 0; i < n; i++) if (d[i] < smallest) smallest = d[i];
   if (!vector) return smallest * unit;
   if (!tridiagonalEigenvector(work.diagonal, work.offDiagonal, n, smallest, x, work.scratch)) {
-    return firstOfAll(a, n, vector);
+    return smallestOfAll(a, n, vector);
   }
   applyReflectors(work.a, n, h, x);
   for (let k = 0; k < n; k++) vector[work.order[k]] = x[k];
   return smallest * unit;
 }
 
-/** The plain way, for the rare matrix on which inverse iteration does not settle. */
-function firstOfAll(a: Float64Array, n: number, vector: Float64Array): number {
+/** The plain way, from the full decomposition: for a matrix on which inverse iteration does not settle. */
+export function smallestOfAll(a: Float64Array, n: number, vector: Float64Array): number {
   const { values, vectors } = symmetricEigen(a, n);
   for (let i = 0; i < n; i++) vector[i] = vectors[i * n];
   return values[0];

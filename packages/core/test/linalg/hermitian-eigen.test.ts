@@ -74,6 +74,20 @@ describe('hermitianEigen', () => {
     }
   });
 
+  it('scales by the larger of the two parts', () => {
+    for (const [re, im] of [
+      [1e200, 1e-10],
+      [1e-10, 1e200],
+      [1e-200, 1e-210],
+    ]) {
+      const a = hermitianPart(randomMatrix(seededRandom('parts'), 5));
+      const mixed = { ...a, re: a.re.map((x) => x * re), im: a.im.map((y) => y * im) };
+      const { values, vectors } = hermitianEigen(mixed);
+      expectBelow(eigenRatio(mixed, values, vectors), EIGEN_RATIO, `parts ${re} and ${im}, residual ratio`);
+      expectBelow(orthogonalityRatio(vectors), EIGEN_RATIO, `parts ${re} and ${im}, unitarity ratio`);
+    }
+  });
+
   it('gives real vectors to a real matrix', () => {
     const { vectors } = hermitianEigen(hermitianPart(randomMatrix(seededRandom('real'), 6, 6, false)));
     expect(vectors.im.every((y) => y === 0)).toBe(true);

@@ -98,6 +98,10 @@ describe('symmetricPencil', () => {
     const b = Float64Array.of(1, 2, 2, 1);
     expect(() => symmetricPencil(identity(2).re, b, 2)).toThrow(expected);
     expect(() => symmetricPencilSmallest(identity(2).re, b, 2)).toThrow(expected);
+    const zero = new Float64Array(1);
+    const first = expect.objectContaining({ details: { pivot: 0, size: 1 } });
+    expect(() => symmetricPencil(zero, zero, 1)).toThrow(first);
+    expect(() => symmetricPencilSmallest(zero, zero, 1)).toThrow(first);
     const work = smallestPencilWork(2);
     expect(symmetricPencilSmallestInto(identity(2).re, b, 2, null, work)).toBeNaN();
     expect(symmetricPencilInto(identity(2).re, b, 2, new Float64Array(2), null, work)).toBe(1);

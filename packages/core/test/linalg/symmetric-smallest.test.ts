@@ -1,6 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { frobeniusNorm, multiply, scale, subtract } from '../../src/linalg/complex-matrix.js';
-import { smallestWork, symmetricSmallest, symmetricSmallestInto } from '../../src/linalg/symmetric-smallest.js';
+import {
+  smallestWork,
+  smallestOfAll,
+  symmetricSmallest,
+  symmetricSmallestInto,
+} from '../../src/linalg/symmetric-smallest.js';
 import { symmetricEigenvalues } from '../../src/linalg/symmetric-eigen.js';
 import { seededRandom } from '../../src/random.js';
 import { expectBelow, expectClose } from './support/expect-close.js';
@@ -32,6 +37,14 @@ describe('symmetricSmallest', () => {
       expect({ value, vector }).toEqual(symmetricSmallest(a, 7));
       expect(symmetricSmallestInto(a, 7, null, work)).toBe(value);
     }
+  });
+
+  it('agrees with the plain way it falls back on', () => {
+    const a = hermitianFamilies(seededRandom('plain way'), 12, false)['random normal'];
+    const { value, vector } = symmetricSmallest(a.re, 12);
+    const plain = new Float64Array(12);
+    expectClose(smallestOfAll(a.re, 12, plain), value, 1e-13, 'value');
+    expectClose(Math.abs(plain.reduce((sum, x, i) => sum + x * vector[i], 0)), 1, 1e-13, 'overlap of the vectors');
   });
 
   it('refuses entries that are not finite', () => {
