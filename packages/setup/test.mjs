@@ -30,12 +30,14 @@ async function runAllChecks() {
 async function runVitest(args) {
   const folder = mkdtempSync(join(tmpdir(), 'thalweg-test-'));
   const report = join(folder, 'report.json');
+  const rules = args.some((arg) => /^(-u|--update)/.test(arg)) ? [] : ['--update=none'];
   const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
   try {
     const code = await run(process.execPath, [
       join(root, 'node_modules/vitest/vitest.mjs'),
       'run',
       ...reporters,
+      ...rules,
       ...args,
     ]);
     return { code, ...countTests(readReport(report)) };

@@ -2,7 +2,7 @@ import { availableParallelism } from 'node:os';
 import { interruptedError } from './compute/interrupted-error.js';
 import { createSession } from './create-session.js';
 import { EXIT_STATUS, type ExitStatus } from './exit-status.js';
-import { ignoreClosedPipes } from './output/output.js';
+import { guardStreams } from './output/guard-streams.js';
 import { printError } from './output/print-error.js';
 import { parseCommandLine } from './parse-command-line.js';
 import type { Terminal } from './terminal.js';
@@ -10,7 +10,7 @@ import { loadVerb } from './verbs/load-verb.js';
 
 /** Runs one command line and resolves to its exit code. Everything it prints goes to the terminal's streams. */
 export async function runCli(argv: readonly string[], terminal: Terminal): Promise<ExitStatus> {
-  const restorePipes = ignoreClosedPipes([terminal.stdout, terminal.stderr]);
+  const streams = guardStreams(terminal);
   const interruption = new AbortController();
   const interrupt = () => {
     terminal.off('SIGINT', interrupt);
@@ -23,18 +23,23 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
   const style = { json: namesOption(argv, '--json'), color: !namesOption(argv, '--no-color') };
   try {
     const asked = await parseCommandLine(argv, terminal);
-    if (asked === null) return EXIT_STATUS.yes;
+    if (asked === null) {
+      await streams.flush();
+      return EXIT_STATUS.yes;
+    }
     const verb = await loadVerb(asked.name);
     const plan = verb.plan(asked.raw, { processors: availableParallelism() });
     const options = { ...style, quiet: asked.raw.quiet === true };
     const effect = verb.effect(plan, createSession(terminal, options, interruption.signal));
-    return await orInterrupted(effect, interruption.signal);
+    const status = await orInterrupted(effect, interruption.signal);
+    await streams.flush();
+    return status;
   } catch (error) {
     return printError(error, terminal, style);
   } finally {
     terminal.off('SIGINT', interrupt);
     terminal.off('SIGTERM', interrupt);
-    restorePipes();
+    streams.release();
   }
 }
 

@@ -1,24 +1,17 @@
 import { createHash } from 'node:crypto';
-import { readFileSync, readdirSync, statSync } from 'node:fs';
+import { existsSync, readFileSync, readdirSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { root } from './paths.mjs';
 
-const SOURCES = [
-  'package-lock.json',
-  'tsconfig.base.json',
-  'packages/core/package.json',
-  'packages/core/src',
-  'packages/format/package.json',
-  'packages/format/src',
-  'apps/cli/package.json',
-  'apps/cli/build.mjs',
-  'apps/cli/src',
-];
-
 /** Digest of everything that the command-line bundle is made of; equal digests mean that nothing needs building. */
 export function sourceDigest(folder = root) {
+  const packages = readdirSync(join(folder, 'packages')).map((name) => `packages/${name}`);
+  const parts = [...packages.sort(), 'apps/cli'].flatMap((path) => [`${path}/package.json`, `${path}/src`]);
+  const sources = ['package-lock.json', 'apps/cli/build.mjs', ...parts].filter((path) =>
+    existsSync(join(folder, path)),
+  );
   const hash = createHash('sha256');
-  for (const path of SOURCES.flatMap((source) => listFiles(folder, source))) {
+  for (const path of sources.flatMap((source) => listFiles(folder, source))) {
     hash
       .update(`${path}\0`)
       .update(readFileSync(join(folder, path)))

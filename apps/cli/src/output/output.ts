@@ -26,7 +26,7 @@ export interface OutputOptions {
   readonly color: boolean;
 }
 
-/** Output on a terminal's streams. A closed pipe is no error: what is written to it is dropped. */
+/** Output on a terminal's streams. */
 export function createOutput(terminal: Terminal, options: OutputOptions): Output {
   const { stdout, stderr } = terminal;
   const showsProgress = stderr.isTTY === true && !options.quiet;
@@ -58,17 +58,6 @@ export function createOutput(terminal: Terminal, options: OutputOptions): Output
       write(stderr, `${text}\n`);
     },
     progress,
-  };
-}
-
-/** Ignores a reader that went away (EPIPE); every other stream error is thrown. Returns a function that undoes it. */
-export function ignoreClosedPipes(streams: readonly OutputStream[]): () => void {
-  const listener = (error: NodeJS.ErrnoException) => {
-    if (error.code !== 'EPIPE' && error.code !== 'ERR_STREAM_DESTROYED') throw error;
-  };
-  for (const stream of streams) stream.on('error', listener);
-  return () => {
-    for (const stream of streams) stream.off('error', listener);
   };
 }
 

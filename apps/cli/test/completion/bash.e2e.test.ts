@@ -41,7 +41,7 @@ test('options of a verb and of all verbs', async () => {
 
 test('values', async () => {
   expect(await offers('constants', 'm.json', '--mean', 'l')).toEqual(['logarithmic', 'left']);
-  expect(await offers('constants', 'm.json', '--convention', '4')).toEqual(['4alpha']);
+  expect(await offers('constants', 'm.json', '--convention', 'f')).toEqual(['four-alpha']);
   expect(await offers('constants', 'm.json', '--seed', '')).toEqual([]);
   expect(await offers('completion', '')).toEqual(['bash', 'zsh', 'fish']);
   expect(await offers('witness', 'm.json', 'cg')).toEqual(['cge']);

@@ -10,6 +10,11 @@ export const plainEnvironment = { PATH: process.env.PATH, HOME: process.env.HOME
 /** Runs the built command as a person would; never rejects, so that tests look at exit code and streams. */
 export async function thalweg(args: readonly string[], options: Options = {}) {
   await ensureBundle();
+  return startThalweg(args, options);
+}
+
+/** The same, started at once: for tests that talk to the running process. The bundle must be there. */
+export function startThalweg(args: readonly string[], options: Options = {}) {
   return execa(process.execPath, [bin, ...args], {
     reject: false,
     extendEnv: false,

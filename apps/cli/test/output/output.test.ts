@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { createOutput, ignoreClosedPipes } from '../../src/output/output.js';
+import { createOutput } from '../../src/output/output.js';
 import { fakeTerminal } from '../helpers/fake-terminal.js';
 
 const options = { json: false, quiet: false, color: true };
@@ -49,13 +49,4 @@ test('width is that of the terminal, 80 for a pipe, never below 40', () => {
   expect(width(true, 20)).toBe(40);
   expect(width(true)).toBe(80);
   expect(width(false, 132)).toBe(80);
-});
-
-test('a closed pipe is ignored, another stream error is not', () => {
-  const { stdout } = fakeTerminal();
-  const restore = ignoreClosedPipes([stdout]);
-  expect(() => stdout.emit('error', Object.assign(new Error('write EPIPE'), { code: 'EPIPE' }))).not.toThrow();
-  expect(() => stdout.emit('error', Object.assign(new Error('i/o error'), { code: 'EIO' }))).toThrow('i/o error');
-  restore();
-  expect(stdout.listenerCount('error')).toBe(0);
 });

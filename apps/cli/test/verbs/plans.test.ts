@@ -14,7 +14,7 @@ const defaults = {
   seed: 1,
   threads: 3,
   timeLimit: null,
-  convention: '2alpha',
+  convention: 'two-alpha',
 };
 
 test('a plan is fully defaulted', () => {
@@ -29,7 +29,7 @@ test('a plan is fully defaulted', () => {
 });
 
 test('global options are read', () => {
-  const raw = { model: '-', json: true, color: false, seed: '7', threads: '2', timeLimit: '5m', convention: '4alpha' };
+  const raw = { model: '-', json: true, color: false, seed: '7', threads: '2', timeLimit: '5m', convention: 'four-alpha' };
   expect(planInspect(raw, machine)).toEqual({
     ...defaults,
     model: '-',
@@ -38,7 +38,7 @@ test('global options are read', () => {
     seed: 7,
     threads: 2,
     timeLimit: 300_000,
-    convention: '4alpha',
+    convention: 'four-alpha',
   });
 });
 
@@ -46,7 +46,7 @@ test.each([
   [{ seed: '-1' }, '--seed: expected a whole number from 0 to 9007199254740991, got "-1"'],
   [{ threads: 'all' }, '--threads: expected a whole number from 1 to 256, got "all"'],
   [{ timeLimit: 'soon' }, '--time-limit: expected a time above 0'],
-  [{ convention: '3alpha' }, '--convention: expected one of 2alpha, 4alpha, 1alpha, got "3alpha"'],
+  [{ convention: 'three-alpha' }, '--convention: expected one of two-alpha, four-alpha, one-alpha, got "three-alpha"'],
 ])('refuses %o', (raw, message) => {
   const plan = () => planInspect({ model: 'm.json', ...raw }, machine);
   expect(plan).toThrow(message);
