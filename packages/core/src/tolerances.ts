@@ -249,3 +249,15 @@ export const SHORTEST_STEP = 1e-8;
 
 /** Scaled barrier parameter below which the centring rule stops being superlinear. */
 export const SMALL_BARRIER = 1e-6;
+
+/** Relative residual below which a unitary counts as permuting the jumps of a model. */
+export const JUMP_SYMMETRY_TOLERANCE = 1e-10;
+
+/** Eigenvalues of the intertwining equations' Gram matrix below this, relative, are free directions. */
+export const CONSTRAINT_RANK = 1e-12;
+
+/** Largest entry of ∂L − L̂∂, relative, at which an ansatz counts as having a lift. */
+export const CONSTRAINT_RESIDUAL = 1e-9;
+
+/** A lift is offered for a K this far, relative, below the optimum of its programme, so that rounding cannot spoil it. */
+export const LIFT_BACK_OFF = 1e-8;
