@@ -3,6 +3,7 @@ import { orthogonalColumns, packedQR, upperTriangle } from './qr-real.js';
 import { packedComplexQR, unitaryColumns, upperTriangleComplex } from './qr-complex.js';
 import { transposeReal } from './real-matrix.js';
 import { svdComplex } from './svd-complex.js';
+import { inverseNorm } from './triangular-inverse.js';
 
 /**
  * Orthonormal basis (columns, n × nullity) of the right singular vectors of an m × n matrix whose singular values are at
@@ -49,32 +50,6 @@ function provenRank(r: ComplexMatrix, tolerance: number): number | null {
   while (rank < rows && Math.hypot(r.re[rank * cols + rank], r.im[rank * cols + rank]) > tolerance) rank++;
   if (frobeniusNorm(block(r, rank, rows, rank, cols)) > tolerance) return null;
   return rank === 0 || 1 / inverseNorm(block(r, 0, rank, 0, rank)) > tolerance ? rank : null;
-}
-
-/** ‖R⁻¹‖_F of an upper triangular matrix. */
-function inverseNorm(r: ComplexMatrix): number {
-  const n = r.rows;
-  const x = zeros(n);
-  for (let i = n - 1; i >= 0; i--) {
-    const dr = r.re[i * n + i];
-    const di = r.im[i * n + i];
-    x.re[i * n + i] = 1;
-    for (let k = i + 1; k < n; k++) {
-      const ur = r.re[i * n + k];
-      const ui = r.im[i * n + k];
-      for (let j = k, p = i * n + k, q = k * n + k; j < n; j++, p++, q++) {
-        x.re[p] -= ur * x.re[q] - ui * x.im[q];
-        x.im[p] -= ur * x.im[q] + ui * x.re[q];
-      }
-    }
-    const size = dr * dr + di * di;
-    for (let p = i * n + i; p < (i + 1) * n; p++) {
-      const re = x.re[p];
-      x.re[p] = (re * dr + x.im[p] * di) / size;
-      x.im[p] = (x.im[p] * dr - re * di) / size;
-    }
-  }
-  return frobeniusNorm(x);
 }
 
 function block(a: ComplexMatrix, top: number, bottom: number, left: number, right: number): ComplexMatrix {

@@ -17,6 +17,7 @@ describe('symmetricSmallest', () => {
     for (const [family, a] of Object.entries(hermitianFamilies(seededRandom(`smallest ${n}`), n, false))) {
       it(`finds the lowest pair: n = ${n}, ${family}`, () => {
         const { value, vector } = symmetricSmallest(a.re, n);
+        expect(symmetricSmallestInto(a.re, n, null, smallestWork(n))).toBe(value);
         const norm = frobeniusNorm(a);
         const x = asMatrix(vector, n, 1);
         expectClose(value, symmetricEigenvalues(a.re, n)[0], 4 * n * 2 ** -52 * norm, 'value');
