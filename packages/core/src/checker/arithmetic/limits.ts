@@ -31,7 +31,7 @@ export const CHOLESKY_INFLATION = 1.01;
 export const SHIFT_ATTEMPTS = 60;
 
 /** A shift is accepted within this multiple of n·2^-53·trace of the smallest eigenvalue. */
-export const SHIFT_SLACK = 4;
+export const SHIFT_SLACK = 1;
 
 /** Inverse iterations with one factorisation. */
 export const INVERSE_ITERATIONS = 6;
@@ -41,3 +41,12 @@ export const JACOBI_SWEEP_LIMIT = 60;
 
 /** Steps of the power iteration that finds weights for the norm of a non-negative matrix. */
 export const NORM_ITERATIONS = 6;
+
+/** Bits after the binary point where a model is rotated into the frame of a state: eigenvalues of 1e-26 then still resolve. */
+export const FIXED_BITS = 256;
+
+/** Newton–Schulz steps towards a unitary matrix at most; from rounding errors three are enough. */
+export const POLAR_STEPS = 12;
+
+/** ‖u*u − 1‖ above which a frame does not count as nearly unitary. */
+export const UNITARITY_LIMIT = 0.25;
