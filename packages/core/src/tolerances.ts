@@ -220,7 +220,7 @@ export const OBJECTIVE_CONSISTENCY = 1e-10;
 export const DENSE_COEFFICIENT = 0.3;
 
 /** Speed, in products per nanosecond, of the register-blocked kernel and of single inner products (measured). */
-export const DENSE_RATE = 2;
+export const DENSE_RATE = 6;
 export const DOT_RATE = 0.7;
 
 /** Pivots of the Schur complement below x times the diagonal entry they came from are rounding. */
@@ -259,5 +259,20 @@ export const CONSTRAINT_RANK = 1e-12;
 /** Largest entry of ∂L − L̂∂, relative, at which an ansatz counts as having a lift. */
 export const CONSTRAINT_RESIDUAL = 1e-9;
 
-/** A lift is offered for a K this far, relative, below the optimum of its programme, so that rounding cannot spoil it. */
-export const LIFT_BACK_OFF = 1e-8;
+/** A lift is offered for a K below the optimum of its programme by one of these, relative: the first at which the form passes. */
+export const LIFT_BACK_OFFS = [1e-9, 1e-8, 1e-7, 1e-6] as const;
+
+/** An eigenvalue of a lift's form above minus this, relative to the form, counts as not negative. */
+export const FORM_ROUNDING = 1e-14;
+
+/** A lift within this of its target, relative to the larger of 1 and the target, closes the bracket: the ladder stops. */
+export const LIFT_CLOSED = 1e-6;
+
+/** Largest side of a lift's form that a sheet will try by itself; `certify` goes further. */
+export const SHEET_LIFT_SIDE = 260;
+
+/** Products of matrices with fewer multiplications than this stay out of WebAssembly, where copying would cost more. */
+export const SIMD_FLOOR = 1000;
+
+/** Inner indices that one call of the WebAssembly product covers: both operands of a tile then fit the first-level cache. */
+export const SIMD_CHUNK = 512;

@@ -1,0 +1,114 @@
+import { SCHUR_PIVOT, SCHUR_REFINEMENTS, SCHUR_RESIDUAL } from '../tolerances.js';
+import { symmetrise } from './dependent-coefficients.js';
+import { choleskyFactor } from './kernels/cholesky-factor.js';
+import { solveLower, solveLowerAdjoint } from './kernels/triangular-solve.js';
+
+/**
+ * The m × m linear system of the Newton step: Cholesky factor with pivots lost to rounding skipped, used as the
+ * preconditioner of conjugate gradients on the system itself.
+ */
+export class SchurSystem {
+  /** Filled by the cones; each pair of entries in either place. */
+  readonly matrix: Float64Array;
+  skippedRows = 0;
+  readonly #order: number;
+  readonly #factor: Float64Array;
+  readonly #floors: Float64Array;
+  readonly #skipped: Uint8Array;
+  readonly #residual: Float64Array;
+  readonly #preconditioned: Float64Array;
+  readonly #direction: Float64Array;
+  readonly #image: Float64Array;
+  readonly #candidate: Float64Array;
+
+  constructor(order: number) {
+    const vector = (): Float64Array => new Float64Array(order);
+    this.#order = order;
+    this.matrix = new Float64Array(order * order);
+    this.#factor = new Float64Array(order * order);
+    this.#floors = vector();
+    this.#skipped = new Uint8Array(order);
+    this.#residual = vector();
+    this.#preconditioned = vector();
+    this.#direction = vector();
+    this.#image = vector();
+    this.#candidate = vector();
+  }
+
+  /** False if the matrix is not finite. */
+  factorise(): boolean {
+    const m = this.#order;
+    symmetrise(this.matrix, m);
+    for (let i = 0; i < m; i++) this.#floors[i] = SCHUR_PIVOT * this.matrix[i * m + i];
+    this.#skipped.fill(0);
+    const failed = choleskyFactor(this.matrix, m, false, this.#factor, {
+      floors: this.#floors,
+      skipped: this.#skipped,
+    });
+    this.skippedRows = this.#skipped.reduce((sum, flag) => sum + flag, 0);
+    return failed < 0;
+  }
+
+  /** Solves for y; the best of the refined solutions by the norm of the residual. */
+  solve(right: Float64Array, y: Float64Array): void {
+    const r = this.#residual;
+    const z = this.#preconditioned;
+    const p = this.#direction;
+    const x = this.#candidate;
+    const target = SCHUR_RESIDUAL * norm(right);
+    x.set(right);
+    this.#precondition(x);
+    this.#subtractImage(right, x, r);
+    let best = norm(r);
+    y.set(x);
+    let rho = 0;
+    for (let k = 0; k < SCHUR_REFINEMENTS && best > target; k++) {
+      z.set(r);
+      this.#precondition(z);
+      const next = dot(r, z);
+      const beta = k === 0 ? 0 : next / rho;
+      rho = next;
+      for (let i = 0; i < p.length; i++) p[i] = z[i] + beta * p[i];
+      this.#multiply(p, this.#image);
+      const curvature = dot(p, this.#image);
+      if (!(curvature > 0) || !(rho > 0)) break;
+      const step = rho / curvature;
+      for (let i = 0; i < p.length; i++) x[i] += step * p[i];
+      this.#subtractImage(right, x, r);
+      const size = norm(r);
+      if (size < best) {
+        best = size;
+        y.set(x);
+      }
+    }
+  }
+
+  #precondition(x: Float64Array): void {
+    solveLower(this.#factor, this.#order, false, x);
+    solveLowerAdjoint(this.#factor, this.#order, false, x);
+  }
+
+  #subtractImage(right: Float64Array, x: Float64Array, out: Float64Array): void {
+    this.#multiply(x, out);
+    for (let i = 0; i < out.length; i++) out[i] = right[i] - out[i];
+  }
+
+  #multiply(x: Float64Array, out: Float64Array): void {
+    const m = this.#order;
+    for (let i = 0; i < m; i++) {
+      let sum = 0;
+      for (let j = 0, q = i * m; j < m; j++, q++) sum += this.matrix[q] * x[j];
+      out[i] = sum;
+    }
+  }
+}
+
+function dot(x: Float64Array, y: Float64Array): number {
+  let sum = 0;
+  for (let i = 0; i < x.length; i++) sum += x[i] * y[i];
+  return sum;
+}
+
+function norm(x: Float64Array): number {
+  return Math.sqrt(dot(x, x));
+}
