@@ -42,7 +42,7 @@ export function choleskySolveReal(l: Float64Array, n: number, b: Float64Array): 
 }
 
 /** x ← L⁻¹ x for x = the n entries of `x` from `offset`. */
-export function solveLower(l: Float64Array, n: number, x: Float64Array, offset: number = 0): Float64Array {
+function solveLower(l: Float64Array, n: number, x: Float64Array, offset: number = 0): Float64Array {
   for (let i = 0; i < n; i++) {
     const row = i * n;
     let sum = x[offset + i];
