@@ -10,50 +10,27 @@ import {
 } from '../../../src/checker/arithmetic/gaussian-matrix.js';
 import { gaussian } from '../../../src/checker/arithmetic/gaussian-rational.js';
 import { complexPointMatrix, widenComplexMatrix } from '../../../src/checker/arithmetic/interval-matrix.js';
-import { nonNegativeNormBound, normBound } from '../../../src/checker/arithmetic/norm-bound.js';
-import { encloseSmallestPencil } from '../../../src/checker/arithmetic/pencil-enclosure.js';
 import { rationalFromDouble } from '../../../src/checker/arithmetic/rational.js';
 import {
   isPositiveDefinite,
   smallestEigenvalueBound,
 } from '../../../src/checker/arithmetic/smallest-eigenvalue-bound.js';
-import { encloseUnitarityDefect } from '../../../src/checker/arithmetic/unitarity-defect.js';
 import {
   type ComplexMatrix,
   add,
-  adjoint,
-  diagonal,
   fromEntries,
   fromRows,
   hermitianPart,
   identity,
-  kronecker,
-  multiply,
   scale,
   zeros,
 } from '../../../src/linalg/complex-matrix.js';
 import { hermitianEigen } from '../../../src/linalg/hermitian-eigen.js';
 import { seededRandom } from '../../../src/random.js';
+import { randomHermitian, withSpectrum } from './known-spectra.js';
 
 const random = seededRandom('spectral enclosures');
 const U = 2 ** -53;
-
-const FOURIER4 = fromEntries(4, 4, (i, j) => [[1, 0, -1, 0][(i * j) % 4], [0, 1, 0, -1][(i * j) % 4]]);
-const HADAMARD = fromRows([
-  [1, 1],
-  [1, -1],
-]);
-
-/** An exact Hermitian matrix of doubles with the given whole eigenvalues: n⁻¹F diag(d) F^* with entries ±1, ±i in F. */
-function withSpectrum(d: readonly number[], real: boolean): ComplexMatrix {
-  let f = real ? kronecker(HADAMARD, HADAMARD) : FOURIER4;
-  while (f.rows < d.length) f = kronecker(f, HADAMARD);
-  return scale(multiply(multiply(f, diagonal(d)), adjoint(f)), 1 / f.rows);
-}
-
-function randomHermitian(n: number, real: boolean): ComplexMatrix {
-  return hermitianPart(fromEntries(n, n, () => [random.normal(), real ? 0 : random.normal()]));
-}
 
 const exactShift = (a: ComplexMatrix, s: number): GaussianMatrix =>
   subtractGaussianMatrix(
@@ -64,7 +41,7 @@ const exactShift = (a: ComplexMatrix, s: number): GaussianMatrix =>
 describe('lower bound of the smallest eigenvalue', () => {
   test.each([true, false])('is a bound by exact arithmetic, and near the best (real: %s)', (real) => {
     for (const n of [1, 2, 3, 6, 10]) {
-      const a = randomHermitian(n, real);
+      const a = randomHermitian(random, n, real);
       const bound = smallestEigenvalueBound(complexPointMatrix(a));
       const slack = 40 * (n + 2) * U * n * 4;
       expect(decideSemidefinite(exactShift(a, bound)).semidefinite, `n=${n} bound ${bound}`).toBe(true);
@@ -159,7 +136,7 @@ describe('enclosures of all eigenvalues', () => {
   });
 
   test('hold the spectra of the members of an interval matrix', () => {
-    const a = randomHermitian(5, false);
+    const a = randomHermitian(random, 5, false);
     const found = encloseEigenvalues(widenComplexMatrix(complexPointMatrix(a), 1e-6));
     for (let trial = 0; trial < 20; trial++) {
       const member = add(
@@ -176,7 +153,7 @@ describe('enclosures of all eigenvalues', () => {
 
   test('the smallest and largest are bounds by exact arithmetic', () => {
     for (const n of [2, 5, 9]) {
-      const a = randomHermitian(n, false);
+      const a = randomHermitian(random, n, false);
       const found = encloseEigenvalues(complexPointMatrix(a));
       expect(decideSemidefinite(exactShift(a, found[0].lo)).semidefinite).toBe(true);
       expect(decideSemidefinite(exactShift(a, found[0].hi + 1e-300)).semidefinite).toBe(false);
@@ -184,100 +161,5 @@ describe('enclosures of all eigenvalues', () => {
       expect(Math.max(...found.map((x) => x.hi - x.lo))).toBeLessThan(2000 * n * n * U);
     }
     expect(encloseEigenvalues(complexPointMatrix(zeros(0)))).toEqual([]);
-  });
-});
-
-describe('smallest generalised eigenvalue', () => {
-  /** Whole unit triangular matrix: its congruences are exact. */
-  const shear = (n: number, real: boolean) =>
-    fromEntries(n, n, (i, j) =>
-      i === j ? [1, 0] : i < j ? [random.integer(5) - 2, real ? 0 : random.integer(3) - 1] : [0, 0],
-    );
-
-  test('holds the exact value for congruent whole pencils', () => {
-    for (const d of [[2], [5, 3], [1, 4, 4, 9], [-3, 0, 2, 2, 7]]) {
-      for (const real of [true, false]) {
-        const x = shear(d.length, real);
-        const a = multiply(multiply(adjoint(x), diagonal(d)), x);
-        const b = multiply(adjoint(x), x);
-        const found = encloseSmallestPencil(complexPointMatrix(a), complexPointMatrix(b));
-        expect(found.lo).toBeLessThanOrEqual(Math.min(...d));
-        expect(found.hi).toBeGreaterThanOrEqual(Math.min(...d));
-        expect(found.hi - found.lo, `${d}`).toBeLessThan(1e-9);
-      }
-    }
-  });
-
-  test('holds the values of the members of interval pencils', () => {
-    const [a, b] = [randomHermitian(4, false), withSpectrum([1, 2, 3, 4], false)];
-    const wide = (m: ComplexMatrix) => widenComplexMatrix(complexPointMatrix(m), 1e-7);
-    const found = encloseSmallestPencil(wide(a), wide(b));
-    const exact = encloseSmallestPencil(complexPointMatrix(a), complexPointMatrix(b));
-    expect(found.lo).toBeLessThanOrEqual(exact.lo);
-    expect(found.hi).toBeGreaterThanOrEqual(exact.hi);
-    expect(exact.hi - exact.lo).toBeLessThan(1e-12);
-    expect(found.hi - found.lo).toBeLessThan(1e-4);
-  });
-
-  test('a matrix B that is not definite is refused', () => {
-    const a = complexPointMatrix(identity(4));
-    for (const d of [
-      [0, 1, 1, 1],
-      [-1, 1, 1, 1],
-    ]) {
-      expect(() => encloseSmallestPencil(a, complexPointMatrix(withSpectrum(d, true)))).toThrow('positive definite');
-    }
-    expect(() => encloseSmallestPencil(a, complexPointMatrix(identity(3)))).toThrow('one side');
-  });
-});
-
-describe('norms', () => {
-  test('Collatz bound of a non-negative matrix is nearly its norm', () => {
-    const path = Float64Array.of(0, 1, 0, 1, 0, 1, 0, 1, 0);
-    expect(nonNegativeNormBound(path, 3)).toBeGreaterThanOrEqual(Math.SQRT2);
-    expect(nonNegativeNormBound(path, 3)).toBeLessThan(1.5);
-    expect(nonNegativeNormBound(new Float64Array(4), 2)).toBe(0);
-    expect(nonNegativeNormBound(Float64Array.of(1, NaN, NaN, 1), 2)).toBe(Infinity);
-  });
-
-  test('norm bound of any matrix', () => {
-    const a = fromRows(
-      [
-        [0, 3],
-        [0, 0],
-      ],
-      [
-        [0, 4],
-        [0, 0],
-      ],
-    );
-    expect(normBound(complexPointMatrix(a))).toBe(5);
-  });
-
-  test('unitarity: exact for signed permutations, between its bounds elsewhere', () => {
-    const exact = encloseUnitarityDefect(
-      fromRows(
-        [
-          [0, 1],
-          [0, 0],
-        ],
-        [
-          [0, 0],
-          [-1, 0],
-        ],
-      ),
-    );
-    expect(exact).toEqual({ lo: 0, hi: 0 });
-    // (1+t)·unitary: ‖U*U − 1‖ = 2t + t² exactly, t = 2^-10.
-    const t = 2 ** -10;
-    const stretched = encloseUnitarityDefect(scale(FOURIER4, 0.5 * (1 + t)));
-    expect(stretched.lo).toBeLessThanOrEqual(2 * t + t * t);
-    expect(stretched.hi).toBeGreaterThanOrEqual(2 * t + t * t);
-    expect(stretched.hi - stretched.lo).toBeLessThan(1e-15);
-    for (const n of [3, 8, 50]) {
-      const defect = encloseUnitarityDefect(hermitianEigen(randomHermitian(n, false)).vectors);
-      expect(defect.hi).toBeGreaterThan(0);
-      expect(defect.hi, `n=${n}`).toBeLessThan(40 * n * n * U);
-    }
   });
 });
