@@ -2,7 +2,7 @@ import type { BlockAlgebra } from '../algebra/block-algebra.js';
 import { applyGenerator } from '../generator/apply-generator.js';
 import type { Generator } from '../generator/generator.js';
 import { type ComplexMatrix, zeros } from '../linalg/complex-matrix.js';
-import { type MatrixUnits, matrixUnits } from '../metric/matrix-units.js';
+import { type MatrixUnits, matrixUnits } from '../algebra/matrix-units.js';
 
 /**
  * The M-valued forms Γ(A,B) = ½(L(A*B) − L(A)*B − A*L(B)) and Γ₂(A,B) = ½(LΓ(A,B) − Γ(A,LB) − Γ(LA,B)) on matrix

@@ -1,4 +1,4 @@
-import { basisElement, fromCoordinates, projectToAlgebra, toCoordinates } from '../algebra/block-algebra.js';
+import { fromCoordinates, projectToAlgebra, toCoordinates } from '../algebra/block-algebra.js';
 import { type ComplexMatrix, addScaledInto, adjoint, zeros } from '../linalg/complex-matrix.js';
 import {
   type SparseMatrix,
@@ -10,6 +10,8 @@ import {
   sparseTimesDense,
 } from '../linalg/sparse-matrix.js';
 import type { Generator } from './generator.js';
+
+export { generatorMatrix } from './generator-matrix.js';
 
 /** L(A) for A in the algebra (N×N); the result is again block-diagonal. */
 export function applyGenerator(g: Generator, a: ComplexMatrix): ComplexMatrix {
@@ -47,32 +49,12 @@ export function applyGeneratorAdjoint(g: Generator, rho: ComplexMatrix): Complex
   return projectToAlgebra(g.algebra, out);
 }
 
-/** L as a real D×D row-major matrix in the orthonormal Hermitian basis; row k holds the k-th coordinate of L(B_l). */
-export function generatorMatrix(g: Generator): Float64Array {
-  const cached = matrices.get(g);
-  if (cached) return cached;
-  const d = g.algebra.dimension;
-  const out = new Float64Array(d * d);
-  if (g.jumps.length > 0 || g.hamiltonian) {
-    const withoutS: Generator = { ...g, superoperator: null };
-    const column = new Float64Array(d);
-    for (let l = 0; l < d; l++) {
-      toCoordinates(g.algebra, applyGenerator(withoutS, basisElement(g.algebra, l)), column);
-      for (let k = 0; k < d; k++) out[k * d + l] = column[k];
-    }
-  }
-  if (g.superoperator) for (let k = 0; k < d * d; k++) out[k] += g.superoperator[k];
-  matrices.set(g, out);
-  return out;
-}
-
 interface Compiled {
   readonly jumps: readonly { readonly matrix: IndexedSparse; readonly adjointMatrix: IndexedSparse }[];
   /** G = −½ Σ R*R − iH, so that L(A) = Σ R*AR + AG + (A*G)*. */
   readonly drift: SparseMatrix | null;
 }
 
-const matrices = new WeakMap<Generator, Float64Array>();
 const compilations = new WeakMap<Generator, Compiled>();
 
 function compiled(g: Generator): Compiled {

@@ -5,6 +5,9 @@ import type { ComplexMatrix } from '../linalg/complex-matrix.js';
 /** Largest algebra dimension D for which D×D matrices are stored; 1024 is five qubits, 8 MiB a matrix. */
 export const MAX_DENSE_DIMENSION = 1024;
 
+/** Algebra dimension up to which D×D factorisations take well under a second; above it cheaper ways are tried first. */
+export const QUICK_DENSE_DIMENSION = 256;
+
 /** Throws `too-large` when D×D matrices of the algebra would not be stored. */
 export function requireDenseDimension(algebra: BlockAlgebra, what: string): void {
   if (algebra.dimension <= MAX_DENSE_DIMENSION) return;

@@ -2,7 +2,7 @@ import { type MeanTable, emptyMeanTable, fillMeanTable } from './mean-table.js';
 import type { MetricModel } from './metric-model.js';
 import type { OperatorMean } from './operator-mean.js';
 import { addJumpForms, addGeneratorUnits } from './jump-forms.js';
-import { type MatrixUnits, matrixUnits } from './matrix-units.js';
+import { type MatrixUnits, matrixUnits } from '../algebra/matrix-units.js';
 import { rotateInto } from './rotate.js';
 import type { ComplexMatrix } from '../linalg/complex-matrix.js';
 

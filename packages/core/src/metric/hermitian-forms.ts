@@ -1,5 +1,5 @@
 import type { BlockAlgebra } from '../algebra/block-algebra.js';
-import type { MatrixUnits } from './matrix-units.js';
+import type { MatrixUnits } from '../algebra/matrix-units.js';
 
 /** Turns a Hermitian form over matrix units into one over the algebra's orthonormal Hermitian basis. */
 export interface HermitianFormConverter {

@@ -1,5 +1,5 @@
 import type { MeanTable } from './mean-table.js';
-import type { MatrixUnits } from './matrix-units.js';
+import type { MatrixUnits } from '../algebra/matrix-units.js';
 
 interface Parts {
   readonly re: Float64Array;

@@ -3,16 +3,9 @@ import { applyGenerator } from '../generator/apply-generator.js';
 import type { Generator } from '../generator/generator.js';
 import { scaleSparse } from '../generator/lindblad-generator.js';
 import { MAX_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
-import {
-  type ComplexMatrix,
-  frobeniusNorm,
-  multiply,
-  multiplyAdjointFirst,
-  subtract,
-  zeros,
-} from '../linalg/complex-matrix.js';
-import { denseFromSparse } from '../linalg/sparse-matrix.js';
-import type { MatrixUnits } from '../metric/matrix-units.js';
+import { addDrift, addSandwich } from '../generator/unit-form.js';
+import { frobeniusNorm, multiply, multiplyAdjointFirst, scale, subtract, zeros } from '../linalg/complex-matrix.js';
+import { denseFromSparse, sparseFromDense } from '../linalg/sparse-matrix.js';
 import { seededRandom } from '../random.js';
 import type { StoredJump } from './canonical-form.js';
 import { basisOf, generatorInStateBasis } from './generator-in-basis.js';
@@ -30,56 +23,12 @@ function exactResidual(g: Generator, state: ReferenceState, jumps: readonly Stor
   const rebuilt = zeros(units.count);
   const drift = zeros(units.size);
   for (const { sparse, frequency } of jumps) {
-    const v = denseFromSparse(sparse);
-    const inBasis = u ? multiplyAdjointFirst(u, multiply(v, u)) : v;
-    addJump(rebuilt, drift, units, inBasis, 2 * Math.exp(-frequency / 2));
+    const v = u ? sparseFromDense(multiplyAdjointFirst(u, multiply(denseFromSparse(sparse), u))) : sparse;
+    addSandwich(rebuilt, drift, units, v, 2 * Math.exp(-frequency / 2));
   }
-  addDrift(rebuilt, drift, units);
+  addDrift(rebuilt, units, scale(drift, -0.5));
   const difference = frobeniusNorm(subtract(rebuilt, matrix));
   return size > 0 ? difference / size : difference;
-}
-
-/** [L(e_kk')]_{ll'} += c·conj(V_kl)V_k'l', and drift += c·V*V. */
-function addJump(rebuilt: ComplexMatrix, drift: ComplexMatrix, units: MatrixUnits, v: ComplexMatrix, c: number): void {
-  const n = units.size;
-  const places = Array.from({ length: n * n }, (_, k) => k).filter((k) => Math.hypot(v.re[k], v.im[k]) > 0);
-  for (const first of places) {
-    const k = Math.floor(first / n);
-    const l = first % n;
-    for (const second of places) {
-      const k2 = Math.floor(second / n);
-      const l2 = second % n;
-      const re = c * (v.re[first] * v.re[second] + v.im[first] * v.im[second]);
-      const im = c * (v.re[first] * v.im[second] - v.im[first] * v.re[second]);
-      if (k === k2) {
-        drift.re[l * n + l2] += re;
-        drift.im[l * n + l2] += im;
-      }
-      const q = units.index[k * n + k2];
-      const p = units.index[l * n + l2];
-      if (p < 0 || q < 0) continue;
-      rebuilt.re[p * units.count + q] += re;
-      rebuilt.im[p * units.count + q] += im;
-    }
-  }
-}
-
-/** L(A) −= ½(KA + AK) for K = the drift: coefficient of e_ll' in K e_kk' is K_lk δ_l'k', in e_kk'K it is δ_lk K_k'l'. */
-function addDrift(rebuilt: ComplexMatrix, drift: ComplexMatrix, units: MatrixUnits): void {
-  const { size: n, count, row, col, index, blockOf } = units;
-  for (let q = 0; q < count; q++) {
-    const k = row[q];
-    const k2 = col[q];
-    for (let l = 0; l < n; l++) {
-      if (blockOf[l] !== blockOf[k]) continue;
-      const left = index[l * n + k2] * count + q;
-      rebuilt.re[left] -= drift.re[l * n + k] / 2;
-      rebuilt.im[left] -= drift.im[l * n + k] / 2;
-      const right = index[k * n + l] * count + q;
-      rebuilt.re[right] -= drift.re[k2 * n + l] / 2;
-      rebuilt.im[right] -= drift.im[k2 * n + l] / 2;
-    }
-  }
 }
 
 const PROBES = 2;

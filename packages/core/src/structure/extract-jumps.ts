@@ -1,6 +1,7 @@
 import type { BlockAlgebra } from '../algebra/block-algebra.js';
 import { ThalwegError } from '../errors.js';
 import type { Generator } from '../generator/generator.js';
+import type { UnitForm } from '../generator/unit-form.js';
 import {
   type ComplexMatrix,
   adjoint,
@@ -14,7 +15,7 @@ import { hermitianEigen } from '../linalg/hermitian-eigen.js';
 import { sparseFromDense } from '../linalg/sparse-matrix.js';
 import { JUMP_TOLERANCE, POSITIVITY_TOLERANCE } from '../tolerances.js';
 import type { StoredJump } from './canonical-form.js';
-import { type UnitForm, basisOf, generatorInStateBasis } from './generator-in-basis.js';
+import { basisOf, generatorInStateBasis } from './generator-in-basis.js';
 import { modularFrequencies } from './modular-frequencies.js';
 import { choiEntry } from './positivity.js';
 import type { ReferenceState } from './reference-state.js';

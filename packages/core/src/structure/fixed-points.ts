@@ -3,11 +3,11 @@ import { decomposeAlgebra } from '../algebra/decompose-algebra.js';
 import { ThalwegError } from '../errors.js';
 import { generatorMatrix } from '../generator/apply-generator.js';
 import type { Generator } from '../generator/generator.js';
-import { MAX_DENSE_DIMENSION, requireDenseDimension } from '../generator/superoperator-parts.js';
+import { MAX_DENSE_DIMENSION, QUICK_DENSE_DIMENSION, requireDenseDimension } from '../generator/superoperator-parts.js';
 import { tensorAlgebra, tensorElement } from '../generator/tensor-algebra.js';
 import { type ComplexMatrix, identity } from '../linalg/complex-matrix.js';
 import { dot, kernelPair, norm, projectionFactor } from './kernel.js';
-import { primitiveBySearch } from './primitive-search.js';
+import { primitiveByCholesky, primitiveBySearch } from './primitive.js';
 import type { ReferenceState } from './reference-state.js';
 import type { Symmetry } from './symmetry.js';
 
@@ -62,9 +62,14 @@ function kernelOf(g: Generator, state: ReferenceState, symmetry: Symmetry): Kern
     const kernels = origin.factors.map(ownKernel);
     return kernels.every((k) => k !== null) ? tensorKernel(origin.factors, kernels as Kernel[]) : null;
   }
-  if (algebra.dimension <= MAX_DENSE_DIMENSION) return kernelPair(generatorMatrix(g), algebra.dimension);
-  if (symmetry.kind === 'none' || !primitiveBySearch(g, state)) return null;
-  return { right: [toCoordinates(algebra, identity(algebra.size))], left: [toCoordinates(algebra, state.sigma)] };
+  const d = algebra.dimension;
+  if (d <= QUICK_DENSE_DIMENSION) return kernelPair(generatorMatrix(g), d);
+  const alone = {
+    right: [toCoordinates(algebra, identity(algebra.size))],
+    left: [toCoordinates(algebra, state.sigma)],
+  };
+  if (d <= MAX_DENSE_DIMENSION) return primitiveByCholesky(g, state) ? alone : kernelPair(generatorMatrix(g), d);
+  return symmetry.kind !== 'none' && primitiveBySearch(g, state) ? alone : null;
 }
 
 /** The kernel of a factor, which is small enough for linear algebra or is not known. */
@@ -90,7 +95,8 @@ function tensorKernel(factors: readonly Generator[], kernels: readonly Kernel[])
 /** An orthonormal basis of the same span whose first vector is 1/√N. */
 function startWithIdentity(algebra: BlockAlgebra, span: readonly Float64Array[]): Float64Array[] {
   const one = toCoordinates(algebra, identity(algebra.size));
-  const basis = [one.map((x) => x / norm(one))];
+  const length = norm(one);
+  const basis = [one.map((x) => x / length)];
   const rest = span.map((x) => x.slice());
   while (basis.length < span.length) {
     // The vector with the most left outside what is chosen so far; one is dropped in all.

@@ -3,6 +3,7 @@ import { applyGenerator } from '../generator/apply-generator.js';
 import { generatorNormBound } from '../generator/generator-norm.js';
 import type { Generator } from '../generator/generator.js';
 import { MAX_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
+import { type UnitForm, unitForm } from '../generator/unit-form.js';
 import {
   type ComplexMatrix,
   frobeniusNorm,
@@ -13,7 +14,6 @@ import {
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
 import { seededRandom } from '../random.js';
 import { INPUT_TOLERANCE, POSITIVITY_TOLERANCE } from '../tolerances.js';
-import { type UnitForm, generatorInBasis } from './generator-in-basis.js';
 
 /** What makes L the generator of a Markov semigroup. */
 export interface MarkovChecks {
@@ -68,7 +68,7 @@ function completePositivity(g: Generator): MarkovChecks['completelyPositive'] {
   if (!g.superoperator && (algebra.dimension > MAX_DENSE_DIMENSION || side > MAX_CHOI_SIDE)) {
     return { holds: true, smallestEigenvalue: 0, byForm: true };
   }
-  const form = generatorInBasis(g, null);
+  const form = unitForm(g);
   let smallest = Infinity;
   let largest = 0;
   algebra.blocks.forEach((_, a) =>
@@ -89,7 +89,8 @@ function choiEigenvalues(form: UnitForm, g: Generator, a: number, b: number): Fl
   const { blocks, offsets } = g.algebra;
   const n = blocks[a];
   const m = blocks[b];
-  if (n * m === 1 && a === b) return new Float64Array(0);
+  if (n * m === 1)
+    return Float64Array.from(a === b ? [] : [choiEntry(form, offsets[a], offsets[b], offsets[a], offsets[b])[0]]);
   const c = fromEntries(n * m, n * m, (r, s) =>
     choiEntry(
       form,

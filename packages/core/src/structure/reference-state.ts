@@ -5,7 +5,7 @@ import { applyGeneratorAdjoint, generatorMatrix } from '../generator/apply-gener
 import { densityMatrix } from '../generator/declared-state.js';
 import { generatorNormBound } from '../generator/generator-norm.js';
 import type { Generator } from '../generator/generator.js';
-import { MAX_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
+import { MAX_DENSE_DIMENSION, QUICK_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
 import { tensorAlgebra, tensorElement } from '../generator/tensor-algebra.js';
 import {
   type ComplexMatrix,
@@ -86,9 +86,20 @@ function computedState(g: Generator): ReferenceState {
   }
   const rates = diagonalRates(g);
   if (rates) return describe(g, diagonal(limitDistribution(rates, n)), false, true);
-  const limit = algebra.dimension <= MAX_DENSE_DIMENSION ? limitFromKernel(g, mixed) : krylovLimit(g, mixed);
-  const sigma = hermitianPart(limit);
+  const sigma = hermitianPart(limitOf(g, mixed));
   return describe(g, scale(sigma, 1 / trace(sigma).re), false, false);
+}
+
+/** E†(ρ): by null vectors where that is quick, or where a Krylov space fails because rates differ too much. */
+function limitOf(g: Generator, rho: ComplexMatrix): ComplexMatrix {
+  const d = g.algebra.dimension;
+  if (d <= QUICK_DENSE_DIMENSION) return limitFromKernel(g, rho);
+  try {
+    return krylovLimit(g, rho);
+  } catch (error) {
+    if (!(error instanceof ThalwegError) || error.code !== 'no-convergence' || d > MAX_DENSE_DIMENSION) throw error;
+    return limitFromKernel(g, rho);
+  }
 }
 
 /** E†(ρ) = Yᵀ-part of X(YᵀX)⁻¹Yᵀ transposed: the coordinates of ρ against X, spread over the left null vectors. */

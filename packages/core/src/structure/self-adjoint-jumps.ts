@@ -1,9 +1,9 @@
 import type { BlockAlgebra } from '../algebra/block-algebra.js';
+import type { UnitForm } from '../generator/unit-form.js';
 import { zeros } from '../linalg/complex-matrix.js';
 import { symmetricEigen } from '../linalg/symmetric-eigen.js';
 import { EPSILON } from '../tolerances.js';
 import type { RawJump } from './extract-jumps.js';
-import type { UnitForm } from './generator-in-basis.js';
 import { choiEntry } from './positivity.js';
 
 /** A Hermitian matrix as a list of [k, l, re, im]. */

@@ -1,6 +1,7 @@
 import { fromCoordinates } from '../algebra/block-algebra.js';
 import { applyGenerator, applyGeneratorAdjoint } from '../generator/apply-generator.js';
 import type { Generator } from '../generator/generator.js';
+import type { UnitForm } from '../generator/unit-form.js';
 import { MAX_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
 import {
   type ComplexMatrix,
@@ -14,7 +15,7 @@ import {
 import { matrixFunction } from '../linalg/matrix-function.js';
 import { seededRandom } from '../random.js';
 import { INPUT_TOLERANCE, SYMMETRY_TOLERANCE } from '../tolerances.js';
-import { type UnitForm, generatorInStateBasis } from './generator-in-basis.js';
+import { generatorInStateBasis } from './generator-in-basis.js';
 import type { ReferenceState } from './reference-state.js';
 
 export type SymmetryKind = 'tracial' | 'GNS' | 'KMS' | 'none';
@@ -63,17 +64,18 @@ function exactResiduals(form: UnitForm, state: ReferenceState): Symmetry['residu
 /** ‖X−X*‖/‖X‖ for X = W^{1/2} M W^{−1/2}, or for X = WM when some weight is zero. */
 function weightedResidual(m: ComplexMatrix, w: Float64Array, invertible: boolean): number {
   const d = m.rows;
-  const factor = (p: number, q: number): number => (invertible ? Math.sqrt(w[p] / w[q]) : w[p]);
+  const left = invertible ? w.map(Math.sqrt) : w;
+  const right = invertible ? left.map((x) => 1 / x) : w.map(() => 1);
   let difference = 0;
   let total = 0;
   for (let p = 0; p < d; p++) {
-    for (let q = 0; q < d; q++) {
-      const f = factor(p, q);
-      const h = factor(q, p);
-      const re = f * m.re[p * d + q];
-      const im = f * m.im[p * d + q];
+    for (let q = 0, at = p * d, mirror = p; q < d; q++, at++, mirror += d) {
+      const f = left[p] * right[q];
+      const h = left[q] * right[p];
+      const re = f * m.re[at];
+      const im = f * m.im[at];
       total += re * re + im * im;
-      difference += (re - h * m.re[q * d + p]) ** 2 + (im + h * m.im[q * d + p]) ** 2;
+      difference += (re - h * m.re[mirror]) ** 2 + (im + h * m.im[mirror]) ** 2;
     }
   }
   return total > 0 ? Math.sqrt(difference / total) : 0;

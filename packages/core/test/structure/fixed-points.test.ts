@@ -6,9 +6,17 @@ import type { Generator } from '../../src/generator/generator.js';
 import { lindbladGenerator } from '../../src/generator/lindblad-generator.js';
 import { sumGenerator } from '../../src/generator/sum-generator.js';
 import { tensorGenerator } from '../../src/generator/tensor-generator.js';
-import { dephasing, depolarising, localDepolarising, pauliJumps, thermalQubit } from '../../src/families/index.js';
+import {
+  dephasing,
+  depolarising,
+  generalisedDepolarising,
+  localDepolarising,
+  pauliJumps,
+  thermalQubit,
+} from '../../src/families/index.js';
 import {
   type ComplexMatrix,
+  diagonal,
   frobeniusNorm,
   fromRows,
   hermitianPart,
@@ -23,6 +31,8 @@ import { expmReal } from '../../src/linalg/expm-real.js';
 import { hermitianPower } from '../../src/linalg/matrix-function.js';
 import { seededRandom } from '../../src/random.js';
 import { type FixedPoints, fixedPoints } from '../../src/structure/fixed-points.js';
+import { kernelPair, projectionFactor } from '../../src/structure/kernel.js';
+import { primitiveByCholesky } from '../../src/structure/primitive.js';
 import { referenceState } from '../../src/structure/reference-state.js';
 import { symmetryOf } from '../../src/structure/symmetry.js';
 import { expectError } from '../helpers/expect-error.js';
@@ -173,6 +183,44 @@ describe('the projection onto fixed points', () => {
       const right = innerProduct(picture(a), picture(expectationOf(g, found, b))).re;
       expectClose(left, right, 1e-11, `seed ${seed}: <EA,B> − <A,EB>`);
     }
+  });
+});
+
+describe('algebras above the quick size', () => {
+  it('prove primitivity by a Cholesky factorisation, with the projection that the kernel gives', () => {
+    const weights = Array.from({ length: 17 }, (_, k) => Math.exp(-k / 4));
+    const total = weights.reduce((sum, w) => sum + w, 0);
+    const g = generalisedDepolarising(diagonal(weights.map((w) => w / total)));
+    const state = referenceState(g);
+    expect(primitiveByCholesky(g, state)).toBe(true);
+    const found = fixedOf(g);
+    expect(found).toMatchObject({ dimension: 1, primitive: true });
+    const { right, left } = kernelPair(generatorMatrix(g), 289);
+    const factor = projectionFactor(right, left);
+    let worst = 0;
+    for (let k = 0; k < 289; k++) {
+      for (let l = 0; l < 289; l++)
+        worst = Math.max(worst, Math.abs(right[0][k] * factor[l] - found.expectation[k * 289 + l]));
+    }
+    expectBelow(worst, 1e-12, 'E − X(YᵀX)⁻¹Yᵀ');
+  });
+
+  it('turn to the kernel where that proves nothing', () => {
+    const g = dephasing(17);
+    expect(primitiveByCholesky(g, referenceState(g))).toBe(false);
+    expect(fixedOf(g).blocks).toEqual(new Array<number>(17).fill(1));
+  });
+
+  it('are found primitive without symmetry too', () => {
+    const random = seededRandom('no symmetry');
+    const jumps = [{ matrix: randomMatrix(random, 17) }];
+    const g = lindbladGenerator({
+      algebra: blockAlgebra([17]),
+      hamiltonian: hermitianPart(randomMatrix(random, 17)),
+      jumps,
+    });
+    expect(primitiveByCholesky(g, referenceState(g))).toBe(true);
+    expect(kernelPair(generatorMatrix(g), 289).dimension).toBe(1);
   });
 });
 

@@ -1,4 +1,4 @@
-import type { BlockAlgebra } from '../algebra/block-algebra.js';
+import type { BlockAlgebra } from './block-algebra.js';
 
 /** The matrix units e_ab of an algebra, listed; D of them. */
 export interface MatrixUnits {
