@@ -21,6 +21,5 @@ export default defineConfig({
     ],
     testTimeout: 60_000,
     hookTimeout: 60_000,
-    benchmark: { include: ['tests/bench/**/*.bench.ts', 'packages/*/bench/**/*.bench.ts'] },
   },
 });

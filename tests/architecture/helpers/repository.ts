@@ -8,7 +8,7 @@ export const root = fileURLToPath(new URL('../../..', import.meta.url));
 const NOT_OURS = new Set(['node_modules', 'dist', 'coverage', '.git', '__pycache__', '.pytest_cache', '__snapshots__']);
 
 /** Every file of ours under a folder, as paths from the top with forward slashes, sorted. */
-export function listFiles(folder: string): string[] {
+function listFiles(folder: string): string[] {
   return readdirSync(join(root, folder), { withFileTypes: true })
     .filter((entry) => !NOT_OURS.has(entry.name))
     .flatMap((entry) => {

@@ -4,8 +4,8 @@ import { readDuration, readName, readWholeNumber } from './option-values.js';
 import { textOption } from './parse-options.js';
 import type { Machine } from './verb.js';
 
-export const DEFAULT_SEED = 1;
-export const DEFAULT_CONVENTION = 'two-alpha';
+const DEFAULT_SEED = 1;
+const DEFAULT_CONVENTION = 'two-alpha';
 const MOST_THREADS = 256;
 
 /** The options of every verb that computes, with their defaults. */

@@ -22,9 +22,8 @@ export const TEST_TASKS = {
     for (;;);
   },
   untilTheLimit: (_: null, context: TaskContext) => {
-    let steps = 0;
-    while (!context.isOutOfTime()) steps += 1;
-    return steps > 0 ? 'best so far' : 'nothing';
+    while (!context.isOutOfTime());
+    return 'best so far';
   },
   talk: (name: string, context: TaskContext) => {
     context.progress(`${name} begins`);

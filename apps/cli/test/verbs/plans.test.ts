@@ -29,7 +29,15 @@ test('a plan is fully defaulted', () => {
 });
 
 test('global options are read', () => {
-  const raw = { model: '-', json: true, color: false, seed: '7', threads: '2', timeLimit: '5m', convention: 'four-alpha' };
+  const raw = {
+    model: '-',
+    json: true,
+    color: false,
+    seed: '7',
+    threads: '2',
+    timeLimit: '5m',
+    convention: 'four-alpha',
+  };
   expect(planInspect(raw, machine)).toEqual({
     ...defaults,
     model: '-',
