@@ -164,8 +164,8 @@ export const NOISE_RATE = EPSILON * EPSILON;
 /** The maximally mixed state is invariant when ‖L†(1)‖ is below x·N·2⁻⁵²·‖L‖·‖1‖. */
 export const STATE_ROUNDING = 8;
 
-/** Absolute error of an eigenvalue of a computed invariant state, in units of 2⁻⁵²; divided by the eigenvalue it blurs log σ. */
-export const STATE_ERROR = 256;
+/** However small the smallest weight of an inexact σ is, symmetries are not accepted with a larger residual than this. */
+export const MAX_STATE_ERROR = 1e-6;
 
 /** Given jumps count as modular, traceless, orthogonal and paired when they miss it by less than x of their size. */
 export const GIVEN_JUMP_TOLERANCE = 1e-10;
@@ -276,3 +276,9 @@ export const SIMD_FLOOR = 1000;
 
 /** Inner indices that one call of the WebAssembly product covers: both operands of a tile then fit the first-level cache. */
 export const SIMD_CHUNK = 512;
+
+/** Relative raises of the diagonal of a Schur complement, tried in turn until its Cholesky factor loses no pivot. */
+export const SCHUR_SHIFTS = [0, 1e-15, 1e-14, 1e-13, 1e-12, 1e-11] as const;
+
+/** Most real unknowns of a lift that a sheet will try by itself. */
+export const SHEET_LIFT_UNKNOWNS = 250;

@@ -32,9 +32,9 @@ export async function computeSheet(job: SheetJob, session: Session): Promise<Com
   const request: SheetRequest = { rows, seed, randomStarts: null, epsilon: MIXING_EPSILON };
   const started = Date.now();
   return session.compute(limits, async (pool) => {
-    session.output.progress('eigenvalue problems');
+    session.output.progress('eigenvalue problems and lifts');
     const { findings, searches } = only(
-      await pool.run('sheet-eigenproblems', [{ source, request, searchClosed: job.searchClosed ?? false }]),
+      await pool.run('sheet-proofs', [{ source, request, searchClosed: job.searchClosed ?? false }]),
     );
     session.output.progress(`searching, ${searches.length} starts`);
     const outcomes = await pool.run(

@@ -1,4 +1,5 @@
 import { type ComplexMatrix, adjoint, innerProduct, scale, zeros } from '../linalg/complex-matrix.js';
+import { sparseFromDense } from '../linalg/sparse-matrix.js';
 import type { CanonicalForm, CanonicalJump } from '../structure/canonical-form.js';
 import { JUMP_SYMMETRY_TOLERANCE } from '../tolerances.js';
 
@@ -66,7 +67,7 @@ function rewritten(operators: readonly Operator[], strengths: readonly number[])
   return kept.map(({ label, adjoint: other }, k) => {
     const matrix = matrices[k] as ComplexMatrix;
     const norm = Math.sqrt(innerProduct(matrix, matrix).re);
-    return { label, matrix, corner: [0, 0], frequency: 0, partner: index.get(other) as number, norm };
+    return { label, matrix, sparse: sparseFromDense(matrix), frequency: 0, partner: index.get(other) as number, norm };
   });
 }
 

@@ -36,15 +36,9 @@ export function assembleSheet(
   return final.filter((row) => wanted.has(nameOf(row.key)));
 }
 
-/** Names of the rows that the findings so far close. */
-export function closedRows(
-  structure: Structure,
-  request: SheetRequest,
-  findings: readonly SheetFinding[],
-): ReadonlySet<string> {
-  const everything = { ...request, rows: rowKeys(request) };
-  const rows = assembleSheet(structure, everything, findings);
-  return new Set(rows.filter((row) => row.closed).map((row) => nameOf(row.key)));
+/** Every row that the findings so far bound, wanted or not. */
+export function allRows(structure: Structure, request: SheetRequest, findings: readonly SheetFinding[]): SheetRow[] {
+  return assembleSheet(structure, { ...request, rows: rowKeys(request) }, findings);
 }
 
 /** The full sheet's rows, for they bound each other, and what is asked beside them. */
@@ -69,7 +63,7 @@ function directBracket(structure: Structure, found: readonly SheetFinding[], { i
     case 'ge':
       return gradientEstimateBracket(structure, found, mean ?? 'logarithmic');
     case 'cge':
-      return { lower: hasGradientMetric(structure) ? completeCurvatureRule(structure) : null, upper: null };
+      return { lower: completeCurvatureLower(structure, found), upper: null };
     case 'mlsi':
     case 'clsi':
     case 'lsi':
@@ -138,7 +132,7 @@ function gradientEstimateBracket(structure: Structure, found: readonly SheetFind
     if (finding.kind !== 'ge' || finding.mean !== mean) continue;
     if (!best || finding.result.value + finding.result.error < best.value + best.error) best = finding.result;
   }
-  const rule = completeCurvatureRule(structure);
+  const rule = completeCurvatureLower(structure, found);
   const lower = mean === 'logarithmic' ? betterLower(rule, curvatureRule(structure)) : rule;
   return { lower, upper: best && gradientEstimateEnd(best, mean) };
 }
@@ -158,6 +152,13 @@ function gradientEstimateEnd(best: GradientEstimateResult, mean: MeanName): End 
       amplification: 1,
     },
   };
+}
+
+/** The better of the theorems on special forms and the lift; both hold for every operator mean. */
+function completeCurvatureLower(structure: Structure, found: readonly SheetFinding[]): End | null {
+  if (!hasGradientMetric(structure)) return null;
+  const lift = found.find(({ kind }) => kind === 'lift');
+  return betterLower(completeCurvatureRule(structure), lift?.kind === 'lift' ? lift.end : null);
 }
 
 function entropyBracket(structure: Structure, found: readonly SheetFinding[], id: 'mlsi' | 'clsi' | 'lsi'): Bracket {

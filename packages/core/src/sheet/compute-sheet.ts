@@ -1,13 +1,36 @@
 import type { Structure } from '../structure/structure.js';
-import { assembleSheet, closedRows } from './assemble-sheet.js';
-import type { SheetRow } from './close-brackets.js';
-import { runSheetTask } from './run-sheet-task.js';
-import { type SheetRequest, planEigenproblems, planSearches } from './sheet-plan.js';
+import { allRows, assembleSheet } from './assemble-sheet.js';
+import { type SheetRow, nameOf } from './close-brackets.js';
+import { type SheetFinding, runSheetTask } from './run-sheet-task.js';
+import { type SheetRequest, type SheetTask, planEigenproblems, planLifts, planSearches } from './sheet-plan.js';
 
-/** Plan, run and assemble a sheet on this thread. */
+/** What is proved before any search: findings, and the searches that could still improve a row. */
+export interface ProvedPart {
+  readonly findings: SheetFinding[];
+  readonly searches: SheetTask[];
+}
+
+/**
+ * Solve the eigenvalue problems of a sheet, then look for a lift where cge is still open. With `searchClosed` searches are
+ * planned even for rows that are closed by then.
+ */
+export function proveSheet(
+  structure: Structure,
+  request: SheetRequest,
+  { stop, searchClosed = false }: { readonly stop?: () => boolean; readonly searchClosed?: boolean } = {},
+): ProvedPart {
+  const run = (task: SheetTask): SheetFinding => runSheetTask(structure, task, stop);
+  const findings = planEigenproblems(structure, request).map(run);
+  if (!searchClosed) findings.push(...planLifts(structure, request, allRows(structure, request, findings)).map(run));
+  const closed = searchClosed ? [] : allRows(structure, request, findings).filter((row) => row.closed);
+  return { findings, searches: planSearches(structure, request, new Set(closed.map((row) => nameOf(row.key)))) };
+}
+
+/** Prove, search and assemble a sheet on this thread. */
 export function computeSheet(structure: Structure, request: SheetRequest, stop?: () => boolean): SheetRow[] {
-  const first = planEigenproblems(structure, request).map((task) => runSheetTask(structure, task, stop));
-  const searches = planSearches(structure, request, closedRows(structure, request, first));
-  const rest = searches.map((task) => runSheetTask(structure, task, stop));
-  return assembleSheet(structure, request, [...first, ...rest]);
+  const { findings, searches } = proveSheet(structure, request, stop ? { stop } : {});
+  return assembleSheet(structure, request, [
+    ...findings,
+    ...searches.map((task) => runSheetTask(structure, task, stop)),
+  ]);
 }

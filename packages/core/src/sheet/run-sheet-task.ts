@@ -12,13 +12,14 @@ import { type LanczosGap, gapMatrixFree } from '../constants/gap-matrix-free.js'
 import { type GradientEstimateResult, runGradientEstimateStart } from '../constants/gradient-estimate.js';
 import { runLsiStart } from '../constants/lsi.js';
 import { runMlsiStart } from '../constants/mlsi.js';
+import { type LadderResult, climbLadder } from '../lift/lift-ladder.js';
 import { type MetricModel, metricModel } from '../metric/metric-model.js';
 import type { MeanName } from '../metric/operator-mean.js';
 import { seededRandom } from '../random.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import type { FixedPoints } from '../structure/fixed-points.js';
 import type { Structure } from '../structure/structure.js';
-import { DENSE_LIMIT } from '../tolerances.js';
+import { DENSE_LIMIT, SHEET_LIFT_SIDE, SHEET_LIFT_UNKNOWNS } from '../tolerances.js';
 import type { End } from './bracket.js';
 import type { SheetTask } from './sheet-plan.js';
 
@@ -27,6 +28,7 @@ export type SheetFinding =
   | { readonly kind: 'gap'; readonly dense: Gap | null; readonly lanczos: LanczosGap | null }
   | { readonly kind: 'bakry-emery'; readonly complete: CompleteBakryEmery; readonly plain: BakryEmeryResult | null }
   | { readonly kind: 'comparison'; readonly end: End | null }
+  | { readonly kind: 'lift'; readonly end: End | null; readonly reason: LadderResult['reason'] | 'none' }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly result: GradientEstimateResult }
   | { readonly kind: 'entropy'; readonly result: EntropyResult | null };
 
@@ -39,6 +41,8 @@ export function runSheetTask(structure: Structure, task: SheetTask, stop?: () =>
       return bakryEmeryFinding(structure, task.seed, task.withPlain, stop);
     case 'comparison':
       return { kind: 'comparison', end: clsiByComparison(structure) };
+    case 'lift':
+      return liftFinding(structure, task.target, stop);
     case 'ge': {
       const problem = { model: metricOf(structure), mean: task.mean, covariant: task.covariant };
       return { kind: 'ge', mean: task.mean, result: runGradientEstimateStart(problem, task.start, stop) };
@@ -79,4 +83,23 @@ function bakryEmeryFinding(
   const random = seededRandom(`be ${seed}`);
   const plain = withPlain ? bakryEmery(structure.generator, forms, { random, ...(stop ? { stop } : {}) }) : null;
   return { kind: 'bakry-emery', complete, plain };
+}
+
+function liftFinding(structure: Structure, target: number, stop?: () => boolean): SheetFinding {
+  const canonical = structure.canonical as CanonicalForm;
+  const result = climbLadder(structure.generator, canonical, {
+    target,
+    maxSide: SHEET_LIFT_SIDE,
+    maxUnknowns: SHEET_LIFT_UNKNOWNS,
+    ...(stop ? { stop } : {}),
+  });
+  if (!result) return { kind: 'lift', end: null, reason: 'none' };
+  const { lift, rung, reason } = result;
+  const end: End = {
+    value: lift.curvature,
+    grade: 'certified',
+    by: `lift of ∂ (${rung.ansatz} form, ${rung.basis === 'given' ? 'jumps as given' : `${rung.basis} jumps`})`,
+    margin: Math.abs(lift.optimum - lift.curvature),
+  };
+  return { kind: 'lift', end, reason };
 }

@@ -10,7 +10,7 @@ import { seededRandom } from '../random.js';
 import type { Structure } from '../structure/structure.js';
 import { DENSE_LIMIT, FORM_LIMIT, SEARCH_LIMIT } from '../tolerances.js';
 import type { ConstantId } from './bracket.js';
-import { nameOf } from './close-brackets.js';
+import { type SheetRow, nameOf } from './close-brackets.js';
 import type { RowKey } from './order-relations.js';
 import { hasGradientMetric } from './hypotheses.js';
 
@@ -30,6 +30,7 @@ export type SheetTask =
   | { readonly kind: 'gap' }
   | { readonly kind: 'bakry-emery'; readonly seed: number | string; readonly withPlain: boolean }
   | { readonly kind: 'comparison' }
+  | { readonly kind: 'lift'; readonly target: number }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly covariant: boolean; readonly start: SearchStart }
   | { readonly kind: 'entropy'; readonly start: EntropyStart };
 
@@ -59,6 +60,16 @@ export function planEigenproblems(structure: Structure, request: SheetRequest): 
   }
   if (wants('clsi', 'mlsi', 't2', 'diameter', 'mixing')) tasks.push({ kind: 'comparison' });
   return tasks;
+}
+
+/** The lift that bounds cge, and with it most constants, from below: worth its programme only where cge is still open. */
+export function planLifts(structure: Structure, request: SheetRequest, rows: readonly SheetRow[]): SheetTask[] {
+  const wants = wanting(request);
+  const cge = rows.find(({ key }) => key.id === 'cge');
+  const target = cge?.upper?.value ?? Infinity;
+  const useful = wants('cge', 'ge', 'mlsi', 'clsi', 't2', 'diameter', 'mixing') && hasGradientMetric(structure);
+  if (!useful || cge?.closed || target === -Infinity || structure.algebra.dimension > FORM_LIMIT) return [];
+  return [{ kind: 'lift', target }];
 }
 
 /** The searches of a sheet, cut into independent starts; `closed` names the rows that need none. */

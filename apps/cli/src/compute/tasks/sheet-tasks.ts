@@ -1,13 +1,12 @@
 import {
   assembleSheet,
-  closedRows,
   definitionOf,
   convert,
-  planEigenproblems,
-  planSearches,
+  proveSheet,
   runSheetTask,
   type ConventionName,
   type End,
+  type ProvedPart,
   type SheetFinding,
   type SheetRequest,
   type SheetRow,
@@ -25,17 +24,12 @@ interface SheetInput {
   readonly request: SheetRequest;
 }
 
-/** The eigenvalue problems of a sheet, and the searches that are still worth making. */
-export function sheetEigenproblems(
+/** What is proved of a sheet before any search, and the searches that are still worth making. */
+export function sheetProofs(
   { source, request, searchClosed }: SheetInput & { readonly searchClosed: boolean },
   context: TaskContext,
-) {
-  const { structure } = markovModel(source);
-  const findings = planEigenproblems(structure, request).map((task) =>
-    runSheetTask(structure, task, context.isOutOfTime),
-  );
-  const closed = searchClosed ? new Set<string>() : closedRows(structure, request, findings);
-  return { findings, searches: planSearches(structure, request, closed) };
+): ProvedPart {
+  return proveSheet(markovModel(source).structure, request, { stop: context.isOutOfTime, searchClosed });
 }
 
 /** One search of a sheet. */
