@@ -35,7 +35,11 @@ export function blockEigen(algebra: BlockAlgebra, a: ComplexMatrix): BlockEigen 
 }
 
 function isDiagonal(a: ComplexMatrix): boolean {
-  return a.re.every((x, k) => Math.floor(k / a.cols) === k % a.cols || (x === 0 && a.im[k] === 0));
+  const { rows: n, re, im } = a;
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) if (i !== j && (re[i * n + j] !== 0 || im[i * n + j] !== 0)) return false;
+  }
+  return true;
 }
 
 function submatrix(a: ComplexMatrix, start: number, size: number): ComplexMatrix {

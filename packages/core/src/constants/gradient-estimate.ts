@@ -1,9 +1,10 @@
+import { blockEigen } from '../algebra/block-eigen.js';
 import { ThalwegError } from '../errors.js';
 import { curvaturePencil, type CurvaturePencil } from '../metric/curvature-pencil.js';
 import type { MetricModel } from '../metric/metric-model.js';
 import { type MeanName, operatorMean } from '../metric/operator-mean.js';
 import { quotientAt, quotientError } from '../metric/quotient.js';
-import { type StateFrame, blockEigen, fromFrame } from '../metric/state-frame.js';
+import { type StateFrame, fromFrame } from '../metric/state-frame.js';
 import { type StateParameters, diagonalParameters, hermitianParameters } from '../metric/state-parameters.js';
 import { minimiseBfgs } from '../search/bfgs.js';
 import { minimiseScalar } from '../search/brent.js';

@@ -1,7 +1,8 @@
 import { type BlockAlgebra, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
+import { blockEigen } from '../algebra/block-eigen.js';
 import { type ComplexMatrix, multiply, multiplyAdjointSecond, zeros } from '../linalg/complex-matrix.js';
 import { logarithmicMean } from './logarithmic-mean.js';
-import { type StateFrame, blockEigen, fromFrame } from './state-frame.js';
+import { type StateFrame, fromFrame } from './state-frame.js';
 
 /**
  * Unconstrained parameters of the faithful states: ρ = exp(H)/Tr exp(H), H in the algebra. With `diagonal` only the

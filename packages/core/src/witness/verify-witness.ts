@@ -3,7 +3,7 @@ import { mlsiAt } from '../constants/mlsi-quotient.js';
 import { ThalwegError } from '../errors.js';
 import { operatorMean } from '../metric/operator-mean.js';
 import { quotientAt, quotientError } from '../metric/quotient.js';
-import { blockEigen } from '../metric/state-frame.js';
+import { blockEigen } from '../algebra/block-eigen.js';
 import { densityMatrix } from '../generator/declared-state.js';
 import type { Witness } from '../sheet/bracket.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
