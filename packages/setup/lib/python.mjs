@@ -2,15 +2,15 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { capture, run } from './run.mjs';
 
 const PYTHON = '/usr/bin/python3';
-const DEBIAN_PACKAGES = ['python3-numpy', 'python3-scipy'];
+const DEBIAN_PACKAGES = ['python3-numpy', 'python3-scipy', 'python3-cvxopt'];
 const APT_ATTEMPTS = 5;
 const APT_PAUSE_MILLISECONDS = 5000;
 
-/** Makes sure that the reference programs of tests/reference can run; installs NumPy and SciPy where it may. */
+/** Makes sure that the reference programs of tests/reference can run; installs them where it may. */
 export async function ensurePython() {
   if (await hasLibraries()) return;
   const wanted = DEBIAN_PACKAGES.join(' ');
-  const advice = `The tests compare with NumPy and SciPy for ${PYTHON}. Install them: apt-get install ${wanted}`;
+  const advice = `The tests compare with NumPy, SciPy and CVXOPT for ${PYTHON}. Install them: apt-get install ${wanted}`;
   if (process.getuid?.() !== 0) throw new Error(`${advice} (needs root; you are not root), then run npm test again.`);
   process.stderr.write(`Installing ${wanted} (apt-get).\n`);
   await apt(['update']);
@@ -19,7 +19,7 @@ export async function ensurePython() {
 }
 
 async function hasLibraries() {
-  const probe = await capture(PYTHON, ['-c', 'import numpy, scipy']).catch(() => ({ code: 127 }));
+  const probe = await capture(PYTHON, ['-c', 'import numpy, scipy, cvxopt']).catch(() => ({ code: 127 }));
   return probe.code === 0;
 }
 
@@ -31,7 +31,7 @@ async function apt(args) {
       env,
       stdio: ['ignore', 2, 2],
     }).catch((error) => {
-      if (error.code === 'ENOENT') throw new Error('apt-get is not here: install NumPy and SciPy for ' + PYTHON + '.');
+      if (error.code === 'ENOENT') throw new Error('apt-get is not here: install NumPy, SciPy and CVXOPT for ' + PYTHON + '.');
       throw error;
     });
     if (code === 0) return;
