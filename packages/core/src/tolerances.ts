@@ -224,7 +224,7 @@ export const DENSE_RATE = 6;
 export const DOT_RATE = 0.7;
 
 /** Pivots of the Schur complement below x times the diagonal entry they came from are rounding. */
-export const SCHUR_PIVOT = 1e-16;
+export const SCHUR_PIVOT = 0.01;
 
 /** Conjugate-gradient steps on a Schur complement after its Cholesky solve. */
 export const SCHUR_REFINEMENTS = 20;
@@ -235,7 +235,10 @@ export const SCHUR_RESIDUAL = 1e-14;
 /** Lanczos steps for one step length at most. */
 export const LANCZOS_STEPS = 60;
 
-/** Relative residual of a Ritz value that is good enough for a step length. */
+/** Lanczos steps before a Ritz value is believed to belong to the smallest eigenvalue. */
+export const LANCZOS_FEWEST = 12;
+
+/** Residual of a Ritz value, relative to the larger of it and 1, that is good enough for a step length. */
 export const LANCZOS_ACCURACY = 0.01;
 
 /** Norm of C − S − Aᵀy, in units of ‖C‖, from which S is recomputed from y. */
@@ -278,7 +281,7 @@ export const SIMD_FLOOR = 1000;
 export const SIMD_CHUNK = 512;
 
 /** Relative raises of the diagonal of a Schur complement, tried in turn until its Cholesky factor loses no pivot. */
-export const SCHUR_SHIFTS = [0, 1e-15, 1e-14, 1e-13, 1e-12, 1e-11] as const;
+export const SCHUR_SHIFTS = [0, 0.1, 1, 10, 100, 1000] as const;
 
 /** Most real unknowns of a lift that a sheet will try by itself. */
 export const SHEET_LIFT_UNKNOWNS = 250;

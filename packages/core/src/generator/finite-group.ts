@@ -18,7 +18,7 @@ export interface FiniteGroup {
 }
 
 /** Largest order: the left regular representation is decomposed as dense matrices of this side. */
-export const MAX_GROUP_ORDER = 128;
+const MAX_GROUP_ORDER = 128;
 
 const POINTER = '/generator/group';
 

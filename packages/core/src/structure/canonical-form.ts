@@ -4,11 +4,11 @@ import type { Generator } from '../generator/generator.js';
 import { MAX_DENSE_DIMENSION } from '../generator/superoperator-parts.js';
 import type { ComplexMatrix } from '../linalg/complex-matrix.js';
 import { type SparseMatrix, denseFromSparse } from '../linalg/sparse-matrix.js';
-import { SYMMETRY_TOLERANCE } from '../tolerances.js';
 import { canonicalResidual } from './canonical-residual.js';
 import { extractJumps } from './extract-jumps.js';
 import { givenJumps } from './given-jumps.js';
 import type { ReferenceState } from './reference-state.js';
+import { symmetryTolerance } from './symmetry.js';
 
 /** One V_j of the canonical form. */
 export interface CanonicalJump {
@@ -40,15 +40,16 @@ export interface CanonicalForm {
 /**
  * The canonical form of a GNS-symmetric generator. Jumps that are already canonical are kept with their labels, split into
  * corners; otherwise the jumps are extracted by diagonalising the Kossakowski matrix frequency by frequency.
- * Throws `not-symmetric` when the rebuilt generator misses L by more than SYMMETRY_TOLERANCE, `not-completely-positive` when an
+ * Throws `not-symmetric` when the rebuilt generator misses L by more than `symmetryTolerance`, `not-completely-positive` when an
  * eigenvalue is negative, `too-large` when jumps would have to be extracted on an algebra too large for it.
  */
 export function canonicalForm(g: Generator, state: ReferenceState): CanonicalForm {
   const { algebra } = g;
+  const tolerance = symmetryTolerance(state);
   const given = givenJumps(g, state);
   if (given) {
     const residual = canonicalResidual(g, state, given);
-    if (residual <= SYMMETRY_TOLERANCE) return { algebra, state, jumps: given.map(withMatrix), residual };
+    if (residual <= tolerance) return { algebra, state, jumps: given.map(withMatrix), residual };
   }
   if (algebra.dimension > MAX_DENSE_DIMENSION) {
     throw new ThalwegError(
@@ -59,7 +60,7 @@ export function canonicalForm(g: Generator, state: ReferenceState): CanonicalFor
   }
   const extracted = extractJumps(g, state);
   const residual = canonicalResidual(g, state, extracted);
-  if (residual <= SYMMETRY_TOLERANCE) return { algebra, state, jumps: extracted.map(withMatrix), residual };
+  if (residual <= tolerance) return { algebra, state, jumps: extracted.map(withMatrix), residual };
   throw new ThalwegError(
     'not-symmetric',
     `expected a GNS-symmetric generator, got one that its canonical jumps rebuild only to ${residual.toPrecision(3)} of its size`,

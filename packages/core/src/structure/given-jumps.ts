@@ -25,6 +25,7 @@ import type { StoredJump } from './canonical-form.js';
 import { basisOf } from './generator-in-basis.js';
 import { modularFrequencies } from './modular-frequencies.js';
 import type { ReferenceState } from './reference-state.js';
+import { stateError } from './state-accuracy.js';
 
 /** The part of a given jump R in one corner. */
 interface Corner {
@@ -47,6 +48,7 @@ export function givenJumps(g: Generator, state: ReferenceState): StoredJump[] | 
   const corners: Corner[] = [];
   const frequencies = modularFrequencies(state);
   const u = basisOf(state);
+  const tolerance = GIVEN_JUMP_TOLERANCE + stateError(state);
   const total = g.jumps.reduce((top, { matrix }) => Math.max(top, sparseNorm(matrix)), 0);
   for (const [m, { label, matrix }] of g.jumps.entries()) {
     const pieces = splitIntoCorners(g.algebra, matrix).filter((c) => sparseNorm(c.r) > GIVEN_JUMP_TOLERANCE * total);
@@ -56,13 +58,13 @@ export function givenJumps(g: Generator, state: ReferenceState): StoredJump[] | 
       const norm = sparseNorm(r);
       // A multiple of a block's identity does nothing inside the block.
       if (norm <= GIVEN_JUMP_TOLERANCE * sparseNorm(whole)) continue;
-      const frequency = frequencyOf(r, norm, frequencies, u);
+      const frequency = frequencyOf(r, frequencies, u, tolerance * norm);
       if (frequency === null) return null;
       const name = label ?? `V${m + 1}`;
       corners.push({ label: pieces.length > 1 ? `${name}[${a},${b}]` : name, r, a, b, norm, frequency });
     }
   }
-  return areOrthogonal(corners) ? paired(corners) : null;
+  return areOrthogonal(corners) ? paired(corners, tolerance) : null;
 }
 
 function splitIntoCorners(algebra: BlockAlgebra, r: SparseMatrix): { r: SparseMatrix; a: number; b: number }[] {
@@ -115,7 +117,12 @@ function withoutTrace(r: SparseMatrix, algebra: BlockAlgebra, block: number): Sp
 }
 
 /** The one frequency that R has in the eigenbasis of σ, or null. */
-function frequencyOf(r: SparseMatrix, norm: number, frequencies: Float64Array, u: ComplexMatrix | null): number | null {
+function frequencyOf(
+  r: SparseMatrix,
+  frequencies: Float64Array,
+  u: ComplexMatrix | null,
+  tolerance: number,
+): number | null {
   const entries = u ? entriesOf(sparseFromDense(rotated(r, u))) : entriesOf(r);
   const weights = new Map<number, number>();
   for (const [i, j, x, y] of entries) {
@@ -131,7 +138,7 @@ function frequencyOf(r: SparseMatrix, norm: number, frequencies: Float64Array, u
     best = w;
     most = weight;
   }
-  return Math.sqrt(Math.max(0, sum - most)) <= GIVEN_JUMP_TOLERANCE * norm ? best : null;
+  return Math.sqrt(Math.max(0, sum - most)) <= tolerance ? best : null;
 }
 
 function rotated(r: SparseMatrix, u: ComplexMatrix): ComplexMatrix {
@@ -171,8 +178,8 @@ function overlap(r: SparseMatrix, s: SparseMatrix): number {
 }
 
 /** V_j with partners: V_m = V_j* exactly wherever R_m = e^{iθ}e^{ω_j/2}R_j*. Null when some jump has none. */
-function paired(corners: readonly Corner[]): StoredJump[] | null {
-  const partners = findPartners(corners);
+function paired(corners: readonly Corner[], tolerance: number): StoredJump[] | null {
+  const partners = findPartners(corners, tolerance);
   if (!partners) return null;
   const jumps: StoredJump[] = [];
   corners.forEach(({ label, r, norm, frequency }, j) => {
@@ -194,7 +201,7 @@ function paired(corners: readonly Corner[]): StoredJump[] | null {
   return jumps;
 }
 
-function findPartners(corners: readonly Corner[]): Int32Array | null {
+function findPartners(corners: readonly Corner[], tolerance: number): Int32Array | null {
   const partners = new Int32Array(corners.length).fill(-1);
   const places = new Map<string, number[]>();
   corners.forEach(({ a, b }, j) => places.set(`${a} ${b}`, [...(places.get(`${a} ${b}`) ?? []), j]));
@@ -207,7 +214,7 @@ function findPartners(corners: readonly Corner[]): Int32Array | null {
       if (partners[k] >= 0) return false;
       const other = corners[k].norm;
       const matches = Math.abs(overlap(wanted, corners[k].r) - norm * other) <= GIVEN_JUMP_TOLERANCE * norm * other;
-      return matches && Math.abs(other - expected) <= GIVEN_JUMP_TOLERANCE * expected;
+      return matches && Math.abs(other - expected) <= tolerance * expected;
     });
     if (m === undefined) return null;
     partners[j] = m;

@@ -1,6 +1,7 @@
 import { clusterMiddles } from '../generator/cluster-values.js';
-import { EPSILON, FREQUENCY_TOLERANCE, STATE_ERROR } from '../tolerances.js';
+import { FREQUENCY_TOLERANCE } from '../tolerances.js';
 import type { ReferenceState } from './reference-state.js';
+import { stateError } from './state-accuracy.js';
 
 /**
  * The frequency ω_kl = log(σ_l/σ_k) of each matrix unit e_kl of the eigenbasis of σ, N×N row-major: σ e_kl σ⁻¹ = e^{−ω_kl} e_kl.
@@ -14,12 +15,11 @@ export function modularFrequencies(state: ReferenceState): Float64Array {
   return clusterMiddles(w, frequencyTolerance(state));
 }
 
-/** Distance within which frequencies of this state are one: a computed σ has absolute errors near 2⁻⁵², so its small eigenvalues have large relative ones. */
-export function frequencyTolerance(state: ReferenceState): number {
+/** Distance within which frequencies of this state are one. */
+function frequencyTolerance(state: ReferenceState): number {
   const width = state.values.reduce((top, x) => Math.max(top, x), 0) / state.smallest;
-  const rounding = state.exact ? 0 : (STATE_ERROR * EPSILON) / state.smallest;
-  return FREQUENCY_TOLERANCE * (1 + Math.log(width)) + Math.min(rounding, MAX_ROUNDING);
+  return FREQUENCY_TOLERANCE * (1 + Math.log(width)) + FREQUENCY_ERRORS * stateError(state);
 }
 
-/** However inaccurate σ is, frequencies this far apart are told apart. */
-const MAX_ROUNDING = 1e-4;
+/** Two logarithms, and a few neighbours chained. */
+const FREQUENCY_ERRORS = 8;

@@ -1,6 +1,7 @@
 import type { BlockAlgebra } from '../algebra/block-algebra.js';
 import { ThalwegError } from '../errors.js';
 import type { Generator } from '../generator/generator.js';
+import { SYMMETRY_TOLERANCE } from '../tolerances.js';
 import { type CanonicalForm, canonicalForm } from './canonical-form.js';
 import { type FixedPoints, fixedPoints } from './fixed-points.js';
 import { type MarkovChecks, isMarkov, markovChecks } from './positivity.js';
@@ -37,7 +38,12 @@ export function analyse(generator: Generator): Structure {
 
 const structures = new WeakMap<Generator, Structure>();
 
-const NO_SYMMETRY: Symmetry = { kind: 'none', residuals: { tracial: 1, gns: 1, kms: 1 }, probed: false };
+const NO_SYMMETRY: Symmetry = {
+  kind: 'none',
+  residuals: { tracial: 1, gns: 1, kms: 1 },
+  tolerance: SYMMETRY_TOLERANCE,
+  probed: false,
+};
 
 function analyseAnew(generator: Generator): Structure {
   const { algebra } = generator;
@@ -64,6 +70,13 @@ function analyseAnew(generator: Generator): Structure {
   const symmetry = symmetryOf(generator, state);
   if (symmetry.probed)
     notes.push('The algebra is large: its symmetry was tested on random observables, not on all of it.');
+  const accepted =
+    symmetry.kind === 'GNS' ? symmetry.residuals.gns : symmetry.kind === 'KMS' ? symmetry.residuals.kms : 0;
+  if (accepted > SYMMETRY_TOLERANCE) {
+    notes.push(
+      `The reference state is not exactly diagonal and has eigenvalues down to ${state.smallest.toPrecision(3)}: the symmetry is accepted with a residual of ${accepted.toPrecision(3)}.`,
+    );
+  }
   const fixed = fixedPoints(generator, state, symmetry);
   if (!fixed) notes.push('The fixed points were not found: the algebra is too large for linear algebra on it.');
   const canonical = canonicalOrNull(generator, state, symmetry, notes);

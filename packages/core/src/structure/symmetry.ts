@@ -17,14 +17,17 @@ import { seededRandom } from '../random.js';
 import { INPUT_TOLERANCE, SYMMETRY_TOLERANCE } from '../tolerances.js';
 import { generatorInStateBasis } from './generator-in-basis.js';
 import type { ReferenceState } from './reference-state.js';
+import { stateError } from './state-accuracy.js';
 
 export type SymmetryKind = 'tracial' | 'GNS' | 'KMS' | 'none';
 
 export interface Symmetry {
-  /** The strongest symmetry within SYMMETRY_TOLERANCE; tracial asks for σ ∝ 1, every one but `none` for a faithful σ. */
+  /** The strongest symmetry within the tolerance; tracial asks for σ ∝ 1, every one but `none` for a faithful σ. */
   readonly kind: SymmetryKind;
   /** ‖L − L^adjoint‖_F/‖L‖_F in the orthonormalised product of each kind: Tr A*B, Tr σA*B, Tr σ^{1/2}A*σ^{1/2}B. */
   readonly residuals: { readonly tracial: number; readonly gns: number; readonly kms: number };
+  /** SYMMETRY_TOLERANCE, plus what the accuracy of an inexact σ with small eigenvalues makes of it. */
+  readonly tolerance: number;
   /** True when random observables were used instead of the whole algebra, because it is large. */
   readonly probed: boolean;
 }
@@ -33,16 +36,22 @@ export interface Symmetry {
 export function symmetryOf(g: Generator, state: ReferenceState): Symmetry {
   const probed = g.algebra.dimension > MAX_DENSE_DIMENSION;
   const residuals = probed ? probedResiduals(g, state) : exactResiduals(generatorInStateBasis(g, state), state);
-  return { kind: kindOf(residuals, state), residuals, probed };
+  const tolerance = symmetryTolerance(state);
+  return { kind: kindOf(residuals, state, tolerance), residuals, tolerance, probed };
 }
 
-function kindOf(residuals: Symmetry['residuals'], state: ReferenceState): SymmetryKind {
+/** Residual up to which a symmetry for this state is accepted. */
+export function symmetryTolerance(state: ReferenceState): number {
+  return SYMMETRY_TOLERANCE + stateError(state);
+}
+
+function kindOf(residuals: Symmetry['residuals'], state: ReferenceState, tolerance: number): SymmetryKind {
   if (!state.faithful) return 'none';
   const mixed = 1 / state.values.length;
   const flat = state.values.every((x) => Math.abs(x - mixed) <= INPUT_TOLERANCE * mixed);
   if (flat && residuals.tracial <= SYMMETRY_TOLERANCE) return 'tracial';
-  if (residuals.gns <= SYMMETRY_TOLERANCE) return 'GNS';
-  return residuals.kms <= SYMMETRY_TOLERANCE ? 'KMS' : 'none';
+  if (residuals.gns <= tolerance) return 'GNS';
+  return residuals.kms <= tolerance ? 'KMS' : 'none';
 }
 
 /** In the eigenbasis of σ, <e_kk',X> is σ_k' X_kk' (GNS), √(σ_kσ_k') X_kk' (KMS), X_kk' (trace). */

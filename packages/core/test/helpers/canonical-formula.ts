@@ -17,7 +17,7 @@ interface Term {
 }
 
 /** Σ_j e^{−ω/2} V*[A,V] + e^{ω/2} [V,A]V*, summed as it is written in Carlen & Maas (2017), not as the library does. */
-export function canonicalFormula(algebra: BlockAlgebra, terms: readonly Term[], a: ComplexMatrix): ComplexMatrix {
+function canonicalFormula(algebra: BlockAlgebra, terms: readonly Term[], a: ComplexMatrix): ComplexMatrix {
   const out = zeros(algebra.size);
   for (const { matrix: v, frequency } of terms) {
     const w = adjoint(v);

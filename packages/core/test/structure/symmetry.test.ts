@@ -5,13 +5,24 @@ import type { Generator } from '../../src/generator/generator.js';
 import { lindbladGenerator } from '../../src/generator/lindblad-generator.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
 import { expectationGenerator } from '../../src/generator/expectation-generator.js';
-import { localDepolarising, pauliString, thermalQubit } from '../../src/families/index.js';
+import { localDepolarising, pauliString, thermalQubit, truncatedOscillator } from '../../src/families/index.js';
 import { tensorGenerator } from '../../src/generator/tensor-generator.js';
-import { type ComplexMatrix, diagonal, fromRows, innerProduct, multiply } from '../../src/linalg/complex-matrix.js';
+import {
+  type ComplexMatrix,
+  diagonal,
+  fromRows,
+  innerProduct,
+  multiply,
+  multiplyAdjointFirst,
+} from '../../src/linalg/complex-matrix.js';
 import { hermitianPower } from '../../src/linalg/matrix-function.js';
+import { denseFromSparse, sparseFromDense } from '../../src/linalg/sparse-matrix.js';
+import { seededRandom } from '../../src/random.js';
 import { referenceState } from '../../src/structure/reference-state.js';
+import { analyse } from '../../src/structure/structure.js';
 import { symmetryOf } from '../../src/structure/symmetry.js';
-import { expectBelow } from '../linalg/support/expect-close.js';
+import { randomUnitary } from '../linalg/support/inputs.js';
+import { expectBelow, expectClose } from '../linalg/support/expect-close.js';
 import { kmsQubit } from '../helpers/kms-qubit.js';
 
 /** Largest |Tr σ^{1−s} L(A)* σ^s B − Tr σ^{1−s} A* σ^s L(B)| over a basis: the definition, written out. */
@@ -75,6 +86,24 @@ describe('symmetryOf', () => {
     expect(symmetryOf(turning, referenceState(turning)).kind).toBe('none');
     const decay = lindbladGenerator({ algebra: blockAlgebra([2]), jumps: [{ matrix: fromRows([[0, 1], [0, 0]]) }] }); // prettier-ignore
     expect(symmetryOf(decay, referenceState(decay)).kind).toBe('none');
+  });
+
+  it('allows for what small weights in a rotated basis lose, and says so', () => {
+    for (const levels of [6, 12]) {
+      const ladder = truncatedOscillator({ levels, beta: 2.2 });
+      const u = randomUnitary(seededRandom(levels), levels);
+      const rotate = (a: ComplexMatrix) => multiplyAdjointFirst(u, multiply(a, u));
+      const jumps = ladder.jumps.map(({ label, matrix }) => ({
+        label,
+        matrix: sparseFromDense(rotate(denseFromSparse(matrix))),
+      }));
+      const { symmetry, canonical, notes } = analyse({ ...ladder, jumps, declaredState: null });
+      expect(symmetry.kind, `${levels} levels`).toBe('GNS');
+      expect(canonical?.jumps.map((jump) => jump.label)).toEqual(['a', 'a*']);
+      expectClose(canonical?.jumps[0].frequency ?? NaN, -2.2, 1e-5, `frequency with ${levels} levels`);
+      if (levels === 6) expect(notes).toEqual([]);
+      else expect(notes.join()).toMatch(/eigenvalues down to 2\.75e-11: the symmetry is accepted with a residual of/);
+    }
   });
 
   it('probes large algebras, and finds the same there', () => {
