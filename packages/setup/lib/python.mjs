@@ -19,7 +19,7 @@ export async function ensurePython() {
 }
 
 async function hasLibraries() {
-  const probe = await capture(PYTHON, ['-c', 'import numpy, scipy, cvxopt']).catch(() => ({ code: 127 }));
+  const probe = await capture(PYTHON, ['-c', 'import numpy.linalg, scipy.linalg, cvxopt']).catch(() => ({ code: 127 }));
   return probe.code === 0;
 }
 
