@@ -25,6 +25,18 @@ function twoPointCurvature(p: number, q: number): number {
   return (p + q) / 2 + minimiseScalar(excess, -1 + 1e-12, 1 - 1e-12, 1e-12).value;
 }
 
+/**
+ * κ at the states ∝ (1,1,r,…,r), least over r: ½ + min_r (2+(n−2)M²/r)(2+(n−2)r)/(2n(2+(n−2)M)), M = (1−r)/(−log r).
+ * Derived here by hand for L = Tr/n − id; equal to every search made with another program for n = 2..5.
+ */
+function depolarisingCurvature(n: number): number {
+  const at = (r: number): number => {
+    const m = Math.abs(r - 1) < 1e-9 ? 1 : (1 - r) / -Math.log(r);
+    return 0.5 + ((2 + ((n - 2) * m * m) / r) * (2 + (n - 2) * r)) / (2 * n * (2 + (n - 2) * m));
+  };
+  return minimiseScalar(at, 1e-6, 1, 1e-12).value;
+}
+
 describe('ge against published and derived values', () => {
   const pairs = Array.from({ length: 20 }, (_, k) => [0.2 + 0.15 * k, 0.1 + ((7 * k) % 20) * 0.21] as const);
 
