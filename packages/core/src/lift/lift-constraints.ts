@@ -123,7 +123,7 @@ function equationsOf(
   derivatives: readonly ComplexMatrix[],
 ): Equation[] {
   const size = rhs.re.length;
-  const columns: Map<number, { re: Float64Array; im: Float64Array }> = new Map();
+  const columns = new Map<number, { re: Float64Array; im: Float64Array }>();
   for (const { unknown, term, re, im } of terms) {
     if (derivatives[term.from].re.every((x) => x === 0) && derivatives[term.from].im.every((x) => x === 0)) continue;
     const image = termImage(model, term, derivatives[term.from]);
