@@ -28,6 +28,9 @@ const WITH_MEANS: readonly RowKey[] = [
 /** How much two runs of a search may differ, relative. */
 const SEARCH = 1e-8;
 
+/** The search for clsi on M ⊗ M_k is dear beyond a qubit. */
+const WITHOUT_CLSI = FULL_SHEET.filter(({ id }) => id !== 'clsi');
+
 /** Powers of the unit of time: rates 1, a length −½, a time −1. */
 const POWERS: Partial<Record<ConstantId, number>> = { diameter: -0.5, mixing: -1 };
 
@@ -47,7 +50,7 @@ const qubit = balanced([2], 'q1');
 const MODELS: [string, JumpModel, readonly RowKey[]][] = [
   ['three Pauli jumps', pauli, WITH_MEANS],
   ['a qubit with frequencies', qubit, WITH_MEANS],
-  ['a block of two and a point', balanced([2, 1], 'm2'), FULL_SHEET],
+  ['a block of two and a point', balanced([2, 1], 'm2'), WITHOUT_CLSI],
 ];
 
 describe.each(MODELS)('the constants of %s do not change under', (name, model, rows) => {
@@ -80,7 +83,7 @@ describe('the constants of a chain', () => {
   it('do not change when its points are permuted', () => {
     const order = [2, 0, 3, 1];
     const permuted = order.map((i) => order.map((j) => rates[i][j]));
-    expectSame(sheetOf(ratesGenerator(rates), FULL_SHEET), sheetOf(ratesGenerator(permuted), FULL_SHEET));
+    expectSame(sheetOf(ratesGenerator(rates), WITHOUT_CLSI), sheetOf(ratesGenerator(permuted), WITHOUT_CLSI));
   });
 });
 
