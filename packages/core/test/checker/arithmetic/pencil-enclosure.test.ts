@@ -3,12 +3,15 @@ import { complexPointMatrix, widenComplexMatrix } from '../../../src/checker/ari
 import { encloseSmallestPencil } from '../../../src/checker/arithmetic/pencil-enclosure.js';
 import {
   type ComplexMatrix,
+  add,
   adjoint,
   diagonal,
   fromEntries,
+  hermitianPart,
   identity,
   multiply,
 } from '../../../src/linalg/complex-matrix.js';
+import { hermitianPencil } from '../../../src/linalg/hermitian-pencil.js';
 import { seededRandom } from '../../../src/random.js';
 import { randomHermitian, withSpectrum } from './known-spectra.js';
 
@@ -44,6 +47,17 @@ describe('smallest generalised eigenvalue', () => {
     expect(found.hi).toBeGreaterThanOrEqual(exact.hi);
     expect(exact.hi - exact.lo).toBeLessThan(1e-12);
     expect(found.hi - found.lo).toBeLessThan(1e-4);
+    const noise = () => hermitianPart(fromEntries(4, 4, () => [1e-7 * (2 * random.uniform() - 1), 0]));
+    let [lowest, highest] = [Infinity, -Infinity];
+    for (let trial = 0; trial < 50; trial++) {
+      const value = hermitianPencil(add(a, noise()), add(b, noise())).values[0];
+      [lowest, highest] = [Math.min(lowest, value), Math.max(highest, value)];
+    }
+    expect(lowest).toBeGreaterThan(found.lo);
+    expect(highest).toBeLessThan(found.hi);
+    // The members really move the eigenvalue, both ways.
+    expect(exact.lo - lowest).toBeGreaterThan(1e-9);
+    expect(highest - exact.hi).toBeGreaterThan(1e-9);
   });
 
   test('a matrix B that is not definite is refused', () => {

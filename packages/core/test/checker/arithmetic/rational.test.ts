@@ -118,6 +118,9 @@ describe('nearest rational with a bounded denominator', () => {
     expect(printRational(nearestRational(-7 / 12, 1000n))).toBe('-7/12');
     expect(printRational(nearestRational(Math.PI, 1000n))).toBe('355/113');
     expect(printRational(nearestRational(0.25, 1n))).toBe('0');
+    // A tie goes to the smaller denominator.
+    expect(printRational(nearestRational(0.25, 2n))).toBe('0');
+    expect(printRational(nearestRational(0.75, 2n))).toBe('1');
     expect(nearestRational(3, 1n)).toEqual(rational(3n));
     expect(() => nearestRational(1, 0n)).toThrow('at least 1');
   });
