@@ -14,6 +14,8 @@ const qubit = join(models, 'thermal-qubit.json');
 const HEAD_START_MILLISECONDS = 3000;
 /** At once, on a busy machine. */
 const ANSWER_MILLISECONDS = 2000;
+/** Above the start of Node.js, which itself takes some 40 ms. */
+const VERSION_MILLISECONDS = 100;
 let folder: string;
 /** A model whose search takes minutes. */
 let heavy: string;
@@ -40,6 +42,21 @@ afterAll(() => {
 
 test('--version', async () => {
   expect(await thalweg(['--version'])).toMatchObject({ exitCode: 0, stdout: '0.1.0\n', stderr: '' });
+});
+
+test('--version costs little more than starting Node.js', async () => {
+  const best = async (run: () => Promise<unknown>) => {
+    const times: number[] = [];
+    for (let k = 0; k < 7; k += 1) {
+      const begin = performance.now();
+      await run();
+      times.push(performance.now() - begin);
+    }
+    return Math.min(...times);
+  };
+  const bare = await best(() => execa(process.execPath, ['-e', '0'], { env: plainEnvironment, extendEnv: false }));
+  const version = await best(() => startThalweg(['--version']));
+  expect(version - bare, `${version} ms against ${bare} ms`).toBeLessThan(VERSION_MILLISECONDS);
 });
 
 test('a usage error leaves stdout empty and ends with 64', async () => {

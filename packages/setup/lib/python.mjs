@@ -31,7 +31,8 @@ async function apt(args) {
       env,
       stdio: ['ignore', 2, 2],
     }).catch((error) => {
-      if (error.code === 'ENOENT') throw new Error('apt-get is not here: install NumPy, SciPy and CVXOPT for ' + PYTHON + '.');
+      if (error.code === 'ENOENT')
+        throw new Error('apt-get is not here: install NumPy, SciPy and CVXOPT for ' + PYTHON + '.');
       throw error;
     });
     if (code === 0) return;

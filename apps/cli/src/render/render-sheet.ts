@@ -34,7 +34,7 @@ export function renderSheet(sheet: SheetDocument, layout: Layout): string {
 }
 
 /** Shown under every sheet. */
-export const LIMITS =
+const LIMITS =
   'Bounds hold for the model as given, not for a device. certified: floating point with its error margin inside the digits shown. observed: the lowest value a search met, an upper end only.';
 
 function titleLines(sheet: SheetDocument, { width, colours }: Layout): string[] {

@@ -24,7 +24,7 @@ export interface ComputedSheet {
 }
 
 /** ε of `mixing` on a sheet, trace norm. */
-export const MIXING_EPSILON = 0.01;
+const MIXING_EPSILON = 0.01;
 
 /** Computes a sheet on the pool: eigenvalue problems first, then the searches still needed, spread over the threads. */
 export async function computeSheet(job: SheetJob, session: Session): Promise<ComputedSheet> {

@@ -9,7 +9,7 @@ import { decideClaim } from './decide.js';
 import type { CheckPlan } from './plan.js';
 
 /** Rounding allowed to a claim, relative to the larger of 1 and its bound; printed with the answer. */
-export const CLAIM_SLACK = 1e-9;
+const CLAIM_SLACK = 1e-9;
 
 /** Decides claims about a model: all hold, one is refuted, or undecided. */
 export async function checkEffect(plan: CheckPlan, session: Session): Promise<ExitStatus> {
