@@ -12,9 +12,9 @@ interface Shown {
 }
 
 /**
- * Decimal text of a bracket's ends with no more digits than it supports. Closed: the digits on which both ends agree,
- * ten significant ones at most. Open: seven significant digits, the lower end rounded down and the upper one up, save that an
- * end within its own margin of a shorter decimal is shown as that decimal.
+ * Decimal text of a bracket's ends with no more digits than it supports. Closed: one number, its last digit worth no less
+ * than the width, ten significant ones at most. Open: seven significant digits, the lower end rounded down and the upper one
+ * up, save that an end within twice its margin (value ± margin is what was computed) of a shorter decimal is shown as that.
  */
 export function bracketText(
   lower: Bracket['lower'] | Shown,
@@ -46,11 +46,9 @@ const OPEN_DIGITS = 7;
 function commonText(low: number, high: number): string {
   const middle = (low + high) / 2;
   const most = decimalsFor(middle, CLOSED_DIGITS);
-  const width = high - low;
-  let decimals = width > 0 ? Math.min(most, Math.floor(-Math.log10(width))) : most;
-  decimals = Math.max(0, decimals);
-  while (decimals > 0 && low.toFixed(decimals) !== high.toFixed(decimals) && width > 10 ** -decimals) decimals--;
-  return signed(middle.toFixed(decimals));
+  const width = Math.abs(high - low);
+  const decimals = width > 0 ? Math.min(most, Math.floor(-Math.log10(width))) : most;
+  return signed(middle.toFixed(Math.max(0, decimals)));
 }
 
 function outwardText(

@@ -31,7 +31,7 @@ export function closeBrackets(
     for (const relation of relations) changed = apply(table, relation) || changed;
   }
   const out = rows.map((row) => withClosed(table.get(nameOf(row.key)) as SheetRow, scale));
-  out.forEach(assertOrder);
+  for (const row of out) assertOrder(row, scale);
   return out;
 }
 
@@ -77,11 +77,12 @@ function withClosed(row: SheetRow, scale: number): SheetRow {
   return { ...row, closed: upper.value - lower.value <= CLOSED_TOLERANCE * size };
 }
 
-function assertOrder({ key, lower, upper }: SheetRow): void {
+function assertOrder({ key, lower, upper }: SheetRow, scale: number): void {
   if (!lower || !upper) return;
-  const slack =
-    ORDER_TOLERANCE * (Math.abs(lower.value) + Math.abs(upper.value) + 1) + (lower.margin ?? 0) + (upper.margin ?? 0);
-  if (lower.value === upper.value || lower.value <= upper.value + slack) return;
+  const size = Math.abs(lower.value) + Math.abs(upper.value);
+  const floor = Number.isFinite(scale) ? scale : 0;
+  const slack = ORDER_TOLERANCE * (size + floor) + (lower.margin ?? 0) + (upper.margin ?? 0);
+  if (lower.value <= upper.value || (size < Infinity && lower.value <= upper.value + slack)) return;
   throw new ThalwegError(
     'internal',
     `expected the ends of ${nameOf(key)} in order, got ${lower.value} (${lower.by}) above ${upper.value} (${upper.by}); one of the two is wrong: please report the model`,

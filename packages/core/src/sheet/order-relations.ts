@@ -60,7 +60,8 @@ export function betterUpper(a: End | null, b: End | null): End | null {
 
 function prefer(a: End | null, b: End | null, beats: (x: number, y: number) => boolean): End | null {
   if (!a || !b) return a ?? b;
-  const close = Math.abs(a.value - b.value) <= SAME_VALUE * (Math.abs(a.value) + Math.abs(b.value));
+  const size = Math.abs(a.value) + Math.abs(b.value);
+  const close = a.value === b.value || (size < Infinity && Math.abs(a.value - b.value) <= SAME_VALUE * size);
   if (close && a.grade !== b.grade) return GRADE_ORDER.indexOf(a.grade) < GRADE_ORDER.indexOf(b.grade) ? a : b;
   return beats(b.value, a.value) && !close ? b : a;
 }
