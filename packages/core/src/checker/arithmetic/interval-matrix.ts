@@ -88,7 +88,7 @@ export function scaleIntervalMatrix(a: IntervalMatrix, factor: Interval): Interv
 }
 
 /** Every entry widened by ±radius, radius ≥ 0. */
-export function widenIntervalMatrix(a: IntervalMatrix, radius: number): IntervalMatrix {
+function widenIntervalMatrix(a: IntervalMatrix, radius: number): IntervalMatrix {
   return { ...a, lo: a.lo.map((x) => subDown(x, radius)), hi: a.hi.map((x) => addUp(x, radius)) };
 }
 
@@ -102,7 +102,7 @@ export function negateIntervalMatrix(a: IntervalMatrix): IntervalMatrix {
 }
 
 /** Apply an operation on real interval matrices to the real and the imaginary parts. */
-export function byParts(
+function byParts(
   f: (a: IntervalMatrix, b: IntervalMatrix) => IntervalMatrix,
   a: ComplexIntervalMatrix,
   b: ComplexIntervalMatrix,

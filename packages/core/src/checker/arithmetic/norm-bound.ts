@@ -66,7 +66,7 @@ export function nonNegativeNormBound(matrix: Float64Array, n: number): number {
 const WEIGHT_FLOOR = 1e-6;
 
 /** Upper bounds of the moduli of the entries. */
-export function modulusBounds(a: ComplexIntervalMatrix): Float64Array {
+function modulusBounds(a: ComplexIntervalMatrix): Float64Array {
   return Float64Array.from(a.re.lo, (_, k) =>
     modulusUp(Math.max(-a.re.lo[k], a.re.hi[k]), Math.max(-a.im.lo[k], a.im.hi[k])),
   );

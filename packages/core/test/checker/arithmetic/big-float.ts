@@ -4,7 +4,7 @@ export interface BigFloat {
   readonly e: number;
 }
 
-export const PRECISION = 700;
+const PRECISION = 700;
 
 export function big(x: number): BigFloat {
   if (x === 0) return { m: 0n, e: 0 };
@@ -18,7 +18,7 @@ export function big(x: number): BigFloat {
   return { m: BigInt(y), e };
 }
 
-export function cut({ m, e }: BigFloat): BigFloat {
+function cut({ m, e }: BigFloat): BigFloat {
   const extra = bitLength(m) - PRECISION;
   return extra > 0 ? { m: m >> BigInt(extra), e: e + extra } : { m, e };
 }
@@ -108,7 +108,7 @@ export function toNumber({ m, e }: BigFloat): number {
   return x;
 }
 
-export function bitLength(m: bigint): number {
+function bitLength(m: bigint): number {
   const text = (m < 0n ? -m : m).toString(16);
   return text === '0' ? 0 : 4 * (text.length - 1) + (32 - Math.clz32(parseInt(text[0], 16)));
 }

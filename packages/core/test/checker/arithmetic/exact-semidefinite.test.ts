@@ -193,6 +193,18 @@ describe('exact LDL*', () => {
     expect(verdict.semidefinite && verdict.pivots.every((d) => d.denominator === 1n)).toBe(true);
   });
 
+  test('products and adjoints obey (AB)* = B*A* and distribute over sums, exactly', () => {
+    const random = seededRandom('matrix laws');
+    const [a, b, c] = [randomMatrix(random, 3, 4), randomMatrix(random, 4, 2), randomMatrix(random, 4, 2)];
+    const ab = g.multiplyGaussianMatrix(a, b);
+    const swapped = g.multiplyGaussianMatrix(g.adjointGaussianMatrix(b), g.adjointGaussianMatrix(a));
+    expect(g.equalGaussianMatrix(g.adjointGaussianMatrix(ab), swapped)).toBe(true);
+    const difference = g.multiplyGaussianMatrix(a, g.subtractGaussianMatrix(b, c));
+    const termwise = g.subtractGaussianMatrix(ab, g.multiplyGaussianMatrix(a, c));
+    expect(g.equalGaussianMatrix(difference, termwise)).toBe(true);
+    expect(g.equalGaussianMatrix(ab, g.multiplyGaussianMatrix(a, c))).toBe(false);
+  });
+
   test('a matrix that is not Hermitian is refused', () => {
     expect(() =>
       decideSemidefinite(

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { complexPointMatrix, entryAt } from '../../../src/checker/arithmetic/interval-matrix.js';
+import { contains } from '../../../src/checker/arithmetic/interval.js';
 import { rotated, unitaryFrame } from '../../../src/checker/arithmetic/unitary-frame.js';
 import {
   type ComplexMatrix,
@@ -43,6 +44,18 @@ describe('rotation into an exactly unitary frame', () => {
     for (const factor of [1, 1e-150, 1e200]) expectRotated(u, scale(randomMatrix(n), factor));
     const graded = fromEntries(n, n, () => [Math.exp(40 * random.normal()), -Math.exp(40 * random.normal())]);
     expectRotated(u, graded);
+  });
+
+  test('the identity stays within reach of itself, though no double of u is exact', () => {
+    for (const n of [2, 3, 6]) {
+      const found = rotated(unitaryFrame(randomUnitary(n)), identity(n));
+      for (let k = 0; k < n * n; k++) {
+        const entry = entryAt(found, Math.floor(k / n), k % n);
+        const target = k % (n + 1) === 0 ? 1 : 0;
+        expect(contains(entry.re, target) && contains(entry.im, 0), `${k}: ${entry.re.lo} ${entry.re.hi}`).toBe(true);
+        expect(entry.re.hi - entry.re.lo).toBeLessThan(target === 1 ? 1e-15 : 1e-70);
+      }
+    }
   });
 
   test('the distance from u to Ũ is bounded', () => {
