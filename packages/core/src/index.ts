@@ -47,3 +47,5 @@ export { canonicalForm, type CanonicalForm, type CanonicalJump } from './structu
 export * from './families/index.js';
 export * from './constants/index.js';
 export { verifyWitness, type WitnessCheck } from './witness/verify-witness.js';
+export * from './lift/index.js';
+export * from './programme/index.js';

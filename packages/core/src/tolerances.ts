@@ -83,7 +83,7 @@ export const ALGEBRA_TOLERANCE = 1e-8;
 export const SEMIDEFINITE_ROUNDING = 8;
 
 /** Eigenvalues of a density matrix within x·N of zero count as zero where supports are compared. */
-export const SUPPORT_TOLERANCE = EPSILON;
+export const SUPPORT_TOLERANCE = 1 * EPSILON;
 
 /** D(ρ‖E†ρ) below which a state is too near its projection for I/D: by the metric form the relative error is 2⁻⁵²/√D. */
 export const ENTROPY_FLOOR = 1e-10;
@@ -192,6 +192,9 @@ export const MATRIX_ACTION_LIMIT = 256;
 /** Relative gap and infeasibilities at which a semidefinite programme is solved. */
 export const PROGRAMME_TOLERANCE = 1e-9;
 
+/** The same for a point with a margin, which is pushed as far as rounding lets it. */
+export const PROGRAMME_FINEST = 1e-13;
+
 /** The same, with which a programme whose progress ends in rounding still counts as solved. */
 export const PROGRAMME_ACCEPTED = 1e-7;
 
@@ -199,7 +202,7 @@ export const PROGRAMME_ACCEPTED = 1e-7;
 export const PROGRAMME_ITERATIONS = 100;
 
 /** Iterations without a better point after which an interior-point method has stalled. */
-export const PROGRAMME_PATIENCE = 12;
+export const PROGRAMME_PATIENCE = 8;
 
 /** A direction of infeasibility may miss its cone or its equations by this, relative to its gain. */
 export const INFEASIBILITY_TOLERANCE = 1e-8;
@@ -223,7 +226,7 @@ export const DENSE_COEFFICIENT = 0.3;
 export const DENSE_RATE = 6;
 export const DOT_RATE = 0.7;
 
-/** Pivots of the Schur complement below x times the diagonal entry they came from are rounding. */
+/** Pivots of the Schur complement below x times the rounding of their diagonal entry are lost. */
 export const SCHUR_PIVOT = 0.01;
 
 /** Conjugate-gradient steps on a Schur complement after its Cholesky solve. */
@@ -280,8 +283,12 @@ export const SIMD_FLOOR = 1000;
 /** Inner indices that one call of the WebAssembly product covers: both operands of a tile then fit the first-level cache. */
 export const SIMD_CHUNK = 512;
 
-/** Relative raises of the diagonal of a Schur complement, tried in turn until its Cholesky factor loses no pivot. */
+/** Raises of the diagonal of a Schur complement, in units of its rounding, tried in turn until no pivot is lost. */
 export const SCHUR_SHIFTS = [0, 0.1, 1, 10, 100, 1000] as const;
 
 /** Most real unknowns of a lift that a sheet will try by itself. */
 export const SHEET_LIFT_UNKNOWNS = 250;
+
+/** Largest side of a form, and most real unknowns of its programme, that `certify` will try. */
+export const CERTIFY_LIFT_SIDE = 600;
+export const CERTIFY_LIFT_UNKNOWNS = 1500;

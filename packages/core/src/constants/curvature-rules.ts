@@ -49,7 +49,7 @@ export function curvatureRule(structure: Structure): End | null {
 }
 
 /** The end with the largest value. */
-export function best(ends: readonly (End | null)[]): End | null {
+function best(ends: readonly (End | null)[]): End | null {
   let found: End | null = null;
   for (const end of ends) if (end && (!found || end.value > found.value)) found = end;
   return found;

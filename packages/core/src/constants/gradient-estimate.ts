@@ -51,7 +51,7 @@ export function runGradientEstimateStart(
  * The witness at a state, as it can be written down: the state is rounded to a matrix of doubles first, its eigenvalues
  * raised to the floor among STATE_FLOORS that gives the lowest value, then κ is taken there and re-evaluated plainly.
  */
-export function witnessAt(
+function witnessAt(
   problem: GradientEstimateProblem,
   frame: StateFrame,
   pencil = curvaturePencil(problem.model, problem.mean),
@@ -122,7 +122,7 @@ function raisedFrame(frame: StateFrame, floor: number): StateFrame {
   return { lambda: raised.map((x) => x / sum), u: frame.u };
 }
 
-export function parametersOf(problem: GradientEstimateProblem): StateParameters {
+function parametersOf(problem: GradientEstimateProblem): StateParameters {
   const { algebra, commutative } = problem.model;
   return commutative || problem.covariant ? diagonalParameters(algebra.size) : hermitianParameters(algebra);
 }

@@ -111,7 +111,7 @@ function derivative({ jumps, algebra }: LiftModel, j: number, a: ComplexMatrix):
 }
 
 /** R_left* ξ R_right in corners; −1 for the identity. */
-export function termImage({ jumps }: LiftModel, { left, right }: LiftTerm, xi: ComplexMatrix): ComplexMatrix {
+function termImage({ jumps }: LiftModel, { left, right }: LiftTerm, xi: ComplexMatrix): ComplexMatrix {
   const once = left < 0 ? xi : multiplyAdjointFirst(jumps[left].corner, xi);
   return right < 0 ? once : multiply(once, jumps[right].corner);
 }

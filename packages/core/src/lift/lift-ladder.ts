@@ -29,7 +29,7 @@ export interface LadderOptions extends LiftOptions {
 }
 
 /** From cheap to rich. */
-export const LIFT_LADDER: readonly LiftRung[] = [
+const LIFT_LADDER: readonly LiftRung[] = [
   { basis: 'given', ansatz: 'diagonal' },
   { basis: 'pauli', ansatz: 'diagonal' },
   { basis: 'weyl', ansatz: 'diagonal' },

@@ -8,7 +8,7 @@ import type { LiftUnknown } from './lift-orbits.js';
 type Triplet = [number, number, number, number];
 
 /** Where components ξ_k and pairs R_m*ξ_j stand among the rows of the left form. */
-export interface FormLayout {
+interface FormLayout {
   readonly size: number;
   /** First row of component k. */
   readonly component: readonly number[];
@@ -17,7 +17,7 @@ export interface FormLayout {
 }
 
 /** Rows for the components, then for the pairs that some β or γ term uses. */
-export function formLayout({ jumps, algebra }: LiftModel, unknowns: readonly LiftUnknown[]): FormLayout {
+function formLayout({ jumps, algebra }: LiftModel, unknowns: readonly LiftUnknown[]): FormLayout {
   let size = 0;
   const component = jumps.map(({ col }) => {
     const start = size;

@@ -15,8 +15,6 @@ export interface LiftTerm {
 /** How rich a lift is tried: `diagonal` keeps R_m*ξ_kR_m and multiples of ξ_k, `full` everything that fits. */
 export type LiftAnsatz = 'diagonal' | 'full';
 
-export const LIFT_ANSATZE: readonly LiftAnsatz[] = ['diagonal', 'full'];
-
 /** A conserved charge of each jump: a term must not change it. */
 export type Charges = readonly Float64Array[];
 

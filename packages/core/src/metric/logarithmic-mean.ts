@@ -12,7 +12,7 @@ export function logarithmicMean(x: number, y: number): number {
 }
 
 /** ∂Λ(x,y)/∂x = φ₂(−log(x/y)) with φ₂(z) = (e^z−1−z)/z². */
-export function logarithmicMeanSlope(x: number, y: number): number {
+function logarithmicMeanSlope(x: number, y: number): number {
   const t = (x - y) / (x + y);
   const r = Math.abs(t) > SERIES_ARTANH ? Math.log(x / y) : 2 * Math.atanh(t);
   return phi2(-r);
