@@ -19,38 +19,43 @@ import time
 os.environ.setdefault("OPENBLAS_NUM_THREADS", "1")
 
 try:
-    import cvxopt
     from cvxopt import matrix, solvers, spmatrix
 except ImportError:
     sys.exit("semidefinite.py needs CVXOPT: apt-get install python3-cvxopt")
 
-TOLERANCE = 1e-10
+# Tried in turn: the finest may be out of reach.
+TOLERANCES = (1e-10, 1e-9, 1e-8)
 ITERATIONS = 100
 
 
-def solve(programme, tolerance=TOLERANCE):
-    """Solves one programme; infinite values are given as null."""
+def solve(programme, tolerances=TOLERANCES):
+    """Solves one programme to the finest tolerance that CVXOPT reaches; infinite values are given as null."""
+    for tolerance in tolerances:
+        answer = solve_once(programme, tolerance)
+        if answer["status"] != "unknown" and not answer["status"].startswith("failed"):
+            break
+    return answer
+
+
+def solve_once(programme, tolerance):
     c = matrix([-float(b) for b in programme["objective"]])
-    linear, semidefinite = constraints(programme["blocks"], len(c))
-    g_linear, h_linear = linear
-    options = {"abstol": tolerance, "reltol": tolerance, "feastol": tolerance, "maxiters": ITERATIONS}
+    (g_linear, h_linear), semidefinite = constraints(programme["blocks"], len(c))
     solvers.options.clear()
-    solvers.options.update(show_progress=False, **options)
+    solvers.options.update(show_progress=False, maxiters=ITERATIONS)
+    solvers.options.update(abstol=tolerance, reltol=tolerance, feastol=tolerance)
     begin = time.process_time()
     try:
         answer = solvers.sdp(c, Gl=g_linear, hl=h_linear, Gs=[g for g, _ in semidefinite], hs=[h for _, h in semidefinite])
     except (ValueError, ArithmeticError) as error:
-        return {"status": f"failed: {error}", "primal": None, "dual": None, "y": None, "seconds": 0}
-    seconds = time.process_time() - begin
-    negated = [None if value is None else -value for value in (answer["dual objective"], answer["primal objective"])]
-    y = None if answer["x"] is None else list(answer["x"])
+        return {"status": f"failed: {error}"}
     return {
         "status": answer["status"],
-        "primal": negated[0],
-        "dual": negated[1],
-        "y": y,
+        # CVXOPT minimises -b.y: its dual objective is minus our primal one.
+        "primal": None if answer["dual objective"] is None else -answer["dual objective"],
+        "dual": None if answer["primal objective"] is None else -answer["primal objective"],
+        "y": None if answer["x"] is None else list(answer["x"]),
         "iterations": answer.get("iterations"),
-        "seconds": seconds,
+        "seconds": time.process_time() - begin,
     }
 
 

@@ -83,7 +83,7 @@ export const ALGEBRA_TOLERANCE = 1e-8;
 export const SEMIDEFINITE_ROUNDING = 8;
 
 /** Eigenvalues of a density matrix within x·N of zero count as zero where supports are compared. */
-export const SUPPORT_TOLERANCE = 1 * EPSILON;
+export const SUPPORT_TOLERANCE = 2 ** -52;
 
 /** D(ρ‖E†ρ) below which a state is too near its projection for I/D: by the metric form the relative error is 2⁻⁵²/√D. */
 export const ENTROPY_FLOOR = 1e-10;

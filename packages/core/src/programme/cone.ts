@@ -19,6 +19,8 @@ export interface Cone {
   factorDual(s: Float64Array, inverse: Float64Array): boolean;
   /** Adds <A_i, x A_j s⁻¹> to one of the places (i, j), (j, i) of the m × m matrix. */
   addSchur(x: Float64Array, inverse: Float64Array, matrix: Float64Array, order: number): void;
+  /** Adds to level_i the size from which on rounding in `addSchur` may hide the entry (i, i), in units of 2⁻⁵². */
+  addRounding(x: Float64Array, inverse: Float64Array, level: Float64Array): void;
   /** out ← Hermitian part of (x d + e f) s⁻¹, the second product left out when `e` is null. */
   scaledProduct(
     x: Float64Array,

@@ -7,3 +7,4 @@ export {
   type ProgrammeStatus,
 } from './programme-solution.js';
 export { solveProgramme } from './solve-programme.js';
+export { deepestFeasible, strictlyFeasible, type BackOffOptions, type FeasiblePoint } from './deepest-feasible.js';

@@ -1,6 +1,6 @@
 import { DUAL_DRIFT, PROGRAMME_PATIENCE, PROGRESS, SHORTEST_STEP, SMALL_BARRIER } from '../tolerances.js';
 import { type ConicForm } from './conic-form.js';
-import { infeasibilityRay, type Ray } from './infeasibility.js';
+import { searchInfeasibility, type Ray } from './infeasibility.js';
 import { dot, measure, type Measures } from './measures.js';
 import { NewtonSystem, type NewtonStep } from './newton-system.js';
 import { type ProgrammeIterate, type ResolvedOptions } from './programme-options.js';
@@ -20,7 +20,7 @@ export interface InteriorPointResult {
 
 /**
  * Primal–dual interior-point method from an infeasible start, with Mehrotra's predictor and corrector and the rules of
- * SDPT3 for step and centring (Toh, Todd & Tütüncü 1999). `gramFactor` is the Cholesky factor of the <A_i, A_j>.
+ * Toh, Todd & Tütüncü (Optim. Methods Softw. 11 (1999)) for step and centring. `gramFactor` is the Cholesky factor of the <A_i, A_j>.
  */
 export function interiorPoint(
   form: ConicForm,
@@ -37,23 +37,26 @@ export function interiorPoint(
     y: newton.y.slice(),
     s: newton.s.slice(),
     measures: measure(newton),
+    defect: Infinity,
     age: 0,
   };
-  let ray: Ray | null = null;
   let status: ProgrammeStatus;
+  let ray: Ray | null = null;
   let iteration = 0;
   for (; ; iteration++) {
     refreshDual(newton);
     const measures = measure(newton);
-    keepBest(best, newton, measures);
+    const search = searchInfeasibility(newton, measures, gramFactor);
+    keepBest(best, newton, measures, search.defect);
     options.onIterate(record(iteration, newton, measures, corrector));
     if (measures.worst <= options.tolerance) status = 'optimal';
     else if (options.stop()) status = 'stopped';
-    else if ((ray = infeasibilityRay(newton, measures, gramFactor))) status = `${ray.kind}-infeasible`;
+    else if (search.ray) status = `${search.ray.kind}-infeasible`;
     else if (best.age >= PROGRAMME_PATIENCE) status = 'stalled';
     else if (iteration >= options.maxIterations) status = 'iterations';
     else if (advance(newton, measures, predictor, corrector)) continue;
     else status = 'stalled';
+    if (status.endsWith('infeasible')) ({ ray } = search);
     break;
   }
   const { measures } = best;
@@ -86,11 +89,18 @@ interface Best {
   readonly y: Float64Array;
   readonly s: Float64Array;
   measures: Measures;
+  /** Least defect of a ray so far. */
+  defect: number;
+  /** Iterations since the measures or the defect last improved. */
   age: number;
 }
 
-function keepBest(best: Best, newton: NewtonSystem, measures: Measures): void {
+function keepBest(best: Best, newton: NewtonSystem, measures: Measures, defect: number): void {
   best.age++;
+  if (defect < PROGRESS * best.defect) {
+    best.defect = defect;
+    best.age = 0;
+  }
   if (measures.worst >= best.measures.worst) return;
   if (measures.worst < PROGRESS * best.measures.worst) best.age = 0;
   best.measures = measures;
@@ -151,6 +161,6 @@ function record(iteration: number, newton: NewtonSystem, measures: Measures, ste
     dualInfeasibility: measures.dualInfeasibility,
     primalStep: step.primalLength,
     dualStep: step.dualLength,
-    skippedRows: newton.system.skippedRows,
+    schurShift: newton.system.shift,
   };
 }

@@ -69,6 +69,19 @@ export class LinearCone implements Cone {
     }
   }
 
+  addRounding(x: Float64Array, inverse: Float64Array, level: Float64Array): void {
+    const { count, start, coordinate, value, unknown } = this.#rows;
+    const primal = this.#section(x);
+    const dual = this.#section(inverse);
+    // Every term is positive: nothing cancels.
+    for (let t = 0; t < count; t++) {
+      for (let e = start[t]; e < start[t + 1]; e++) {
+        const p = coordinate[e];
+        level[unknown[t]] += value[e] * value[e] * primal[p] * dual[p];
+      }
+    }
+  }
+
   scaledProduct(
     x: Float64Array,
     d: Float64Array,

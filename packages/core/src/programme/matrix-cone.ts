@@ -90,6 +90,16 @@ export class MatrixCone implements Cone {
     this.#assembly.add(this.#section(x), this.#section(inverse), matrix, order);
   }
 
+  addRounding(x: Float64Array, inverse: Float64Array, level: Float64Array): void {
+    const { count, unknown, start, value } = this.#pattern.rows;
+    const size = largest(this.#section(x)) * largest(this.#section(inverse));
+    for (let t = 0; t < count; t++) {
+      let square = 0;
+      for (let e = start[t]; e < start[t + 1]; e++) square += value[e] * value[e];
+      level[unknown[t]] += size * square;
+    }
+  }
+
   scaledProduct(
     x: Float64Array,
     d: Float64Array,
@@ -136,4 +146,10 @@ function hermitianPartInto(out: Float64Array, a: Float64Array, n: number, comple
       }
     }
   }
+}
+
+function largest(a: Float64Array): number {
+  let top = 0;
+  for (let k = 0; k < a.length; k++) top = Math.max(top, Math.abs(a[k]));
+  return top;
 }

@@ -61,7 +61,7 @@ export class NewtonSystem {
     return { x: flat(), s: flat(), y: new Float64Array(this.y.length), primalLength: 0, dualLength: 0 };
   }
 
-  /** X = ξ_k 1, y = 0, S = η_k 1, sized as in SDPT3 (Toh, Todd & Tütüncü, Optim. Methods Softw. 11 (1999)). */
+  /** X = ξ_k 1, y = 0, S = η_k 1, sized after Toh, Todd & Tütüncü (Optim. Methods Softw. 11 (1999)). */
   start(): void {
     const largest = this.form.objective.reduce((top, b) => Math.max(top, Math.abs(b)), 0);
     this.y.fill(0);
@@ -103,8 +103,13 @@ export class NewtonSystem {
   /** Factorises X, S and the Schur complement at the present point; false if that fails. */
   prepare(): boolean {
     if (!this.#cones.every((cone) => cone.factorPrimal(this.x) && cone.factorDual(this.s, this.#inverse))) return false;
-    this.system.matrix.fill(0);
-    for (const cone of this.#cones) cone.addSchur(this.x, this.#inverse, this.system.matrix, this.y.length);
+    const { matrix, rounding } = this.system;
+    matrix.fill(0);
+    rounding.fill(0);
+    for (const cone of this.#cones) {
+      cone.addSchur(this.x, this.#inverse, matrix, this.y.length);
+      cone.addRounding(this.x, this.#inverse, rounding);
+    }
     return this.system.factorise();
   }
 

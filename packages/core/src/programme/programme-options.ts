@@ -13,8 +13,8 @@ export interface ProgrammeIterate {
   /** Fractions of the Newton step that led here, 0 at the start. */
   readonly primalStep: number;
   readonly dualStep: number;
-  /** Rows skipped in the Cholesky factor of the last Schur complement. */
-  readonly skippedRows: number;
+  /** Raise of the last Schur complement's diagonal, in units of its rounding; 0 where none was needed. */
+  readonly schurShift: number;
 }
 
 export interface ProgrammeOptions {

@@ -10,7 +10,10 @@ import { type ComplexMatrix } from '../linalg/complex-matrix.js';
 export type ProgrammeStatus =
   'optimal' | 'primal-infeasible' | 'dual-infeasible' | 'stalled' | 'stopped' | 'iterations';
 
-/** −Σ_i y_i A_{k,i} ⪰ 0 with b·y = 1: then no X with <A_i, X> = b_i is positive. */
+/**
+ * −Σ_i y_i A_{k,i} ⪰ 0 with b·y = 1: then no X with <A_i, X> = b_i is positive. A direction that misses the cone by a
+ * defect up to 1e-8 (norms as in `gap`) is accepted; it excludes every X below the inverse of the defect in size.
+ */
 export interface PrimalInfeasibility {
   readonly kind: 'primal';
   readonly y: Float64Array;
@@ -18,7 +21,10 @@ export interface PrimalInfeasibility {
   readonly margin: number;
 }
 
-/** X_k ⪰ 0 with <A_i, X> = 0 and Σ <C_k, X_k> = −1: then no C − Σ y_i A_i is positive. */
+/**
+ * X_k ⪰ 0 with <A_i, X> = 0 and Σ <C_k, X_k> = −1: then no C − Σ y_i A_i is positive. Defects of the equations up to 1e-8
+ * are accepted likewise, and exclude every y below the inverse of the defect in size.
+ */
 export interface DualInfeasibility {
   readonly kind: 'dual';
   readonly x: readonly ComplexMatrix[];
@@ -34,17 +40,18 @@ export interface ProgrammeSolution {
   /** Positive semidefinite, one n × n matrix per block (diagonal blocks as diagonal matrices). */
   readonly x: readonly ComplexMatrix[];
   readonly s: readonly ComplexMatrix[];
-  /** Σ <C_k, X_k>. */
+  /** Σ <C_k, X_k>; like b·y meaningless where a programme is infeasible. */
   readonly primalObjective: number;
   /** b·y. */
   readonly dualObjective: number;
   /**
-   * max(|primal − dual|, <X, S>) / (|primal| + |dual| + ‖b̂‖‖C‖), where b̂_i = b_i/‖A_i‖; norms of zero vectors count as 1.
+   * max(|primal − dual|, <X, S>) / (|primal| + |dual| + ‖b̂‖‖C‖), where b̂_i = b_i/‖A_i‖, and a norm that vanishes counts
+   * as 1: unchanged when b, C or an A_i with its b_i are multiplied by numbers.
    */
   readonly gap: number;
-  /** ‖(<A_i, X> − b_i)/‖A_i‖‖ / ‖b̂‖ (1 + the larger of 1 and…): see `conic-form.ts`. */
+  /** ‖b̂ − (<A_i, X>/‖A_i‖)_i‖ / ‖b̂‖. */
   readonly primalInfeasibility: number;
-  /** ‖C − S − Σ y_i A_i‖ / ‖C‖. */
+  /** ‖C − S − Σ y_i A_i‖ / ‖C‖, Frobenius norms over all blocks; 0 once S has been computed from y. */
   readonly dualInfeasibility: number;
   readonly iterations: number;
   /** Unknowns whose coefficients depend linearly on those of earlier unknowns; they were kept at y_i = 0. */

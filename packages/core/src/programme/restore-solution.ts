@@ -1,10 +1,10 @@
 import { innerProduct, zeros, type ComplexMatrix } from '../linalg/complex-matrix.js';
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
-import { type SparseMatrix } from '../linalg/sparse-matrix.js';
 import { type ConicForm } from './conic-form.js';
 import { type Ray } from './infeasibility.js';
 import { type InteriorPointResult } from './interior-point.js';
 import { type Programme } from './programme.js';
+import { programmeDirection, sparseInnerProduct } from './programme-slack.js';
 import { type DualInfeasibility, type PrimalInfeasibility, type ProgrammeSolution } from './programme-solution.js';
 
 /** Undoes scaling, splitting and renumbering. `dependent` numbers unknowns of the programme. */
@@ -71,12 +71,10 @@ function restoreRay(programme: Programme, form: ConicForm, ray: Ray): PrimalInfe
 }
 
 /** Smallest eigenvalue of −Σ y_i A_{k,i} over the blocks, relative to the largest modulus; 0 if all vanish. */
-function directionMargin({ blocks }: Programme, y: Float64Array): number {
+function directionMargin(programme: Programme, y: Float64Array): number {
   let smallest = Infinity;
   let largest = 0;
-  for (const { size, coefficients } of blocks) {
-    const direction = zeros(size);
-    for (const { unknown, matrix } of coefficients) addSparse(direction, matrix, -y[unknown]);
+  for (const direction of programmeDirection(programme, y)) {
     for (const value of hermitianEigenvalues(direction)) {
       smallest = Math.min(smallest, value);
       largest = Math.max(largest, Math.abs(value));
@@ -89,29 +87,15 @@ function directionMargin({ blocks }: Programme, y: Float64Array): number {
 function equationResidual({ objective, blocks }: Programme, x: readonly ComplexMatrix[]): number {
   const values = new Float64Array(objective.length);
   const squares = new Float64Array(objective.length);
-  blocks.forEach(({ size, coefficients }, k) => {
+  blocks.forEach(({ coefficients }, k) => {
     for (const { unknown, matrix } of coefficients) {
-      const dense = addSparse(zeros(size), matrix, 1);
-      values[unknown] += innerProduct(dense, x[k]).re;
-      squares[unknown] += innerProduct(dense, dense).re;
+      values[unknown] += sparseInnerProduct(matrix, x[k]);
+      for (let e = 0; e < matrix.re.length; e++) squares[unknown] += matrix.re[e] ** 2 + matrix.im[e] ** 2;
     }
   });
-  const norm = Math.sqrt(x.reduce((sum, block) => sum + innerProduct(block, block).re, 0));
-  return (
-    values.reduce(
-      (top, value, i) => (squares[i] > 0 ? Math.max(top, Math.abs(value) / Math.sqrt(squares[i])) : top),
-      0,
-    ) / norm
-  );
-}
-
-function addSparse(target: ComplexMatrix, a: SparseMatrix, factor: number): ComplexMatrix {
-  for (let i = 0; i < a.rows; i++) {
-    for (let e = a.rowStart[i]; e < a.rowStart[i + 1]; e++) {
-      const q = i * target.cols + a.colIndex[e];
-      target.re[q] += factor * a.re[e];
-      target.im[q] += factor * a.im[e];
-    }
+  let worst = 0;
+  for (let i = 0; i < values.length; i++) {
+    if (squares[i] > 0) worst = Math.max(worst, Math.abs(values[i]) / Math.sqrt(squares[i]));
   }
-  return target;
+  return worst / Math.sqrt(x.reduce((sum, block) => sum + innerProduct(block, block).re, 0));
 }

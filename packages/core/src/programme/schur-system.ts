@@ -1,4 +1,4 @@
-import { SCHUR_PIVOT, SCHUR_REFINEMENTS, SCHUR_RESIDUAL } from '../tolerances.js';
+import { EPSILON, SCHUR_PIVOT, SCHUR_REFINEMENTS, SCHUR_RESIDUAL, SCHUR_SHIFTS } from '../tolerances.js';
 import { symmetrise } from './dependent-coefficients.js';
 import { choleskyFactor } from './kernels/cholesky-factor.js';
 import { solveLower, solveLowerAdjoint } from './kernels/triangular-solve.js';
@@ -10,10 +10,14 @@ import { solveLower, solveLowerAdjoint } from './kernels/triangular-solve.js';
 export class SchurSystem {
   /** Filled by the cones; each pair of entries in either place. */
   readonly matrix: Float64Array;
-  skippedRows = 0;
+  /** Filled by the cones: absolute size of rounding on the diagonal, in units of 2⁻⁵². */
+  readonly rounding: Float64Array;
+  /** Raise of the diagonal in the last factor, in units of its rounding. */
+  shift = 0;
   readonly #order: number;
   readonly #factor: Float64Array;
   readonly #floors: Float64Array;
+  readonly #diagonal: Float64Array;
   readonly #skipped: Uint8Array;
   readonly #residual: Float64Array;
   readonly #preconditioned: Float64Array;
@@ -26,7 +30,9 @@ export class SchurSystem {
     this.#order = order;
     this.matrix = new Float64Array(order * order);
     this.#factor = new Float64Array(order * order);
+    this.rounding = vector();
     this.#floors = vector();
+    this.#diagonal = vector();
     this.#skipped = new Uint8Array(order);
     this.#residual = vector();
     this.#preconditioned = vector();
@@ -35,17 +41,26 @@ export class SchurSystem {
     this.#candidate = vector();
   }
 
-  /** False if the matrix is not finite. */
+  /**
+   * False if the matrix is not finite. When pivots are lost to rounding, the diagonal is raised for the factor (not for the
+   * system) until none is: a direction in which the matrix is rounding is then damped, whatever its coordinates.
+   */
   factorise(): boolean {
     const m = this.#order;
     symmetrise(this.matrix, m);
-    for (let i = 0; i < m; i++) this.#floors[i] = SCHUR_PIVOT * this.matrix[i * m + i];
-    this.#skipped.fill(0);
-    const failed = choleskyFactor(this.matrix, m, false, this.#factor, {
-      floors: this.#floors,
-      skipped: this.#skipped,
-    });
-    this.skippedRows = this.#skipped.reduce((sum, flag) => sum + flag, 0);
+    for (let i = 0; i < m; i++) {
+      this.#diagonal[i] = this.matrix[i * m + i];
+      this.#floors[i] = SCHUR_PIVOT * EPSILON * this.rounding[i];
+    }
+    let failed = -1;
+    for (const shift of SCHUR_SHIFTS) {
+      for (let i = 0; i < m; i++) this.matrix[i * m + i] = this.#diagonal[i] + shift * EPSILON * this.rounding[i];
+      this.#skipped.fill(0);
+      failed = choleskyFactor(this.matrix, m, false, this.#factor, { floors: this.#floors, skipped: this.#skipped });
+      this.shift = shift;
+      if (failed >= 0 || !this.#skipped.includes(1)) break;
+    }
+    for (let i = 0; i < m; i++) this.matrix[i * m + i] = this.#diagonal[i];
     return failed < 0;
   }
 

@@ -1,10 +1,7 @@
 import { tridiagonalQL } from '../../linalg/tridiagonal-ql.js';
 import { seededRandom } from '../../random.js';
-import { LANCZOS_ACCURACY, LANCZOS_STEPS } from '../../tolerances.js';
+import { LANCZOS_ACCURACY, LANCZOS_FEWEST, LANCZOS_STEPS } from '../../tolerances.js';
 import { solveLower, solveLowerAdjoint } from './triangular-solve.js';
-
-/** A step along d of length 1 is safe when the smallest eigenvalue is above this; no need to know it better. */
-const FULL_STEP = -0.9;
 
 /**
  * Bounds the smallest eigenvalue of L⁻¹ D L⁻* from below by Lanczos iteration with full reorthogonalisation: Ritz value
@@ -63,12 +60,11 @@ export class LanczosBound {
       norm = Math.sqrt(dot(this.#image, this.#image, size));
       this.#beta[k] = norm;
       const final = k === this.#steps - 1;
-      if (!final && k > 8 && k % 4 > 0 && norm > 0) continue;
+      if (!final && (k < LANCZOS_FEWEST || k % 4 > 0) && norm > 0) continue;
       const { ritz, residual } = this.#ritz(k + 1);
       // With all n steps done the Ritz value is exact, whatever rounding left in the remainder.
       bound = final && this.#steps === this.#n ? ritz : ritz - residual;
-      const converged = residual <= LANCZOS_ACCURACY * Math.abs(ritz) || !(norm > 0);
-      if (converged || bound >= FULL_STEP) return bound;
+      if (residual <= LANCZOS_ACCURACY * Math.max(Math.abs(ritz), 1) || !(norm > 0)) return bound;
     }
     return bound;
   }

@@ -1,8 +1,8 @@
 import { spawnSync } from 'node:child_process';
 import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
-import { type SparseMatrix } from '../../src/linalg/sparse-matrix.js';
-import { type Programme } from '../../src/programme/programme.js';
+import { type SparseMatrix } from '../../../src/linalg/sparse-matrix.js';
+import { type Programme } from '../../../src/programme/programme.js';
 
 /** Debian's interpreter, which sees its python3-cvxopt. */
 const PYTHON = '/usr/bin/python3';
@@ -21,7 +21,7 @@ export interface ReferenceAnswer {
 /** Solves programmes with CVXOPT on one thread; throws with what to install when it is missing. */
 export function referenceSolutions(programmes: readonly Programme[]): ReferenceAnswer[] {
   if (!existsSync(PYTHON)) throw new Error(`expected ${PYTHON}; apt-get install python3 python3-cvxopt`);
-  const script = fileURLToPath(new URL('../../../../tests/reference/semidefinite.py', import.meta.url));
+  const script = fileURLToPath(new URL('../../../../../tests/reference/semidefinite.py', import.meta.url));
   const run = spawnSync(PYTHON, [script], {
     input: JSON.stringify(programmes.map(plainProgramme)),
     encoding: 'utf8',

@@ -1,12 +1,13 @@
-import { fromEntries, hermitianPart, type ComplexMatrix } from '../../src/linalg/complex-matrix.js';
-import { addScaledInto, innerProduct, multiplyAdjointSecond, zeros } from '../../src/linalg/complex-matrix.js';
-import { sparseFromDense } from '../../src/linalg/sparse-matrix.js';
-import { type Programme, type ProgrammeBlock } from '../../src/programme/programme.js';
-import { type Random } from '../../src/random.js';
+import { fromEntries, hermitianPart, type ComplexMatrix } from '../../../src/linalg/complex-matrix.js';
+import { addScaledInto, innerProduct, multiplyAdjointSecond, zeros } from '../../../src/linalg/complex-matrix.js';
+import { sparseFromDense } from '../../../src/linalg/sparse-matrix.js';
+import { type Programme, type ProgrammeBlock } from '../../../src/programme/programme.js';
+import { type Random } from '../../../src/random.js';
 
 export interface RandomShape {
   readonly sizes: readonly number[];
-  readonly kind: ProgrammeBlock['kind'];
+  /** Of all blocks, or of each. */
+  readonly kind: ProgrammeBlock['kind'] | readonly ProgrammeBlock['kind'][];
   readonly unknowns: number;
   /** Chance of an entry of a coefficient not to vanish. */
   readonly density: number;
@@ -19,16 +20,17 @@ export interface RandomShape {
 export function randomProgramme(shape: RandomShape, random: Random): Programme {
   const objective = new Float64Array(shape.unknowns);
   const y = Float64Array.from(objective, () => random.normal());
-  const blocks = shape.sizes.map((size): ProgrammeBlock => {
-    const coefficients = Array.from(objective, () => randomHermitian(size, shape.kind, shape.density, random));
-    const x = randomPositive(size, shape.kind, shape.primalRank ?? size, random);
-    const constant = randomPositive(size, shape.kind, shape.dualRank ?? size, random);
+  const blocks = shape.sizes.map((size, k): ProgrammeBlock => {
+    const kind = typeof shape.kind === 'string' ? shape.kind : shape.kind[k];
+    const coefficients = Array.from(objective, () => randomHermitian(size, kind, shape.density, random));
+    const x = randomPositive(size, kind, shape.primalRank ?? size, random);
+    const constant = randomPositive(size, kind, shape.dualRank ?? size, random);
     coefficients.forEach((a, i) => {
       objective[i] += innerProduct(a, x).re;
       addScaledInto(constant, a, y[i]);
     });
     return {
-      kind: shape.kind,
+      kind,
       size,
       constant: sparseFromDense(constant),
       coefficients: coefficients.map((a, unknown) => ({ unknown, matrix: sparseFromDense(a) })),
