@@ -1,6 +1,4 @@
-import { spawnSync } from 'node:child_process';
-import { fileURLToPath } from 'node:url';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { blockAlgebra } from '../../src/algebra/block-algebra.js';
 import { applyGenerator } from '../../src/generator/apply-generator.js';
 import { balancedGenerator } from '../../src/generator/balanced-generator.js';
@@ -15,7 +13,6 @@ import { sumGenerator } from '../../src/generator/sum-generator.js';
 import { superoperatorGenerator } from '../../src/generator/superoperator-generator.js';
 import { tensorGenerator } from '../../src/generator/tensor-generator.js';
 import {
-  type ComplexMatrix,
   adjoint,
   diagonal,
   frobeniusNorm,
@@ -26,35 +23,10 @@ import {
 } from '../../src/linalg/complex-matrix.js';
 import { seededRandom } from '../../src/random.js';
 import { analyse } from '../../src/structure/structure.js';
+import { type WrittenMatrix, referenceAnswers, writeMatrix } from '../helpers/ask-reference.js';
 import { spectrum } from '../helpers/expect-spectrum.js';
 import { randomMatrix } from '../linalg/support/inputs.js';
 import { expectAllClose, expectBelow } from '../linalg/support/expect-close.js';
-
-interface Written {
-  readonly re: number[][];
-  readonly im: number[][];
-}
-
-const REFERENCE = fileURLToPath(new URL('../../../../tests/reference/answer.py', import.meta.url));
-
-interface Answer {
-  readonly value?: unknown;
-  readonly error?: string;
-  readonly fixedPoints?: number;
-}
-
-/** Answers of the independent NumPy reference to a list of requests. */
-function ask(requests: readonly object[]): Answer[] {
-  const run = spawnSync('/usr/bin/python3', [REFERENCE], { input: JSON.stringify(requests), encoding: 'utf8' });
-  expect(run.status, run.stderr).toBe(0);
-  return JSON.parse(run.stdout);
-}
-
-function write(a: ComplexMatrix): Written {
-  const rows = (part: Float64Array) =>
-    Array.from({ length: a.rows }, (_, i) => [...part.subarray(i * a.cols, (i + 1) * a.cols)]);
-  return { re: rows(a.re), im: rows(a.im) };
-}
 
 const random = seededRandom('reference');
 const hermitian = (n: number) => hermitianPart(randomMatrix(random, n));
@@ -72,24 +44,24 @@ const rates = [[0, 1, 0.5], [2, 0, 3], [0.25, 1, 0]]; // prettier-ignore
 const ohmic = { kind: 'ohmic', cutoff: 4, strength: 0.5 } as const;
 const qubitDocument = {
   form: 'balanced',
-  state: write(gibbs),
-  terms: balanced.map((t) => ({ ...t, matrix: write(t.matrix) })),
+  state: writeMatrix(gibbs),
+  terms: balanced.map((t) => ({ ...t, matrix: writeMatrix(t.matrix) })),
 };
 const qubit = balancedGenerator({ algebra: blockAlgebra([2]), state: gibbs, terms: balanced });
 
 /** A model document and the generator that the library makes of the same data. */
 const MODELS: [string, object, Generator][] = [
-  ['lindblad', { algebra: [3], generator: { form: 'lindblad', hamiltonian: write(h3), jumps: [{ rate: 0.4, matrix: write(r3) }] } }, lindbladGenerator({ algebra: a3, hamiltonian: h3, jumps: [{ rate: 0.4, matrix: r3 }] })],
-  ['lindblad between blocks', { algebra: [2, 1], generator: { form: 'lindblad', jumps: [{ matrix: write(link) }, { matrix: write(adjoint(link)) }, { matrix: write(block) }] } }, lindbladGenerator({ algebra: blockAlgebra([2, 1]), jumps: [{ matrix: link }, { matrix: adjoint(link) }, { matrix: block }] })],
+  ['lindblad', { algebra: [3], generator: { form: 'lindblad', hamiltonian: writeMatrix(h3), jumps: [{ rate: 0.4, matrix: writeMatrix(r3) }] } }, lindbladGenerator({ algebra: a3, hamiltonian: h3, jumps: [{ rate: 0.4, matrix: r3 }] })],
+  ['lindblad between blocks', { algebra: [2, 1], generator: { form: 'lindblad', jumps: [{ matrix: writeMatrix(link) }, { matrix: writeMatrix(adjoint(link)) }, { matrix: writeMatrix(block) }] } }, lindbladGenerator({ algebra: blockAlgebra([2, 1]), jumps: [{ matrix: link }, { matrix: adjoint(link) }, { matrix: block }] })],
   ['balanced', { algebra: [2], generator: qubitDocument }, qubit],
   ['rates', { algebra: [1, 1, 1], generator: { form: 'rates', rates } }, ratesGenerator(rates)],
   ['expectation onto scalars', { algebra: [2, 1], generator: { form: 'expectation', onto: { scalars: true }, rate: 1.5 } }, expectationGenerator({ algebra: blockAlgebra([2, 1]), onto: { scalars: true }, rate: 1.5 })],
   ['expectation onto blocks', { algebra: [3], generator: { form: 'expectation', onto: { blocks: [2, 1] } } }, expectationGenerator({ algebra: a3, onto: { blocks: [2, 1] } })],
-  ['expectation onto a span', { algebra: [2], generator: { form: 'expectation', onto: { spannedBy: [write(diagonal([1, 1])), write(z)] } } }, expectationGenerator({ algebra: blockAlgebra([2]), onto: { spannedBy: [diagonal([1, 1]), z] } })],
+  ['expectation onto a span', { algebra: [2], generator: { form: 'expectation', onto: { spannedBy: [writeMatrix(diagonal([1, 1])), writeMatrix(z)] } } }, expectationGenerator({ algebra: blockAlgebra([2]), onto: { spannedBy: [diagonal([1, 1]), z] } })],
   ['schur', { algebra: [3], generator: { form: 'schur', points: [[0, 1], [1, 1], [3, -2]] } }, schurGenerator({ points: [[0, 1], [1, 1], [3, -2]] })], // prettier-ignore
-  ['davies', { algebra: [3], generator: { form: 'davies', hamiltonian: write(split), couplings: [write(s3)], beta: 0.7, spectrum: ohmic } }, daviesGenerator({ algebra: a3, hamiltonian: split, couplings: [s3], beta: 0.7, spectrum: ohmic })],
-  ['davies in another basis', { algebra: [3], generator: { form: 'davies', hamiltonian: write(h3), couplings: [write(s3)], beta: 0.7, spectrum: { kind: 'metropolis' } } }, daviesGenerator({ algebra: a3, hamiltonian: h3, couplings: [s3], beta: 0.7, spectrum: { kind: 'metropolis' } })],
-  ['superoperator', { algebra: [2], generator: { form: 'superoperator', matrix: write(dephase), picture: 'schrodinger', stacking: 'columns' } }, superoperatorGenerator({ algebra: blockAlgebra([2]), matrix: dephase, picture: 'schrodinger', stacking: 'columns' })],
+  ['davies', { algebra: [3], generator: { form: 'davies', hamiltonian: writeMatrix(split), couplings: [writeMatrix(s3)], beta: 0.7, spectrum: ohmic } }, daviesGenerator({ algebra: a3, hamiltonian: split, couplings: [s3], beta: 0.7, spectrum: ohmic })],
+  ['davies in another basis', { algebra: [3], generator: { form: 'davies', hamiltonian: writeMatrix(h3), couplings: [writeMatrix(s3)], beta: 0.7, spectrum: { kind: 'metropolis' } } }, daviesGenerator({ algebra: a3, hamiltonian: h3, couplings: [s3], beta: 0.7, spectrum: { kind: 'metropolis' } })],
+  ['superoperator', { algebra: [2], generator: { form: 'superoperator', matrix: writeMatrix(dephase), picture: 'schrodinger', stacking: 'columns' } }, superoperatorGenerator({ algebra: blockAlgebra([2]), matrix: dephase, picture: 'schrodinger', stacking: 'columns' })],
   ['sum', { algebra: [2], generator: { form: 'sum', terms: [{ weight: 2, generator: qubitDocument }, { weight: 0.5, generator: { form: 'expectation', onto: { diagonal: true } } }] } }, sumGenerator([{ weight: 2, generator: qubit }, { weight: 0.5, generator: expectationGenerator({ algebra: blockAlgebra([2]), onto: { diagonal: true } }) }])],
   ['tensor', { algebra: [4, 2], generator: { form: 'tensor', factors: [{ algebra: [2, 1], generator: { form: 'expectation', onto: { scalars: true } } }, { algebra: [2], generator: qubitDocument }] } }, tensorGenerator([expectationGenerator({ algebra: blockAlgebra([2, 1]), onto: { scalars: true } }), qubit])],
 ]; // prettier-ignore
@@ -102,33 +74,27 @@ const OBSERVABLES = MODELS.map(([, , { algebra }]) =>
 );
 
 describe('every form against the NumPy reference', () => {
-  let answers: Answer[] = [];
-
-  // One process for all: starting Python takes longer than its answers.
-  beforeAll(() => {
-    const models = MODELS.flatMap(([, model], k) => [
-      { what: 'generator', model, observable: write(OBSERVABLES[k]) },
-      { what: 'state', model },
-      { what: 'symmetry', model },
-    ]);
-    const groups = GROUPS.map((group) => ({
-      what: 'spectrum',
-      model: { generator: { form: 'length', group, length: 'word' } },
-    }));
-    answers = ask([...models, ...groups]);
-  });
+  const models = MODELS.flatMap(([, model], k) => [
+    { what: 'generator', model, observable: writeMatrix(OBSERVABLES[k]) },
+    { what: 'state', model },
+    { what: 'symmetry', model },
+  ]);
+  const groups = GROUPS.map((group) => ({
+    what: 'spectrum',
+    model: { generator: { form: 'length', group, length: 'word' } },
+  }));
+  const answers = referenceAnswers([...models, ...groups]);
 
   MODELS.forEach(([name, , g], k) => {
     it(name, () => {
-      const [image, state, symmetry] = answers.slice(3 * k, 3 * k + 3);
-      expect([image.error, state.error, symmetry.error]).toEqual([undefined, undefined, undefined]);
-      const read = ({ re, im }: Written) => fromRows(re, im);
-      const expected = read(image.value as Written);
+      const [image, state, symmetry] = answers().slice(3 * k, 3 * k + 3);
+      const read = ({ re, im }: WrittenMatrix) => fromRows(re, im);
+      const expected = read(image.value as WrittenMatrix);
       const difference = subtract(applyGenerator(g, OBSERVABLES[k]), expected);
       expectBelow(frobeniusNorm(difference), 1e-11 * (1 + frobeniusNorm(expected)), 'L(A)');
       const found = analyse(g);
       const { sigma } = found.state as NonNullable<typeof found.state>;
-      expectBelow(frobeniusNorm(subtract(sigma, read(state.value as Written))), 1e-11, 'state');
+      expectBelow(frobeniusNorm(subtract(sigma, read(state.value as WrittenMatrix))), 1e-11, 'state');
       expect(found.fixedPoints?.dimension).toBe(state.fixedPoints);
       const reference = symmetry.value as { gns: number; kms: number };
       expect(['tracial', 'GNS'].includes(found.symmetry.kind), 'GNS').toBe(reference.gns < 1e-9);
@@ -138,7 +104,7 @@ describe('every form against the NumPy reference', () => {
 
   GROUPS.forEach((group, k) => {
     it(`length on ${JSON.stringify(group)}: the same spectrum`, () => {
-      const expected = (answers[3 * MODELS.length + k].value as { re: number[] }).re;
+      const expected = (answers()[3 * MODELS.length + k].value as { re: number[] }).re;
       const g = lengthGenerator({ group, length: 'word' });
       expectAllClose(
         spectrum(g),

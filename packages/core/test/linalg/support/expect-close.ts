@@ -15,7 +15,7 @@ export function expectAllClose(
   what = 'entry',
 ): void {
   expect(actual.length, `${what}: number of entries`).toBe(expected.length);
-  for (let k = 0; k < actual.length; k++) expectClose(actual[k], expected[k], tolerance, `${what} ${k}`);
+  Array.from(actual).forEach((x, k) => expectClose(x, expected[k] ?? NaN, tolerance, `${what} ${k}`));
 }
 
 /** Fails with the figure unless 0 ≤ actual < bound; NaN fails. */
