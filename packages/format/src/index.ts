@@ -41,4 +41,5 @@ export { verdictSchema, type VerdictDocument } from './schema/verdict-schema.js'
 export { witnessSchema, type WitnessDocument } from './schema/witness-schema.js';
 export { type EndDocument } from './schema/end-schema.js';
 export { encodeBracket, encodeEnd } from './encode/encode-end.js';
+export { endValue } from './encode/end-value.js';
 export { decodeWitness, encodeWitness } from './encode/encode-witness.js';

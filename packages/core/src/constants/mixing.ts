@@ -22,7 +22,7 @@ export function mixingUpper(
   const logInverse = -Math.log(state.smallest);
   const candidates = [
     decayTime(positiveBound(mlsi), Math.log(Math.sqrt(2 * logInverse) / epsilon), 'mlsi and the inequality of Pinsker'),
-    decayTime(positiveBound(gap), logInverse / 2 - Math.log(epsilon), 'gap'),
+    decayTime(positiveBound(gap), logInverse / 2 - Math.log(epsilon), 'decay of the variance with the gap'),
   ].filter((end) => end !== null);
   return candidates.length === 0 ? null : candidates.reduce((a, b) => (b.value < a.value ? b : a));
 }

@@ -16,7 +16,6 @@ import {
   runEntropyStart,
 } from './entropy-search.js';
 import { type EntropySearchOptions, entropyStarts } from './entropy-starts.js';
-import { inheritedEnd } from './lower-ends.js';
 import { mlsiAt } from './mlsi-quotient.js';
 
 /** Independent starts of the search for `mlsi` = inf I(ρ)/(2D(ρ‖E†ρ)), for `runMlsiStart`. Throws `not-supported` without a faithful invariant state. */
@@ -60,7 +59,7 @@ export function entropyUpper(gap: End | null, results: readonly (EntropyResult |
   const best = bestOf(results);
   if (!best) return gap;
   const value = best.value + best.margin;
-  if (gap && !(value < gap.value * (1 - GAP_CLOSENESS))) return inheritedEnd(gap, `gap: ${gap.by}`);
+  if (gap && !(value < gap.value * (1 - GAP_CLOSENESS))) return gap;
   return {
     value,
     grade: 'observed',

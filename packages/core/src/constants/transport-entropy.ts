@@ -16,7 +16,7 @@ export function transportEntropyLower(structure: Structure, mlsi: End | null): E
 
 /** t2 ≤ gap, by linearisation at σ. Null where t2 is not defined. */
 export function transportEntropyUpper(structure: Structure, gap: End | null): End | null {
-  return gap && isPrimitiveMetric(structure) ? inheritedEnd(gap, `gap: ${gap.by}`) : null;
+  return gap && isPrimitiveMetric(structure) ? inheritedEnd(gap, `t2 ≤ gap; ${gap.by}`) : null;
 }
 
 /** Where the transport distance joins any two states. */

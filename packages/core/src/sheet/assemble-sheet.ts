@@ -2,6 +2,7 @@ import { completeCurvatureRule, curvatureRule } from '../constants/curvature-rul
 import { diameterUpper } from '../constants/diameter.js';
 import type { EntropyResult } from '../constants/entropy-search.js';
 import type { GradientEstimateResult } from '../constants/gradient-estimate.js';
+import { inheritedEnd } from '../constants/lower-ends.js';
 import { lsiFromGap } from '../constants/lsi-lower.js';
 import { mixingLower, mixingUpper } from '../constants/mixing.js';
 import { entropyUpper } from '../constants/mlsi.js';
@@ -12,7 +13,7 @@ import type { Bracket, End } from './bracket.js';
 import { type SheetRow, closeBrackets, nameOf } from './close-brackets.js';
 import { hasGradientMetric } from './hypotheses.js';
 import { type RowKey, betterLower, betterUpper, orderRelations } from './order-relations.js';
-import { rowNotes } from './row-notes.js';
+import { missingEndNotes, rowNotes } from './row-notes.js';
 import type { SheetFinding } from './run-sheet-task.js';
 import { type SheetRequest, FULL_SHEET } from './sheet-plan.js';
 
@@ -33,7 +34,10 @@ export function assembleSheet(
   const derived = closed.map((row) => derivedRow(structure, request, closed, row));
   const final = closeBrackets(derived, relations, scale);
   const wanted = new Set(request.rows.map(nameOf));
-  return final.filter((row) => wanted.has(nameOf(row.key)));
+  const t2 = final.find(({ key }) => key.id === 't2')?.lower ?? null;
+  return final
+    .filter((row) => wanted.has(nameOf(row.key)))
+    .map((row) => ({ ...row, notes: [...row.notes, ...missingEndNotes(structure, row, t2)] }));
 }
 
 /** Every row that the findings so far bound, wanted or not. */
@@ -168,7 +172,8 @@ function entropyBracket(structure: Structure, found: readonly SheetFinding[], id
   }
   const symmetric = hasGradientMetric(structure) || (id === 'lsi' && structure.symmetry.kind === 'KMS');
   const usesGap = symmetric && (id !== 'lsi' || (structure.fixedPoints?.primitive ?? false));
-  const upper = entropyUpper(usesGap ? gapBracket(found).upper : null, results);
+  const gap = usesGap ? gapBracket(found).upper : null;
+  const upper = entropyUpper(gap && inheritedEnd(gap, `${id} ≤ gap; ${gap.by}`), results);
   const comparison = found.find(({ kind }) => kind === 'comparison');
   return { lower: id === 'clsi' && comparison?.kind === 'comparison' ? comparison.end : null, upper };
 }

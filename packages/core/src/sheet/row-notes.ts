@@ -1,6 +1,8 @@
 import type { Structure } from '../structure/structure.js';
 import { DENSE_LIMIT, FORM_LIMIT, SEARCH_LIMIT } from '../tolerances.js';
+import type { End } from './bracket.js';
 import { hasGradientMetric } from './hypotheses.js';
+import type { SheetRow } from './close-brackets.js';
 import type { RowKey } from './order-relations.js';
 import type { SheetFinding } from './run-sheet-task.js';
 
@@ -21,6 +23,13 @@ export function rowNotes(structure: Structure, found: readonly SheetFinding[], {
   if (needsPrimitive && fixedPoints && !fixedPoints.primitive) {
     notes.push('not primitive: states in different components stay apart, so this constant is not given');
   }
+  if ((id === 'mixing' || id === 'lsi') && symmetry.kind === 'none') {
+    notes.push(
+      id === 'mixing'
+        ? 'the bounds on it need KMS symmetry; this generator has none'
+        : 'an upper end needs KMS symmetry; this generator has none',
+    );
+  }
   if (id !== 'gap' && algebra.dimension > DENSE_LIMIT) {
     notes.push(`dimension ${algebra.dimension} is above ${DENSE_LIMIT}: only the gap is computed`);
   } else if (needsSearch(id) && algebra.dimension > SEARCH_LIMIT) {
@@ -30,6 +39,23 @@ export function rowNotes(structure: Structure, found: readonly SheetFinding[], {
     notes.push(`the forms Γ and Γ₂ would have side above ${FORM_LIMIT}: not computed`);
   }
   return [...notes, ...findingNotes(found, id)];
+}
+
+/** Why an end is still missing once all ends have been passed along. */
+export function missingEndNotes(structure: Structure, row: SheetRow, t2: End | null): string[] {
+  const { key, lower, upper, notes } = row;
+  const { fixedPoints, algebra } = structure;
+  if (notes.length > 0) return [];
+  if (key.id === 'gap' && fixedPoints?.dimension === algebra.dimension) {
+    return ['L = 0: every observable is fixed, and the inequality holds with any constant'];
+  }
+  if (key.id === 'cge' && !lower) {
+    return upper?.value === -Infinity
+      ? ['no complete curvature bound exists']
+      : ['no lower end: no theorem applies, and no lift of ∂ was found among the forms tried'];
+  }
+  if (key.id === 'diameter' && !upper && !t2) return ['only a positive lower end of t2 bounds it, and none is known'];
+  return [];
 }
 
 function needsSearch(id: RowKey['id']): boolean {

@@ -12,6 +12,7 @@ import { type LanczosGap, gapMatrixFree } from '../constants/gap-matrix-free.js'
 import { type GradientEstimateResult, runGradientEstimateStart } from '../constants/gradient-estimate.js';
 import { runLsiStart } from '../constants/lsi.js';
 import { runMlsiStart } from '../constants/mlsi.js';
+import type { JumpBasis } from '../lift/jump-bases.js';
 import { type LadderResult, climbLadder } from '../lift/lift-ladder.js';
 import { type MetricModel, metricModel } from '../metric/metric-model.js';
 import type { MeanName } from '../metric/operator-mean.js';
@@ -98,8 +99,10 @@ function liftFinding(structure: Structure, target: number, stop?: () => boolean)
   const end: End = {
     value: lift.curvature,
     grade: 'certified',
-    by: `lift of ∂ (${rung.ansatz} form, ${rung.basis === 'given' ? 'jumps as given' : `${rung.basis} jumps`})`,
+    by: `lift of ∂ (${rung.ansatz} form, ${JUMP_WORDS[rung.basis]})`,
     margin: Math.abs(lift.optimum - lift.curvature),
   };
   return { kind: 'lift', end, reason };
 }
+
+const JUMP_WORDS: Record<JumpBasis, string> = { given: 'jumps as given', pauli: 'Pauli jumps', weyl: 'Weyl jumps' };

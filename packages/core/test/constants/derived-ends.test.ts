@@ -24,7 +24,10 @@ describe('transport-entropy constant', () => {
       ...end(0.9),
       by: 'mlsi (primitive, GNS-symmetric): test',
     });
-    expect(transportEntropyUpper(structure, end(1, 'observed'))).toEqual({ ...end(1, 'observed'), by: 'gap: test' });
+    expect(transportEntropyUpper(structure, end(1, 'observed'))).toEqual({
+      ...end(1, 'observed'),
+      by: 't2 ≤ gap; test',
+    });
   });
 
   it('is not given elsewhere, nor from an observation or a bound that is not positive', () => {

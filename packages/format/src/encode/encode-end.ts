@@ -16,6 +16,6 @@ export function encodeEnd({ value, grade, by, margin, evidence }: End): EndDocum
     by: finite ? by : 'unbounded',
     ...(finite && margin !== undefined && { margin }),
     ...(evidence && { evidence: encodeEvidence(evidence) }),
-    ...(!finite && { note: by }),
+    ...(!finite && { unbounded: value > 0 ? ('above' as const) : ('below' as const), note: by }),
   };
 }

@@ -19,8 +19,8 @@ export const witnessFields = {
 };
 
 /**
- * One end of a bracket, units of the constant. JSON has no infinities: an unbounded end (−∞ for a rate, +∞ for `diameter` and
- * `mixing`) has the value null, `by` "unbounded", and a note that says why.
+ * One end of a bracket, units of the constant. JSON has no infinities: an unbounded end has the value null, `by` "unbounded",
+ * and a note that says why. `unbounded` tells +∞ ("above") from −∞ ("below"); see `endValue` for where it is left out.
  */
 export const endSchema = withoutFault(
   strict({
@@ -32,6 +32,7 @@ export const endSchema = withoutFault(
       strict(witnessFields),
       strict({ certificate: digest }),
     ]).optional(),
+    unbounded: z.enum(['above', 'below']).optional(),
     note: text.optional(),
   }),
   findEndFault,
@@ -39,21 +40,20 @@ export const endSchema = withoutFault(
 
 export type EndDocument = z.infer<typeof endSchema>;
 
+type EndFields = Readonly<{
+  value: number | null;
+  by: string;
+  note?: string | undefined;
+  unbounded?: string | undefined;
+}>;
+
 /** Lower and upper end of one constant; null where nothing is known. An observed value is never a lower bound. */
 export const bracketFields = {
   lower: withoutFault(endSchema.nullable(), findLowerFault),
   upper: endSchema.nullable(),
 };
 
-function findEndFault({
-  value,
-  by,
-  note,
-}: {
-  value: number | null;
-  by: string;
-  note?: string | undefined;
-}): Fault | null {
+function findEndFault({ value, by, note, unbounded }: EndFields): Fault | null {
   if (value === null && by !== 'unbounded') {
     return fault(
       'wrong-schema',
@@ -67,6 +67,11 @@ function findEndFault({
       `expected null as the value of an unbounded end, got ${value}; correct "by" or the value`,
       ['value'],
     );
+  }
+  if (value !== null && unbounded !== undefined) {
+    return fault('wrong-schema', `expected no "unbounded" beside the value ${value}, got "${unbounded}"; remove it`, [
+      'unbounded',
+    ]);
   }
   if (value === null && note === undefined) {
     return fault(

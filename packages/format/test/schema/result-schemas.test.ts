@@ -329,7 +329,13 @@ describe('documents of core results', () => {
       lower: { value: -Infinity, grade: 'certified', by: 'no lift exists', margin: 1 },
       upper: { value: 2, grade: 'observed', by: 'search', margin: 1e-9, evidence: coreWitness },
     });
-    expect(bracket.lower).toEqual({ value: null, grade: 'certified', by: 'unbounded', note: 'no lift exists' });
+    expect(bracket.lower).toEqual({
+      value: null,
+      grade: 'certified',
+      by: 'unbounded',
+      unbounded: 'below',
+      note: 'no lift exists',
+    });
     expect(parseSheet(withConstant(bracket)).constants[0]).toMatchObject(bracket);
     expect(encodeBracket({ lower: null, upper: null })).toEqual({ lower: null, upper: null });
     expect(encodeEnd({ value: 1, grade: 'exact', by: 'a rule' })).toEqual({ value: 1, grade: 'exact', by: 'a rule' });
