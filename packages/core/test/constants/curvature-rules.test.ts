@@ -24,7 +24,7 @@ describe('rules for lower ends of cge', () => {
 
   it('tensor products: the least factor', () => {
     const factors = [
-      depolarising(2, 3),
+      depolarising(3, 3),
       pauliJumps([
         { string: 'X', rate: 1 },
         { string: 'Z', rate: 1 },
