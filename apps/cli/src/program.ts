@@ -1,4 +1,4 @@
-import { CONSTANT_IDS, CONVENTION_NAMES, MEAN_NAMES } from '@thalweg/core';
+import { CERTIFIED_CONSTANTS, CONSTANT_IDS, CONVENTION_NAMES, MEAN_NAMES } from '@thalweg/core';
 import { Argument, Command, Option } from 'commander';
 import { SHELLS } from './completion/shells.js';
 import type { VerbName } from './verbs/load-verb.js';
@@ -67,6 +67,16 @@ export function createProgram(runVerb: RunVerb): Command {
     .addHelpText(
       'after',
       examples(['thalweg witness qubit.json ge -o w.json', 'thalweg witness qubit.json ge --at rho.json']),
+    );
+
+  addVerb(program, runVerb, 'certify', 'find a proof of a lower bound that others can check: a lift of the derivations')
+    .addArgument(modelArgument())
+    .addArgument(withWords(new Argument('<constant>', 'which constant'), CERTIFIED_CONSTANTS))
+    .option('-o, --output <file>', 'write the certificate here')
+    .option('--verbose', 'tell every iteration of the solver')
+    .addHelpText(
+      'after',
+      examples(['thalweg certify qubit.json cge -o c.json', 'thalweg verify c.json --model qubit.json']),
     );
 
   addVerb(program, runVerb, 'verify', 'check evidence against its model, independently of how it was found')

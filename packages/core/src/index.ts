@@ -49,3 +49,5 @@ export * from './constants/index.js';
 export { verifyWitness, type WitnessCheck } from './witness/verify-witness.js';
 export * from './lift/index.js';
 export * from './programme/index.js';
+export * from './checker/index.js';
+export * from './certificate/index.js';

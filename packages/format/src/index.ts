@@ -8,6 +8,7 @@ export { parseJson } from './json/parse-json.js';
 export { writeJson } from './json/write-json.js';
 export {
   FILE_BYTES_LIMIT,
+  CERTIFICATE_LIMITS,
   JSON_LIMITS,
   LIST_LIMIT,
   MATRIX_LIMITS,
@@ -32,6 +33,7 @@ export { denseModel, resolveModel, type ResolvedModel, type ResolveOptions } fro
 export { readMtx } from './mtx/read-mtx.js';
 export { readNpy } from './npy/read-npy.js';
 export * from './schema/parse-document.js';
+export { certificateSchema, type CertificateDocument } from './schema/certificate-schema.js';
 export { matrixSchema } from './schema/matrix-schema.js';
 export { modelSchema } from './schema/model-schema.js';
 export { reportSchema, type ReportDocument } from './schema/report-schema.js';
@@ -42,4 +44,5 @@ export { witnessSchema, type WitnessDocument } from './schema/witness-schema.js'
 export { type EndDocument } from './schema/end-schema.js';
 export { encodeBracket, encodeEnd } from './encode/encode-end.js';
 export { endValue } from './encode/end-value.js';
+export { decodeCertificate, encodeCertificate } from './encode/encode-certificate.js';
 export { decodeWitness, encodeWitness } from './encode/encode-witness.js';

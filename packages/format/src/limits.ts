@@ -31,3 +31,15 @@ export const TEXT_LIMIT = 2_000;
 
 /** Bytes of the header of a NumPy file; NumPy itself writes less than 200. */
 export const NPY_HEADER_LIMIT = 10_000;
+
+/** Limits on a certificate, far above what the programme that makes them can handle. */
+export const CERTIFICATE_LIMITS = {
+  /** Characters of one rational number. */
+  rationalLength: 2_000,
+  /** Places in a matrix of a jump or state. */
+  side: 4096,
+  /** Entries of such a matrix. */
+  entries: 2 ** 18,
+  /** Terms of a lift. */
+  terms: 2 ** 19,
+} as const;

@@ -1,3 +1,4 @@
+import { checkCertificateDocument, makeCertificateDocument } from './tasks/certificate-tasks.js';
 import { reportDocument } from './tasks/report-task.js';
 import { sheetDocument, sheetProofs, sheetSearch } from './tasks/sheet-tasks.js';
 import { checkWitness, witnessAtState } from './tasks/witness-tasks.js';
@@ -10,4 +11,6 @@ export const TASKS = {
   'sheet-document': sheetDocument,
   'witness-at': witnessAtState,
   'witness-check': checkWitness,
+  certify: makeCertificateDocument,
+  'certificate-check': checkCertificateDocument,
 };

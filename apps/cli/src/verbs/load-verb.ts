@@ -6,6 +6,7 @@ const VERBS = {
   constants: async () => (await import('./constants/constants-verb.js')).verb as Verb<unknown>,
   check: async () => (await import('./check/check-verb.js')).verb as Verb<unknown>,
   witness: async () => (await import('./witness/witness-verb.js')).verb as Verb<unknown>,
+  certify: async () => (await import('./certify/certify-verb.js')).verb as Verb<unknown>,
   verify: async () => (await import('./verify/verify-verb.js')).verb as Verb<unknown>,
   completion: async () => (await import('./completion/completion-verb.js')).verb as Verb<unknown>,
 };

@@ -6,6 +6,7 @@ import { requireDepth } from '../json/require-depth.js';
 import { valueAt } from '../json/value-at.js';
 import type { MatrixDocument } from '../matrix/matrix-document.js';
 import type { ModelDocument } from '../model/model-document.js';
+import { certificateSchema, type CertificateDocument } from './certificate-schema.js';
 import { checkDocument } from './check-document.js';
 import { matrixSchema } from './matrix-schema.js';
 import { modelSchema } from './model-schema.js';
@@ -20,13 +21,20 @@ export type Source = string | Uint8Array;
 
 /** Every document of this package, told apart by `schema`. */
 export type AnyDocument =
-  ModelDocument | SheetDocument | ReportDocument | WitnessDocument | VerdictDocument | StateDocument;
+  | ModelDocument
+  | SheetDocument
+  | ReportDocument
+  | WitnessDocument
+  | CertificateDocument
+  | VerdictDocument
+  | StateDocument;
 
 const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.model/1': modelSchema,
   'thalweg.sheet/1': sheetSchema,
   'thalweg.report/1': reportSchema,
   'thalweg.witness/1': witnessSchema,
+  'thalweg.certificate/1': certificateSchema,
   'thalweg.verdict/1': verdictSchema,
   'thalweg.state/1': stateSchema,
 };
@@ -62,6 +70,17 @@ export function parseState(source: Source): MatrixDocument {
 
 export function parseWitness(source: Source): WitnessDocument {
   return checkDocument(witnessSchema, parseJson(source));
+}
+
+export function parseCertificate(source: Source): CertificateDocument {
+  return checkDocument(certificateSchema, parseJson(source));
+}
+
+/** What `verify` takes: a witness or a certificate. */
+export function parseEvidence(source: Source): WitnessDocument | CertificateDocument {
+  const value = parseJson(source);
+  const isCertificate = valueAt(value, ['schema']) === 'thalweg.certificate/1';
+  return isCertificate ? checkDocument(certificateSchema, value) : checkDocument(witnessSchema, value);
 }
 
 export function parseSheet(source: Source): SheetDocument {

@@ -20,6 +20,8 @@ const checkSchema = strict({
   holds: z.boolean(),
   value: finite.optional(),
   bound: finite.optional(),
+  /** How the value must stand to the bound; at most, where left out. */
+  relation: z.enum(['at-most', 'at-least']).optional(),
   note: text.optional(),
 });
 

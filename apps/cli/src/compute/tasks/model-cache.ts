@@ -1,5 +1,5 @@
 import { analyse, isMarkov, ThalwegError, type Structure } from '@thalweg/core';
-import { loadModel, type ModelDocument } from '@thalweg/format';
+import { loadModel, type LoadedModel, type ModelDocument } from '@thalweg/format';
 import { createNodeSha256, filesInFolder } from '@thalweg/format/node';
 import type { DocumentSource } from '../../input/read-source.js';
 
@@ -16,14 +16,16 @@ let last: { readonly key: string; readonly model: AnalysedModel } | null = null;
 export function analysedModel(source: DocumentSource): AnalysedModel {
   const key = `${source.folder}\n${Buffer.from(source.bytes).toString('latin1')}`;
   if (last?.key === key) return last.model;
-  refuseOtherFiles(source);
-  const { document, digest, generator } = loadModel(source.bytes, {
-    readFile: filesInFolder(source.folder),
-    createHash: createNodeSha256,
-  });
+  const { document, digest, generator } = readModel(source);
   const model = { document, digest, structure: analyse(generator) };
   last = { key, model };
   return model;
+}
+
+/** A model read, its generator built, nothing computed. */
+export function readModel(source: DocumentSource): LoadedModel {
+  refuseOtherFiles(source);
+  return loadModel(source.bytes, { readFile: filesInFolder(source.folder), createHash: createNodeSha256 });
 }
 
 /** The analysed model, refused with its smallest eigenvalue or residual when it is no Markov semigroup. */

@@ -1,0 +1,41 @@
+import { writeJson } from '@thalweg/format';
+import { only } from '../../compute/only.js';
+import type { CertifyOutcome } from '../../compute/tasks/certificate-tasks.js';
+import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { readSource } from '../../input/read-source.js';
+import type { Output } from '../../output/output.js';
+import { writeFileAtomically } from '../../output/write-file-atomically.js';
+import { renderCertificateVerdict } from '../../render/render-certificate-verdict.js';
+import type { Session } from '../../session.js';
+import type { CertifyPlan } from './plan.js';
+
+/** Makes a certificate, checks it and writes it. Ends with `undecided` when none is found that passes. */
+export async function certifyEffect(plan: CertifyPlan, session: Session): Promise<ExitStatus> {
+  const { model, constant, verbose, output: file } = plan;
+  const source = await readSource(model, session.terminal.stdin);
+  const { output } = session;
+  output.progress('climbing the ladder of lifts');
+  const found = await session.compute(plan, async (pool) => only(await pool.run('certify', [{ source, constant }])));
+  if (verbose) for (const line of found.iterates) output.note(line);
+  const { certificate, verdict } = found;
+  if (certificate === null || verdict === null) {
+    output.note(`thalweg: no certificate for ${constant}: ${reasonOf(found)}`);
+    return EXIT_STATUS.undecided;
+  }
+  if (file !== null) await writeFileAtomically(file, writeJson(certificate));
+  if (output.json) output.document(certificate);
+  else output.result(renderCertificateVerdict(verdict, output));
+  tellMore(found, output);
+  if (file !== null) output.note(`wrote ${file}; check it with: thalweg verify ${file} --model ${model}`);
+  return EXIT_STATUS.yes;
+}
+
+function tellMore({ reason, note }: CertifyOutcome, output: Output): void {
+  if (reason === 'stopped') output.note('The time limit ended the search: more time may prove more.');
+  else if (note !== null) output.note(note);
+}
+
+function reasonOf({ reason, note }: CertifyOutcome): string {
+  const stopped = reason === 'stopped' ? 'the time limit ended the search' : null;
+  return [note, stopped].filter((part) => part !== null).join('; ');
+}

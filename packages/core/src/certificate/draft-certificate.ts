@@ -1,0 +1,50 @@
+import type { LiftCertificate, MatrixEntry } from '../checker/lift-certificate.js';
+import type { FoundLift } from '../lift/index.js';
+import type { ComplexMatrix } from '../linalg/complex-matrix.js';
+import type { SparseMatrix } from '../linalg/sparse-matrix.js';
+import type { CanonicalForm } from '../structure/canonical-form.js';
+
+/** A lift as a certificate in floating point: W_j = V_j, rate 2e^{−ω/2}, ratio e^{ω}. */
+export function draftCertificate(canonical: CanonicalForm, lift: FoundLift): LiftCertificate {
+  const jumps = canonical.jumps.map(({ label, sparse, frequency, partner }) => ({
+    label,
+    entries: sparseEntries(sparse),
+    rate: 2 * Math.exp(-frequency / 2),
+    ratio: Math.exp(frequency),
+    partner,
+  }));
+  const root = (m: number): number => (m < 0 ? 1 : Math.sqrt(jumps[m].rate));
+  return {
+    constant: 'cge',
+    grade: 'certified',
+    bound: lift.curvature,
+    blocks: canonical.algebra.blocks,
+    state: denseEntries(canonical.state.sigma),
+    jumps,
+    lift: lift.coefficients
+      .filter(({ re, im }) => re !== 0 || im !== 0)
+      .map(({ term, re, im }) => {
+        const factor = root(term.left) * root(term.right);
+        return { ...term, re: factor * re, im: factor * im };
+      }),
+  };
+}
+
+function sparseEntries(a: SparseMatrix): MatrixEntry[] {
+  const out: MatrixEntry[] = [];
+  for (let i = 0; i < a.rows; i++) {
+    for (let s = a.rowStart[i]; s < a.rowStart[i + 1]; s++) out.push([i, a.colIndex[s], a.re[s], a.im[s]]);
+  }
+  return out;
+}
+
+function denseEntries(a: ComplexMatrix): MatrixEntry[] {
+  const out: MatrixEntry[] = [];
+  for (let i = 0; i < a.rows; i++) {
+    for (let j = 0; j < a.cols; j++) {
+      const [re, im] = [a.re[i * a.cols + j], a.im[i * a.cols + j]];
+      if (re !== 0 || im !== 0) out.push([i, j, re, im]);
+    }
+  }
+  return out;
+}

@@ -1,0 +1,6 @@
+export {
+  makeCertificate,
+  type CertificateResult,
+  type CertifyOptions,
+  type MadeCertificate,
+} from './make-certificate.js';

@@ -1,0 +1,87 @@
+import { type CertificateVerdict, checkCertificate } from '../checker/check-certificate.js';
+import type { CertifiedConstant, LiftCertificate } from '../checker/lift-certificate.js';
+import { carreDuChamp } from '../constants/carre-du-champ.js';
+import { completeBakryEmery } from '../constants/bakry-emery.js';
+import { ThalwegError } from '../errors.js';
+import { type LadderResult, climbLadder } from '../lift/index.js';
+import type { ProgrammeIterate } from '../programme/programme-options.js';
+import { hasGradientMetric } from '../sheet/hypotheses.js';
+import type { Structure } from '../structure/structure.js';
+import { CERTIFY_LIFT_SIDE, CERTIFY_LIFT_UNKNOWNS, LIFT_CLOSED } from '../tolerances.js';
+import { draftCertificate } from './draft-certificate.js';
+
+/** A certificate that passed the checker, and how it was found. */
+export interface MadeCertificate {
+  readonly certificate: LiftCertificate;
+  readonly verdict: CertificateVerdict;
+  readonly rung: LadderResult['rung'];
+  readonly solver: {
+    readonly optimum: number;
+    readonly iterations: number;
+    readonly unknowns: number;
+    readonly side: number;
+  };
+}
+
+export interface CertificateResult {
+  /** Null when no lift was found, or none that the checker passes. */
+  readonly made: MadeCertificate | null;
+  /** `cbe`, above which no certificate can reach. */
+  readonly ceiling: number;
+  /** `closed`: the bound reaches `cbe`; `exhausted`: every ansatz was tried; `stopped`: the time ended. */
+  readonly reason: LadderResult['reason'];
+  /** Why there is none, or what stands in the way of a better one. */
+  readonly note: string | null;
+}
+
+export interface CertifyOptions {
+  readonly stop?: () => boolean;
+  readonly onIterate?: (record: ProgrammeIterate) => void;
+}
+
+/**
+ * Find a lift on the ladder of ansätze, up to `cbe`, write it down as a certificate and check that. Throws `not-symmetric` for a
+ * generator without the metric that cge is about.
+ */
+export function makeCertificate(
+  structure: Structure,
+  constant: CertifiedConstant,
+  options: CertifyOptions = {},
+): CertificateResult {
+  const { generator, canonical } = structure;
+  if (!canonical || !hasGradientMetric(structure)) {
+    throw new ThalwegError(
+      'not-symmetric',
+      `expected a GNS-symmetric generator for a certificate of ${constant}, got one that is not`,
+    );
+  }
+  const ceiling = completeBakryEmery(carreDuChamp(generator)).value;
+  const none = { made: null, ceiling, reason: 'exhausted' } as const;
+  if (canonical.jumps.length === 0) return { ...none, note: 'L is 0: every constant is infinite' };
+  if (ceiling === -Infinity) return { ...none, note: 'cbe is −∞, so that no lift exists' };
+  const found = climbLadder(generator, canonical, {
+    target: ceiling,
+    maxSide: CERTIFY_LIFT_SIDE,
+    maxUnknowns: CERTIFY_LIFT_UNKNOWNS,
+    ...options,
+  });
+  if (!found) {
+    const stopped = options.stop?.() === true;
+    return { ...none, reason: stopped ? 'stopped' : 'exhausted', note: 'no ansatz has a lift within the limits' };
+  }
+  const { lift, rung, reason } = found;
+  const certificate = { ...draftCertificate(found.canonical, lift), constant };
+  const verdict = checkCertificate(generator, certificate);
+  if (!verdict.holds) {
+    const failed = verdict.conditions.find(({ holds }) => !holds);
+    return { ...none, reason, note: `a lift for K = ${lift.curvature} was found, but fails: ${failed?.name}` };
+  }
+  const { optimum, iterations, unknowns, side } = lift;
+  const open = ceiling - verdict.bound > 2 * LIFT_CLOSED * Math.max(1, Math.abs(ceiling));
+  return {
+    made: { certificate, verdict, rung, solver: { optimum, iterations, unknowns, side } },
+    ceiling,
+    reason,
+    note: open ? `the lift stays below cbe = ${ceiling}` : null,
+  };
+}

@@ -1,0 +1,21 @@
+import type { Interval } from './arithmetic/interval.js';
+import { type Rational, rationalFromDouble } from './arithmetic/rational.js';
+import { intervalFromRational } from './arithmetic/rational-rounding.js';
+
+/** A number of a certificate: a double, which stands for its exact value, or a rational number. */
+export type Scalar = number | Rational;
+
+export function rationalOf(x: Scalar): Rational {
+  return typeof x === 'number' ? rationalFromDouble(x) : x;
+}
+
+/** A double within a unit in the last place. */
+export function doubleOf(x: Scalar): number {
+  if (typeof x === 'number') return x;
+  const { lo, hi } = intervalFromRational(x);
+  return Math.abs(hi) === Infinity ? lo : hi;
+}
+
+export function intervalOf(x: Scalar): Interval {
+  return typeof x === 'number' ? { lo: x, hi: x } : intervalFromRational(x);
+}
