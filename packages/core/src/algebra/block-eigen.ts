@@ -16,6 +16,7 @@ export function blockEigen(algebra: BlockAlgebra, a: ComplexMatrix): BlockEigen 
   const n = algebra.size;
   const values = Float64Array.from({ length: n }, (_, i) => a.re[i * n + i]);
   if (isDiagonal(a)) return { values, vectors: identity(n), exact: true };
+  if (algebra.blocks.length === 1) return { ...hermitianEigen(a), exact: false };
   const vectors = zeros(n);
   algebra.blocks.forEach((size, b) => {
     const start = algebra.offsets[b];

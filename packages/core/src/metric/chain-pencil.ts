@@ -38,7 +38,7 @@ export function chainPencil(model: MetricModel, mean: MeanName): CurvaturePencil
   const work = new Float64Array(n);
   const vector = new Float64Array(m);
   const pencil = smallestPencilWork(m);
-  let observable: Float64Array = new Float64Array(n);
+  const observable = new Float64Array(n);
 
   function solve(lambda: Float64Array): number {
     if (m === 0) return Infinity;
@@ -46,7 +46,7 @@ export function chainPencil(model: MetricModel, mean: MeanName): CurvaturePencil
     deflateSymmetric(deflated, metric, g, work);
     deflateSymmetric(deflated, curvature, q, work);
     const kappa = symmetricPencilSmallestInto(q, g, m, vector, pencil);
-    observable = inflate(deflated, vector);
+    inflate(deflated, vector, observable);
     return kappa;
   }
 

@@ -1,7 +1,7 @@
 import { type MeanTable, emptyMeanTable, fillMeanTable } from './mean-table.js';
 import type { MetricModel } from './metric-model.js';
 import type { OperatorMean } from './operator-mean.js';
-import { addJumpForms, addGeneratorUnits } from './jump-forms.js';
+import { addJumpForms, addJumpTensor, addPairedTensor, flowFromTensor, generatorFromTensor } from './jump-forms.js';
 import { type MatrixUnits, matrixUnits } from '../algebra/matrix-units.js';
 import { rotateInto } from './rotate.js';
 import type { ComplexMatrix } from '../linalg/complex-matrix.js';
@@ -37,30 +37,37 @@ export function curvatureForms(model: MetricModel, mean: OperatorMean, paired: b
   const units = matrixUnits(model.algebra);
   const d = units.count;
   const tables = model.frequencies.map(() => emptyMeanTable(n));
-  const rotated = model.jumps.map(() => ({ re: new Float64Array(n * n), im: new Float64Array(n * n) }));
-  const eta = { re: new Float64Array(n * n), im: new Float64Array(n * n) };
-  const generator = { re: new Float64Array(d * d), im: new Float64Array(d * d) };
-  const scratch = new Float64Array(8 * n * n * n + 4 * n * n);
+  const rotated = model.jumps.map(() => parts(n * n));
+  const [eta, square] = [parts(n * n), parts(n * n)];
+  const [generator, sandwich] = [parts(d * d), parts(d * d)];
+  const scratch = new Float64Array(Math.max(2 * n * n, 2 * d));
   const usedJumps = model.jumps.flatMap((jump, index) => {
     const weight = paired ? jump.pairWeight : 1;
     return weight > 0 ? [{ index, weight, group: jump.group }] : [];
   });
+  // A frequency whose jumps are all partners left out has nothing to add.
+  const tensors = model.frequencies.map((_, k) => (usedJumps.some(({ group }) => group === k) ? parts(d * d) : null));
   const forms = [0, 1, 2, 3].map(() => new Float64Array(d * d));
   const [metricRe, metricIm, curvatureRe, curvatureIm] = forms;
 
   function evaluate(lambda: Float64Array, u: ComplexMatrix | null): void {
     for (const form of forms) form.fill(0);
-    tables.forEach((table, k) => fillMeanTable(table, mean, lambda, model.frequencies[k]));
-    model.jumps.forEach((jump, j) => rotateInto(rotated[j], jump.matrix, u, scratch));
-    flowInto(eta, model, rotated, lambda);
-    generator.re.fill(0);
-    generator.im.fill(0);
-    model.jumps.forEach((jump, j) => {
-      addGeneratorUnits(generator, units, rotated[j], Math.exp(-jump.frequency / 2), scratch);
-    });
+    clear(sandwich);
+    for (const tensor of tensors) if (tensor) clear(tensor);
     for (const { index, weight, group } of usedJumps) {
-      addJumpForms(forms, units, rotated[index], tables[group], eta, weight, scratch);
+      rotateInto(rotated[index], model.jumps[index].matrix, u, n, scratch);
+      addJumpTensor(tensors[group] as Parts, units, rotated[index], weight);
     }
+    tensors.forEach((tensor, k) => {
+      if (tensor) addPairedTensor(sandwich, units, tensor, model.frequencies[k]);
+    });
+    generatorFromTensor(generator, square, units, sandwich);
+    flowFromTensor(eta, units, sandwich, square, lambda);
+    tensors.forEach((tensor, k) => {
+      if (!tensor) return;
+      fillMeanTable(tables[k], mean, lambda, model.frequencies[k]);
+      addJumpForms(forms, units, tensor, tables[k], eta, scratch);
+    });
     subtractGeneratorPart(forms, generator, d);
   }
   return { units, metricRe, metricIm, curvatureRe, curvatureIm, rotated, eta, generator, tables, usedJumps, evaluate };
@@ -71,38 +78,13 @@ interface Parts {
   readonly im: Float64Array;
 }
 
-/** η = L†ρ in the eigenbasis of ρ: Σ_j e^{−ω_j/2}(2V_jρV_j* − V_j*V_jρ − ρV_j*V_j), blocks only. */
-function flowInto(eta: Parts, model: MetricModel, rotated: readonly Parts[], lambda: Float64Array): void {
-  const n = lambda.length;
-  const { blockOf } = model.algebra;
-  eta.re.fill(0);
-  eta.im.fill(0);
-  model.jumps.forEach((jump, j) => {
-    const { re: vr, im: vi } = rotated[j];
-    const weight = Math.exp(-jump.frequency / 2);
-    for (let a = 0; a < n; a++) {
-      for (let b = 0; b < n; b++) {
-        if (blockOf[a] !== blockOf[b]) continue;
-        let inRe = 0;
-        let inIm = 0;
-        let outRe = 0;
-        let outIm = 0;
-        for (let k = 0; k < n; k++) {
-          const ak = a * n + k;
-          const bk = b * n + k;
-          inRe += lambda[k] * (vr[ak] * vr[bk] + vi[ak] * vi[bk]);
-          inIm += lambda[k] * (vi[ak] * vr[bk] - vr[ak] * vi[bk]);
-          const ka = k * n + a;
-          const kb = k * n + b;
-          outRe += vr[ka] * vr[kb] + vi[ka] * vi[kb];
-          outIm += vr[ka] * vi[kb] - vi[ka] * vr[kb];
-        }
-        const sum = lambda[a] + lambda[b];
-        eta.re[a * n + b] += weight * (2 * inRe - sum * outRe);
-        eta.im[a * n + b] += weight * (2 * inIm - sum * outIm);
-      }
-    }
-  });
+function parts(length: number): Parts {
+  return { re: new Float64Array(length), im: new Float64Array(length) };
+}
+
+function clear({ re, im }: Parts): void {
+  re.fill(0);
+  im.fill(0);
 }
 
 /** curvature −= ½(G·L + (G·L)*), G the metric form and L the generator on matrix units. */

@@ -4,6 +4,7 @@ import { type MeanTable, emptyMeanTable, fillMeanTable } from './mean-table.js';
 import type { MetricModel } from './metric-model.js';
 import { nearDiagonalEigen } from './near-diagonal-eigen.js';
 import type { OperatorMean } from './operator-mean.js';
+import { rotateBackInto, rotateInto } from './rotate.js';
 
 interface Parts {
   readonly re: Float64Array;
@@ -26,7 +27,8 @@ export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms:
   const nn = n * n;
   const parts = (): Parts => ({ re: new Float64Array(nn), im: new Float64Array(nn) });
   const derivations = model.jumps.map(parts);
-  const [la, image, norm, moved, vectors, turned, product, slope] = Array.from({ length: 8 }, parts);
+  const [la, image, norm, moved, vectors, turned, slope] = Array.from({ length: 7 }, parts);
+  const scratch = new Float64Array(2 * nn);
   const values = new Float64Array(n);
   const tables = model.frequencies.map(() => emptyMeanTable(n));
   const { blockOf } = model.algebra;
@@ -62,10 +64,10 @@ export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms:
       tables.forEach((table, k) => fillMeanTable(table, mean, values, model.frequencies[k]));
       clear(slope);
       forms.usedJumps.forEach(({ index, weight, group }) => {
-        conjugateInto(turned, derivations[index], vectors, product, n, true);
+        rotateInto(turned, derivations[index], vectors, n, scratch);
         addFormGradient(slope, tables[group], turned, turned, weight, n, blockOf);
       });
-      conjugateInto(turned, slope, vectors, product, n, false);
+      rotateBackInto(turned, slope, vectors, n, scratch);
       addScaled(out, turned, (0.25 * sign) / step);
     }
   }
@@ -112,38 +114,6 @@ function commutatorInto(out: Parts, v: Parts, a: Parts, n: number): void {
         const kj = k * n + j;
         re += v.re[ik] * a.re[kj] - v.im[ik] * a.im[kj] - a.re[ik] * v.re[kj] + a.im[ik] * v.im[kj];
         im += v.re[ik] * a.im[kj] + v.im[ik] * a.re[kj] - a.re[ik] * v.im[kj] - a.im[ik] * v.re[kj];
-      }
-      out.re[i * n + j] = re;
-      out.im[i * n + j] = im;
-    }
-  }
-}
-
-/** out = W* X W, or W X W* when `inwards` is false. */
-function conjugateInto(out: Parts, x: Parts, w: Parts, product: Parts, n: number, inwards: boolean): void {
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j < n; j++) {
-      let re = 0;
-      let im = 0;
-      for (let k = 0; k < n; k++) {
-        const wk = inwards ? k * n + j : j * n + k;
-        const wi = inwards ? w.im[wk] : -w.im[wk];
-        re += x.re[i * n + k] * w.re[wk] - x.im[i * n + k] * wi;
-        im += x.re[i * n + k] * wi + x.im[i * n + k] * w.re[wk];
-      }
-      product.re[i * n + j] = re;
-      product.im[i * n + j] = im;
-    }
-  }
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j < n; j++) {
-      let re = 0;
-      let im = 0;
-      for (let k = 0; k < n; k++) {
-        const wk = inwards ? k * n + i : i * n + k;
-        const wi = inwards ? -w.im[wk] : w.im[wk];
-        re += w.re[wk] * product.re[k * n + j] - wi * product.im[k * n + j];
-        im += w.re[wk] * product.im[k * n + j] + wi * product.re[k * n + j];
       }
       out.re[i * n + j] = re;
       out.im[i * n + j] = im;

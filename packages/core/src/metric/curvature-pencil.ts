@@ -1,4 +1,4 @@
-import { type ComplexMatrix, addScaledInto, adjoint, zeros } from '../linalg/complex-matrix.js';
+import { type ComplexMatrix, addScaledInto, zeros } from '../linalg/complex-matrix.js';
 import { fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
 import { type Deflation, deflateSymmetric, deflation, inflate } from './deflate.js';
 import { chainPencil } from './chain-pencil.js';
@@ -7,7 +7,7 @@ import { curvatureForms } from './curvature-forms.js';
 import { hermitianFormConverter } from './hermitian-forms.js';
 import type { MetricModel } from './metric-model.js';
 import { type MeanName, operatorMean } from './operator-mean.js';
-import { rotateInto } from './rotate.js';
+import { rotateBackInto, rotateInto } from './rotate.js';
 import type { StateFrame } from './state-frame.js';
 import { smallestPencilWork, symmetricPencilSmallestInto } from '../linalg/symmetric-pencil.js';
 
@@ -44,8 +44,7 @@ export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil
   const converter = hermitianFormConverter(model.algebra, forms.units);
   const d = model.algebra.dimension;
   const n = operator.symmetric ? d : 2 * d;
-  const kernel = model.fixed.length * (operator.symmetric ? 1 : 2);
-  const m = n - kernel;
+  const m = n - (model.fixed.length * n) / d;
   const metric = new Float64Array(n * n);
   const curvature = new Float64Array(n * n);
   const g = new Float64Array(m * m);
@@ -53,20 +52,10 @@ export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil
   const work = new Float64Array(n);
   const vector = new Float64Array(m);
   const pencil = smallestPencilWork(m);
-  const turned = zeros(model.algebra.size);
   const scratch = new Float64Array(2 * model.algebra.size ** 2);
 
-  function kernelInFrame(u: ComplexMatrix | null): Deflation {
-    const vectors = new Float64Array(kernel * n);
-    model.fixed.forEach((f, k) => {
-      rotateInto(turned, f, u, scratch);
-      const x = toCoordinates(model.algebra, turned);
-      vectors.set(x, k * n);
-      if (!operator.symmetric) vectors.set(x, (model.fixed.length + k) * n + d);
-    });
-    return deflation(vectors, kernel, n);
-  }
-
+  const full = new Float64Array(n);
+  const kernelInFrame = kernelDeflation(model, n);
   const inFrame = zeros(model.algebra.size);
   const gradient = curvatureGradient(model, operator, forms);
 
@@ -88,11 +77,11 @@ export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil
     const convert = operator.symmetric ? converter.realPart : converter.doubled;
     convert(forms.metricRe, forms.metricIm, metric);
     convert(forms.curvatureRe, forms.curvatureIm, curvature);
-    const deflated = kernelInFrame(u);
-    deflateSymmetric(deflated, metric, g, work);
-    deflateSymmetric(deflated, curvature, q, work);
+    const kept = kernelInFrame(u);
+    deflateSymmetric(kept, metric, g, work);
+    deflateSymmetric(kept, curvature, q, work);
     const kappa = symmetricPencilSmallestInto(q, g, m, vector, pencil);
-    const x = inflate(deflated, vector);
+    const x = inflate(kept, vector, full);
     fromCoordinates(model.algebra, x.subarray(0, d), inFrame);
     if (!operator.symmetric) addScaledInto(inFrame, fromCoordinates(model.algebra, x.subarray(d)), 0, 1);
     return kappa;
@@ -100,9 +89,34 @@ export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil
 
   function turnedBack(a: ComplexMatrix, u: ComplexMatrix | null): ComplexMatrix {
     const back = zeros(model.algebra.size);
-    rotateInto(back, a, u ? adjoint(u) : null, scratch);
+    rotateBackInto(back, a, u, model.algebra.size, scratch);
     return back;
   }
 
   return { model, mean, at, withGradient };
+}
+
+/**
+ * The fixed points in the frame of a state as a deflation of the real coordinates, of which there are n: D, or 2D where
+ * observables are not self-adjoint. Multiples of the identity look the same in every frame.
+ */
+function kernelDeflation({ algebra, fixed }: MetricModel, n: number): (u: ComplexMatrix | null) => Deflation {
+  const { size, dimension: d } = algebra;
+  const copies = n / d;
+  const vectors = new Float64Array(copies * fixed.length * n);
+  const turned = zeros(size);
+  const x = new Float64Array(d);
+  const scratch = new Float64Array(2 * size * size);
+  let last: Deflation | null = null;
+  return (u) => {
+    if (last && fixed.length === 1) return last;
+    vectors.fill(0);
+    fixed.forEach((f, k) => {
+      rotateInto(turned, f, u, size, scratch);
+      toCoordinates(algebra, turned, x);
+      for (let c = 0; c < copies; c++) vectors.set(x, (c * fixed.length + k) * n + c * d);
+    });
+    last = deflation(vectors, copies * fixed.length, n);
+    return last;
+  };
 }

@@ -36,9 +36,9 @@ export function deflateSymmetric(d: Deflation, a: Float64Array, out: Float64Arra
   }
 }
 
-/** Full vector (length n) of a vector of the leading block. */
-export function inflate(d: Deflation, x: Float64Array): Float64Array {
-  const out = new Float64Array(d.n);
+/** Full vector (length n) of a vector of the leading block, written to out. */
+export function inflate(d: Deflation, x: Float64Array, out: Float64Array): Float64Array {
+  out.fill(0);
   out.set(x);
   for (let k = d.count - 1; k >= 0; k--) reflect(out, d.reflectors.subarray(k * d.n, (k + 1) * d.n), d.n);
   return out;

@@ -1,303 +1,287 @@
-import type { MeanTable } from './mean-table.js';
 import type { MatrixUnits } from '../algebra/matrix-units.js';
+import type { MeanTable } from './mean-table.js';
 
 interface Parts {
   readonly re: Float64Array;
   readonly im: Float64Array;
 }
 
-/** Add w(2 V*AV − {V*V,A}) on matrix units to the D×D complex matrix of the generator; scratch holds 2N² numbers. */
-export function addGeneratorUnits(out: Parts, units: MatrixUnits, v: Parts, w: number, scratch: Float64Array): void {
+/**
+ * Add one jump to the D×D tensor T of jumps of equal frequency, T[(k,l),(a,b)] = Σ_j w_j conj(V_ka) V_lb over matrix units: the
+ * form of A ↦ Σ w V*AV. All forms of those jumps are contractions of it, at no cost that grows with their number.
+ */
+export function addJumpTensor(tensor: Parts, units: MatrixUnits, v: Parts, w: number): void {
   const { size: n, count: d, row, col } = units;
   const { re: vr, im: vi } = v;
-  const sr = scratch.subarray(0, n * n);
-  const si = scratch.subarray(n * n, 2 * n * n);
-  for (let a = 0; a < n; a++) {
-    for (let c = 0; c < n; c++) {
-      let re = 0;
-      let im = 0;
-      for (let k = 0; k < n; k++) {
-        re += vr[k * n + a] * vr[k * n + c] + vi[k * n + a] * vi[k * n + c];
-        im += vr[k * n + a] * vi[k * n + c] - vi[k * n + a] * vr[k * n + c];
-      }
-      sr[a * n + c] = w * re;
-      si[a * n + c] = w * im;
+  const { re, im } = tensor;
+  for (let q = 0, at = 0; q < d; q++) {
+    const k = row[q] * n;
+    const l = col[q] * n;
+    for (let p = 0; p < d; p++, at++) {
+      const xr = w * vr[k + row[p]];
+      const xi = -w * vi[k + row[p]];
+      const yr = vr[l + col[p]];
+      const yi = vi[l + col[p]];
+      re[at] += xr * yr - xi * yi;
+      im[at] += xr * yi + xi * yr;
     }
   }
+}
+
+/**
+ * Add the jumps of one frequency and their adjoints, e^{∓ω/2} each, to the tensor of A ↦ Σ e^{−ω/2}V*AV; T holds one jump of
+ * each pair with weight two. The adjoints have the tensor T[(b,a),(l,k)] at (k,l), (a,b).
+ */
+export function addPairedTensor(out: Parts, units: MatrixUnits, tensor: Parts, omega: number): void {
+  const { count: d, adjoint } = units;
+  const w = Math.exp(-omega / 2) / 2;
+  const mirrored = Math.exp(omega / 2) / 2;
+  for (let q = 0, at = 0; q < d; q++) {
+    for (let p = 0; p < d; p++, at++) {
+      const other = adjoint[p] * d + adjoint[q];
+      out.re[at] += w * tensor.re[at] + mirrored * tensor.re[other];
+      out.im[at] += w * tensor.im[at] + mirrored * tensor.im[other];
+    }
+  }
+}
+
+/** L(A) = Σ e^{−ω/2}(2V*AV − {V*V,A}) as a D×D matrix over units, and K = Σ e^{−ω/2}V*V (N×N), from the tensor of the first sum. */
+export function generatorFromTensor(out: Parts, square: Parts, units: MatrixUnits, tensor: Parts): void {
+  const { size: n, count: d, row, col, index } = units;
+  square.re.fill(0);
+  square.im.fill(0);
+  for (let k = 0; k < n; k++) {
+    const at = index[k * n + k] * d;
+    for (let p = 0; p < d; p++) {
+      square.re[row[p] * n + col[p]] += tensor.re[at + p];
+      square.im[row[p] * n + col[p]] += tensor.im[at + p];
+    }
+  }
+  for (let p = 0; p < d; p++) {
+    for (let q = 0; q < d; q++) {
+      let re = 2 * tensor.re[q * d + p];
+      let im = 2 * tensor.im[q * d + p];
+      if (col[p] === col[q]) {
+        re -= square.re[row[p] * n + row[q]];
+        im -= square.im[row[p] * n + row[q]];
+      }
+      if (row[p] === row[q]) {
+        re -= square.re[col[q] * n + col[p]];
+        im -= square.im[col[q] * n + col[p]];
+      }
+      out.re[p * d + q] = re;
+      out.im[p * d + q] = im;
+    }
+  }
+}
+
+/** η = L†ρ (N×N) at ρ = diag λ: 2 Σ_k λ_k Σ w V_ak conj(V_bk) − (λ_a + λ_b) K_ab, from the same tensor and K. */
+export function flowFromTensor(
+  eta: Parts,
+  units: MatrixUnits,
+  tensor: Parts,
+  square: Parts,
+  lambda: Float64Array,
+): void {
+  const { size: n, count: d, row, col, index, adjoint } = units;
+  for (let p = 0; p < d; p++) {
+    const at = adjoint[p] * d;
+    let re = 0;
+    let im = 0;
+    for (let k = 0; k < n; k++) {
+      re += lambda[k] * tensor.re[at + index[k * n + k]];
+      im += lambda[k] * tensor.im[at + index[k * n + k]];
+    }
+    const here = row[p] * n + col[p];
+    const sum = lambda[row[p]] + lambda[col[p]];
+    eta.re[here] = 2 * re - sum * square.re[here];
+    eta.im[here] = 2 * im - sum * square.im[here];
+  }
+}
+
+/**
+ * Add the metric form and ½<∂A,D[ρ;η]∂A> of the jumps in a tensor, over matrix units. ∂A = VA − AV, so each is a sum of terms
+ * with V from the left twice (one column), from the right twice (one row), and one of each (crossed). forms = [metricRe,
+ * metricIm, curvatureRe, curvatureIm]; work holds 2D numbers.
+ */
+export function addJumpForms(
+  forms: readonly Float64Array[],
+  units: MatrixUnits,
+  tensor: Parts,
+  table: MeanTable,
+  eta: Parts,
+  work: Float64Array,
+): void {
+  columnTerms(forms, units, tensor, table, eta, work);
+  rowTerms(forms, units, tensor, table, eta, work);
+  crossedTerms(forms, units, tensor, table, eta);
+  derivativeTerms(forms, units, tensor, table, eta);
+}
+
+/** At (a,b), (c,b): Σ_k F_kb T[(k,k),(a,c)] and ½ Σ_km η_km T1_kmb T[(k,m),(a,c)]. */
+function columnTerms(
+  [gr, gi, qr, qi]: readonly Float64Array[],
+  { size: n, count: d, row, col, index, blockOf }: MatrixUnits,
+  { re: tr, im: ti }: Parts,
+  { f, left }: MeanTable,
+  { re: er, im: ei }: Parts,
+  work: Float64Array,
+): void {
+  for (let b = 0; b < n; b++) {
+    for (let q = 0; q < d; q++) {
+      const at = row[q] * n + col[q];
+      work[q] = er[at] * left[at * n + b];
+      work[d + q] = ei[at] * left[at * n + b];
+    }
+    for (let p = 0; p < d; p++) {
+      if (blockOf[row[p]] !== blockOf[b]) continue;
+      let g0 = 0;
+      let g1 = 0;
+      for (let k = 0; k < n; k++) {
+        const at = index[k * n + k] * d + p;
+        g0 += f[k * n + b] * tr[at];
+        g1 += f[k * n + b] * ti[at];
+      }
+      let q0 = 0;
+      let q1 = 0;
+      for (let q = 0, at = p; q < d; q++, at += d) {
+        q0 += work[q] * tr[at] - work[d + q] * ti[at];
+        q1 += work[q] * ti[at] + work[d + q] * tr[at];
+      }
+      const at = index[row[p] * n + b] * d + index[col[p] * n + b];
+      gr[at] += g0;
+      gi[at] += g1;
+      qr[at] += q0 / 2;
+      qi[at] += q1 / 2;
+    }
+  }
+}
+
+/** At (a,b), (a,e): Σ_l F_al T[(b,e),(l,l)] and ½ Σ_lm η_ml T2_aml T[(b,e),(l,m)]. */
+function rowTerms(
+  [gr, gi, qr, qi]: readonly Float64Array[],
+  { size: n, count: d, row, col, index, blockOf }: MatrixUnits,
+  { re: tr, im: ti }: Parts,
+  { f, right }: MeanTable,
+  { re: er, im: ei }: Parts,
+  work: Float64Array,
+): void {
+  for (let a = 0; a < n; a++) {
+    for (let p = 0; p < d; p++) {
+      const at = col[p] * n + row[p];
+      work[p] = er[at] * right[a * n * n + at];
+      work[d + p] = ei[at] * right[a * n * n + at];
+    }
+    for (let q = 0; q < d; q++) {
+      if (blockOf[row[q]] !== blockOf[a]) continue;
+      let g0 = 0;
+      let g1 = 0;
+      for (let l = 0; l < n; l++) {
+        const at = q * d + index[l * n + l];
+        g0 += f[a * n + l] * tr[at];
+        g1 += f[a * n + l] * ti[at];
+      }
+      let q0 = 0;
+      let q1 = 0;
+      for (let p = 0, at = q * d; p < d; p++, at++) {
+        q0 += work[p] * tr[at] - work[d + p] * ti[at];
+        q1 += work[p] * ti[at] + work[d + p] * tr[at];
+      }
+      const at = index[a * n + row[q]] * d + index[a * n + col[q]];
+      gr[at] += g0;
+      gi[at] += g1;
+      qr[at] += q0 / 2;
+      qi[at] += q1 / 2;
+    }
+  }
+}
+
+/** At p = (a,b), q = (c,e), and conjugated at q, p: −F_cb T[q,p] and −½(Σ_k η_kc T1_kcb T[(k,e),p] + Σ_m η_mb T2_cmb T[q,(a,m)]). */
+function crossedTerms(
+  [gr, gi, qr, qi]: readonly Float64Array[],
+  { size: n, count: d, row, col, index, blockOf }: MatrixUnits,
+  { re: tr, im: ti }: Parts,
+  { f, left, right }: MeanTable,
+  { re: er, im: ei }: Parts,
+): void {
+  for (let q = 0; q < d; q++) {
+    const c = row[q];
+    const e = col[q];
+    for (let p = 0; p < d; p++) {
+      const a = row[p];
+      const b = col[p];
+      const here = q * d + p;
+      const mirror = p * d + q;
+      const g0 = f[c * n + b] * tr[here];
+      const g1 = f[c * n + b] * ti[here];
+      gr[mirror] -= g0;
+      gi[mirror] -= g1;
+      gr[here] -= g0;
+      gi[here] += g1;
+      let q0 = 0;
+      let q1 = 0;
+      for (let k = 0; k < n; k++) {
+        if (blockOf[k] === blockOf[c]) {
+          const t = left[(k * n + c) * n + b];
+          const at = index[k * n + e] * d + p;
+          const xr = t * er[k * n + c];
+          const xi = t * ei[k * n + c];
+          q0 += xr * tr[at] - xi * ti[at];
+          q1 += xr * ti[at] + xi * tr[at];
+        }
+        if (blockOf[k] === blockOf[b]) {
+          const t = right[(c * n + k) * n + b];
+          const at = q * d + index[a * n + k];
+          const xr = t * er[k * n + b];
+          const xi = t * ei[k * n + b];
+          q0 += xr * tr[at] - xi * ti[at];
+          q1 += xr * ti[at] + xi * tr[at];
+        }
+      }
+      qr[mirror] -= q0 / 2;
+      qi[mirror] -= q1 / 2;
+      qr[here] -= q0 / 2;
+      qi[here] += q1 / 2;
+    }
+  }
+}
+
+/** At (a,b), (c,e) in one block: ½(η_ac Σ_m T1_acm T[(b,e),(m,m)] + η_eb Σ_k T2_keb T[(k,k),(a,c)]). */
+function derivativeTerms(
+  [, , qr, qi]: readonly Float64Array[],
+  { size: n, count: d, row, col, index, blockOf }: MatrixUnits,
+  { re: tr, im: ti }: Parts,
+  { left, right }: MeanTable,
+  { re: er, im: ei }: Parts,
+): void {
   for (let p = 0; p < d; p++) {
     const a = row[p];
     const b = col[p];
     for (let q = 0; q < d; q++) {
       const c = row[q];
       const e = col[q];
-      const xr = vr[c * n + a];
-      const xi = -vi[c * n + a];
-      const yr = vr[e * n + b];
-      const yi = vi[e * n + b];
-      let re = 2 * w * (xr * yr - xi * yi);
-      let im = 2 * w * (xr * yi + xi * yr);
-      if (b === e) {
-        re -= sr[a * n + c];
-        im -= si[a * n + c];
-      }
-      if (a === c) {
-        re -= sr[e * n + b];
-        im -= si[e * n + b];
-      }
-      out.re[p * d + q] += re;
-      out.im[p * d + q] += im;
-    }
-  }
-}
-
-/**
- * Add one jump's part of the metric form and of ½<∂A,D[ρ;η]∂A> over matrix units.
- * ∂e_ab = Σ_k V_ka e_kb − Σ_l V_bl e_al has at most 2N entries; the eight products of two such terms are summed
- * with the index that stays fixed (b, then a) outermost. forms = [metricRe, metricIm, curvatureRe, curvatureIm].
- */
-export function addJumpForms(
-  forms: readonly Float64Array[],
-  units: MatrixUnits,
-  v: Parts,
-  table: MeanTable,
-  eta: Parts,
-  weight: number,
-  scratch: Float64Array,
-): void {
-  columnTerms(forms, units, v, table, eta, weight, scratch);
-  rowTerms(forms, units, v, table, eta, weight, scratch);
-}
-
-/** Terms in which the first factor is Σ_k V_ka e_kb: b fixed. */
-// eslint-disable-next-line max-lines-per-function -- a numeric kernel whose loops share their products
-function columnTerms(
-  forms: readonly Float64Array[],
-  units: MatrixUnits,
-  v: Parts,
-  table: MeanTable,
-  eta: Parts,
-  weight: number,
-  scratch: Float64Array,
-): void {
-  const [gr, gi, qr, qi] = forms;
-  const { size: n, count: d, index, blockOf } = units;
-  const { re: vr, im: vi } = v;
-  const { re: er, im: ei } = eta;
-  const { f, left, right } = table;
-  const wr = scratch.subarray(0, n * n);
-  const wi = scratch.subarray(n * n, 2 * n * n);
-  const xr = scratch.subarray(2 * n * n, 3 * n * n);
-  const xi = scratch.subarray(3 * n * n, 4 * n * n);
-  const half = weight / 2;
-  for (let b = 0; b < n; b++) {
-    // W[a,m] = Σ_k conj(V_ka) η_km T1_kmb and X[e,c] = Σ_m V_em η_mb T2_cmb.
-    for (let a = 0; a < n; a++) {
+      if (blockOf[a] !== blockOf[c]) continue;
+      const be = index[b * n + e] * d;
+      const ac = index[a * n + c];
+      let x0 = 0;
+      let x1 = 0;
+      let y0 = 0;
+      let y1 = 0;
       for (let m = 0; m < n; m++) {
-        let re = 0;
-        let im = 0;
-        let re2 = 0;
-        let im2 = 0;
-        for (let k = 0; k < n; k++) {
-          const t = left[(k * n + m) * n + b];
-          const yr = t * er[k * n + m];
-          const yi = t * ei[k * n + m];
-          const cr = vr[k * n + a];
-          const ci = -vi[k * n + a];
-          re += cr * yr - ci * yi;
-          im += cr * yi + ci * yr;
-          const s = right[(m * n + k) * n + b];
-          const zr = s * er[k * n + b];
-          const zi = s * ei[k * n + b];
-          const ar = vr[a * n + k];
-          const ai = vi[a * n + k];
-          re2 += ar * zr - ai * zi;
-          im2 += ar * zi + ai * zr;
-        }
-        wr[a * n + m] = re;
-        wi[a * n + m] = im;
-        xr[a * n + m] = re2;
-        xi[a * n + m] = im2;
+        const unit = index[m * n + m];
+        const t = left[(a * n + c) * n + m];
+        x0 += t * tr[be + unit];
+        x1 += t * ti[be + unit];
+        const s = right[(m * n + e) * n + b];
+        y0 += s * tr[unit * d + ac];
+        y1 += s * ti[unit * d + ac];
       }
-    }
-    for (let a = 0; a < n; a++) {
-      const p = index[a * n + b];
-      if (p < 0) continue;
-      for (let c = 0; c < n; c++) {
-        // Same column: Σ_k conj(V_ka) F_kb V_kc and Σ_m W[a,m] V_mc.
-        const same = index[c * n + b];
-        if (same >= 0) {
-          let g0 = 0;
-          let g1 = 0;
-          let q0 = 0;
-          let q1 = 0;
-          for (let k = 0; k < n; k++) {
-            const ur = vr[k * n + c];
-            const ui = vi[k * n + c];
-            const fr = f[k * n + b] * vr[k * n + a];
-            const fi = -f[k * n + b] * vi[k * n + a];
-            g0 += fr * ur - fi * ui;
-            g1 += fr * ui + fi * ur;
-            q0 += wr[a * n + k] * ur - wi[a * n + k] * ui;
-            q1 += wr[a * n + k] * ui + wi[a * n + k] * ur;
-          }
-          gr[p * d + same] += weight * g0;
-          gi[p * d + same] += weight * g1;
-          qr[p * d + same] += half * q0;
-          qi[p * d + same] += half * q1;
-        }
-        const hr = vr[c * n + a];
-        const hi = -vi[c * n + a];
-        const fr = f[c * n + b] * hr;
-        const fi = f[c * n + b] * hi;
-        for (let e = 0; e < n; e++) {
-          const q = index[c * n + e];
-          if (q < 0) continue;
-          // Crossed: −conj(V_ca) F_cb V_eb, −W[a,c] V_eb, −conj(V_ca) X[e,c].
-          const ur = vr[e * n + b];
-          const ui = vi[e * n + b];
-          gr[p * d + q] -= weight * (fr * ur - fi * ui);
-          gi[p * d + q] -= weight * (fr * ui + fi * ur);
-          const kr = xr[e * n + c];
-          const ki = xi[e * n + c];
-          let q0 = -(wr[a * n + c] * ur - wi[a * n + c] * ui) - (hr * kr - hi * ki);
-          let q1 = -(wr[a * n + c] * ui + wi[a * n + c] * ur) - (hr * ki + hi * kr);
-          // Both in columns: η_eb Σ_k conj(V_ka) T2_keb V_kc.
-          if (blockOf[e] === blockOf[b]) {
-            let s0 = 0;
-            let s1 = 0;
-            for (let k = 0; k < n; k++) {
-              const t = right[(k * n + e) * n + b];
-              const ar = t * vr[k * n + a];
-              const ai = -t * vi[k * n + a];
-              s0 += ar * vr[k * n + c] - ai * vi[k * n + c];
-              s1 += ar * vi[k * n + c] + ai * vr[k * n + c];
-            }
-            const yr = er[e * n + b];
-            const yi = ei[e * n + b];
-            q0 += yr * s0 - yi * s1;
-            q1 += yr * s1 + yi * s0;
-          }
-          qr[p * d + q] += half * q0;
-          qi[p * d + q] += half * q1;
-        }
-      }
-    }
-  }
-}
-
-/** Terms in which the first factor is −Σ_l V_bl e_al: a fixed. */
-// eslint-disable-next-line max-lines-per-function -- a numeric kernel whose loops share their products
-function rowTerms(
-  forms: readonly Float64Array[],
-  units: MatrixUnits,
-  v: Parts,
-  table: MeanTable,
-  eta: Parts,
-  weight: number,
-  scratch: Float64Array,
-): void {
-  const [gr, gi, qr, qi] = forms;
-  const { size: n, count: d, index, blockOf } = units;
-  const { re: vr, im: vi } = v;
-  const { re: er, im: ei } = eta;
-  const { f, left, right } = table;
-  const zr = scratch.subarray(0, n * n);
-  const zi = scratch.subarray(n * n, 2 * n * n);
-  const yr = scratch.subarray(2 * n * n, 3 * n * n);
-  const yi = scratch.subarray(3 * n * n, 4 * n * n);
-  const half = weight / 2;
-  for (let a = 0; a < n; a++) {
-    // Z[e,c] = Σ_m η_am T1_ame V_mc and Y[b,m] = Σ_l conj(V_bl) η_ml T2_aml.
-    for (let e = 0; e < n; e++) {
-      for (let c = 0; c < n; c++) {
-        let re = 0;
-        let im = 0;
-        let re2 = 0;
-        let im2 = 0;
-        for (let m = 0; m < n; m++) {
-          const t = left[(a * n + m) * n + e];
-          const hr = t * er[a * n + m];
-          const hi = t * ei[a * n + m];
-          const ur = vr[m * n + c];
-          const ui = vi[m * n + c];
-          re += hr * ur - hi * ui;
-          im += hr * ui + hi * ur;
-          const s = right[(a * n + c) * n + m];
-          const kr = s * er[c * n + m];
-          const ki = s * ei[c * n + m];
-          const cr = vr[e * n + m];
-          const ci = -vi[e * n + m];
-          re2 += cr * kr - ci * ki;
-          im2 += cr * ki + ci * kr;
-        }
-        zr[e * n + c] = re;
-        zi[e * n + c] = im;
-        yr[e * n + c] = re2;
-        yi[e * n + c] = im2;
-      }
-    }
-    for (let b = 0; b < n; b++) {
-      const p = index[a * n + b];
-      if (p < 0) continue;
-      for (let e = 0; e < n; e++) {
-        // Same row: Σ_l conj(V_bl) F_al V_el and Σ_m Y[b,m] V_em.
-        const same = index[a * n + e];
-        if (same >= 0) {
-          let g0 = 0;
-          let g1 = 0;
-          let q0 = 0;
-          let q1 = 0;
-          for (let l = 0; l < n; l++) {
-            const ur = vr[e * n + l];
-            const ui = vi[e * n + l];
-            const fr = f[a * n + l] * vr[b * n + l];
-            const fi = -f[a * n + l] * vi[b * n + l];
-            g0 += fr * ur - fi * ui;
-            g1 += fr * ui + fi * ur;
-            q0 += yr[b * n + l] * ur - yi[b * n + l] * ui;
-            q1 += yr[b * n + l] * ui + yi[b * n + l] * ur;
-          }
-          gr[p * d + same] += weight * g0;
-          gi[p * d + same] += weight * g1;
-          qr[p * d + same] += half * q0;
-          qi[p * d + same] += half * q1;
-        }
-        const hr = vr[b * n + e];
-        const hi = -vi[b * n + e];
-        for (let c = 0; c < n; c++) {
-          const q = index[c * n + e];
-          if (q < 0) continue;
-          // Crossed: −conj(V_be) F_ae V_ac, −conj(V_be) Z[e,c], −V_ac Y[b,e].
-          const ur = vr[a * n + c];
-          const ui = vi[a * n + c];
-          const fr = f[a * n + e] * ur;
-          const fi = f[a * n + e] * ui;
-          gr[p * d + q] -= weight * (hr * fr - hi * fi);
-          gi[p * d + q] -= weight * (hr * fi + hi * fr);
-          const kr = zr[e * n + c];
-          const ki = zi[e * n + c];
-          let q0 = -(hr * kr - hi * ki) - (ur * yr[b * n + e] - ui * yi[b * n + e]);
-          let q1 = -(hr * ki + hi * kr) - (ur * yi[b * n + e] + ui * yr[b * n + e]);
-          // Both in rows: η_ac Σ_l conj(V_bl) T1_acl V_el.
-          if (blockOf[a] === blockOf[c]) {
-            let s0 = 0;
-            let s1 = 0;
-            for (let l = 0; l < n; l++) {
-              const t = left[(a * n + c) * n + l];
-              const ar = t * vr[b * n + l];
-              const ai = -t * vi[b * n + l];
-              s0 += ar * vr[e * n + l] - ai * vi[e * n + l];
-              s1 += ar * vi[e * n + l] + ai * vr[e * n + l];
-            }
-            const wr = er[a * n + c];
-            const wi = ei[a * n + c];
-            q0 += wr * s0 - wi * s1;
-            q1 += wr * s1 + wi * s0;
-          }
-          qr[p * d + q] += half * q0;
-          qi[p * d + q] += half * q1;
-        }
-      }
+      const xr = er[a * n + c];
+      const xi = ei[a * n + c];
+      const yr = er[e * n + b];
+      const yi = ei[e * n + b];
+      qr[p * d + q] += (xr * x0 - xi * x1 + yr * y0 - yi * y1) / 2;
+      qi[p * d + q] += (xr * x1 + xi * x0 + yr * y1 + yi * y0) / 2;
     }
   }
 }

@@ -1,7 +1,8 @@
 import { type BlockAlgebra, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
 import { blockEigen } from '../algebra/block-eigen.js';
-import { type ComplexMatrix, multiply, multiplyAdjointSecond, zeros } from '../linalg/complex-matrix.js';
+import { type ComplexMatrix, zeros } from '../linalg/complex-matrix.js';
 import { logarithmicMean } from './logarithmic-mean.js';
+import { rotateBackInto } from './rotate.js';
 import { type StateFrame, fromFrame } from './state-frame.js';
 
 /**
@@ -21,16 +22,17 @@ export interface StateParameters {
 
 /** All of H (D parameters). */
 export function hermitianParameters(algebra: BlockAlgebra): StateParameters {
+  const n = algebra.size;
+  const [h, scaled] = [zeros(n), zeros(n)];
+  const scratch = new Float64Array(2 * n * n);
   return {
     count: algebra.dimension,
     frame(x) {
-      const { values, vectors } = blockEigen(algebra, fromCoordinates(algebra, x));
+      const { values, vectors } = blockEigen(algebra, fromCoordinates(algebra, x, h));
       return { lambda: exponentials(values), u: vectors };
     },
     pullBack({ lambda, u }, gradient, out) {
       // dρ = Λ(λ_a,λ_b) dH_ab in the frame: the divided difference of exp.
-      const n = algebra.size;
-      const scaled = zeros(n);
       const mean = expectation(lambda, gradient);
       for (let a = 0; a < n; a++) {
         for (let b = 0; b < n; b++) {
@@ -40,7 +42,8 @@ export function hermitianParameters(algebra: BlockAlgebra): StateParameters {
           scaled.im[a * n + b] = w * gradient.im[a * n + b];
         }
       }
-      out.set(toCoordinates(algebra, u ? multiply(u, multiplyAdjointSecond(scaled, u)) : scaled));
+      rotateBackInto(scaled, scaled, u, n, scratch);
+      toCoordinates(algebra, scaled, out);
     },
     of({ lambda, u }) {
       return toCoordinates(algebra, fromFrame({ lambda: lambda.map(Math.log), u }));
