@@ -1,4 +1,6 @@
 import type { SheetDocument } from '@thalweg/format';
+import { proseWidth, type Layout } from './layout.js';
+import { wrap, wrapPieces } from './wrap.js';
 
 type ModelSummary = SheetDocument['model'];
 
@@ -9,17 +11,21 @@ const SYMMETRY_WORDS: Record<ModelSummary['symmetry'], string> = {
   none: 'not symmetric',
 };
 
-/** One line on a model: its blocks, dimension, symmetry and whether it is primitive. */
-export function modelLine({ blocks, dimension, symmetry, primitive }: ModelSummary): string {
+const BLOCKS_SHOWN = 4;
+
+/** The head of a result: title, then blocks, dimension, symmetry and whether it is primitive. */
+export function modelHead(model: ModelSummary, layout: Layout, { structure = true } = {}): string[] {
+  const { blocks, dimension, symmetry, primitive, title } = model;
+  const pieces = [`blocks ${blockList(blocks)}`, `dimension ${dimension}`];
+  if (structure) pieces.push(SYMMETRY_WORDS[symmetry], primitive === true ? 'primitive' : 'not primitive');
   return [
-    `blocks [${shortList(blocks)}]`,
-    `dimension ${dimension}`,
-    SYMMETRY_WORDS[symmetry],
-    primitive ? 'primitive' : 'not primitive',
-  ].join(' · ');
+    ...wrap(title ?? 'Untitled model', proseWidth(layout), 2).map((line) => layout.colours.bold(line)),
+    ...wrapPieces(pieces, ' · ', proseWidth(layout), 2),
+  ];
 }
 
-function shortList(blocks: readonly number[]): string {
-  if (blocks.length <= 8) return blocks.join(',');
-  return `${blocks.slice(0, 4).join(',')},…(${blocks.length} blocks)`;
+/** `[2,1]`; many blocks as the first few and their number. */
+export function blockList(blocks: readonly number[]): string {
+  const shown = blocks.length > 2 * BLOCKS_SHOWN ? `${blocks.slice(0, BLOCKS_SHOWN).join(',')},…` : blocks.join(',');
+  return blocks.length > 2 * BLOCKS_SHOWN ? `[${shown}] (${blocks.length} of them)` : `[${shown}]`;
 }

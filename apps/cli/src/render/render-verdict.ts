@@ -1,32 +1,74 @@
-import { bracketText } from '@thalweg/core';
 import type { VerdictDocument } from '@thalweg/format';
-import type { Layout } from './render-sheet.js';
-import { wrap } from './wrap.js';
+import { boundTexts } from './bound-texts.js';
+import { constantName } from './constant-name.js';
+import { decimalColumn } from './decimal-column.js';
+import type { Layout } from './layout.js';
+import { minus, shortNumber } from './number-text.js';
+import { hanging } from './wrap.js';
 
 type ClaimVerdict = VerdictDocument['claims'][number];
 
-/** One line per claim: the answer, the claim, and the bracket that decides it. */
+const ANSWER = 'undecided'.length + 2;
+
+/** Ends closer than this, relative, are shown with the digits of a closed bracket. */
+const CLOSE_ENDS = 1e-8;
+
+/** One line for each claim: the answer, the claim, and what decides it. */
 export function renderVerdict(verdict: VerdictDocument, layout: Layout): string {
-  const lines = verdict.claims.flatMap((claim) => claimLines(claim, layout));
-  for (const check of verdict.checks ?? []) {
-    const size =
-      check.value === undefined
-        ? ''
-        : `: off by ${check.value.toPrecision(3)}, error bound ${(check.bound ?? 0).toPrecision(3)}`;
-    lines.push(...wrap(`${check.holds ? 'agrees' : 'differs'}  ${check.name}${size}`, layout.width, 2));
-  }
+  const lines = verdict.verb === 'verify' ? witnessLines(verdict, layout) : claimLines(verdict.claims, layout);
   return `${lines.join('\n')}\n`;
 }
 
-function claimLines(claim: ClaimVerdict, { width, colours }: Layout): string[] {
-  const paint = { holds: colours.green, refuted: colours.red, undecided: colours.yellow }[claim.verdict];
-  const name =
-    claim.mean !== undefined && claim.mean !== 'logarithmic' ? `${claim.constant}:${claim.mean}` : claim.constant;
-  const sign = claim.relation === 'at-least' ? '≥' : '≤';
-  const { lower, upper } = bracketText(claim.bracket.lower, claim.bracket.upper, false);
-  const grades = [claim.bracket.lower?.grade, claim.bracket.upper?.grade].map((grade) => grade ?? 'nothing known');
-  const text = `${name} ${sign} ${claim.value}   lower ${lower ?? '—'} (${grades[0]}), upper ${upper ?? '—'} (${grades[1]})`;
-  const [first = '', ...rest] = wrap(text, width, 11);
-  const note = claim.note === undefined ? [] : wrap(`note: ${claim.note}`, width, 11).map((line) => colours.dim(line));
-  return [`${paint(claim.verdict.padEnd(9))}  ${first.trimStart()}`, ...rest, ...note];
+/** Columns are aligned over all claims and lines are never broken, so that a log can be read and searched line by line. */
+function claimLines(claims: readonly ClaimVerdict[], layout: Layout): string[] {
+  const texts = claims.map((claim) => boundTexts(claim.constant, claim.bracket, isNarrow(claim)));
+  const names = padded(claims.map(({ constant: id, mean }) => constantName({ id, mean })));
+  const bounds = padded(claims.map(({ relation, value }) => `${sign(relation)} ${minus(String(value))}`));
+  const lower = decimalColumn(texts.map((text) => text.lower));
+  const upper = decimalColumn(texts.map((text) => text.upper));
+  const lowerGrade = padded(claims.map(({ bracket }) => bracket.lower?.grade ?? ''));
+  return claims.map((claim, k) => {
+    const ends = `lower ${lower[k]} ${lowerGrade[k]}  upper ${upper[k]} ${claim.bracket.upper?.grade ?? ''}`;
+    return painted(`${claim.verdict.padEnd(ANSWER)}${names[k]} ${bounds[k]}  ${ends}`.trimEnd(), claim.verdict, layout);
+  });
+}
+
+/** What a witness was found to show. */
+function witnessLines({ claims, checks = [] }: VerdictDocument, layout: Layout): string[] {
+  return claims.flatMap(({ constant: id, mean, value, verdict, note }) => {
+    const [check] = checks;
+    const size =
+      check?.value === undefined
+        ? ''
+        : `, off by ${shortNumber(check.value)}, error bound ${shortNumber(check.bound ?? 0)}`;
+    const found = note ?? `evaluated afresh${size}`;
+    const name = constantName({ id, mean });
+    return hangingAnswer(verdict, `${name} ≤ ${minus(value.toPrecision(10))}: ${found}`, layout);
+  });
+}
+
+function hangingAnswer(verdict: ClaimVerdict['verdict'], text: string, layout: Layout): string[] {
+  const [first = '', ...rest] = hanging(verdict, text, layout.width, ANSWER);
+  return [painted(first, verdict, layout), ...rest];
+}
+
+function painted(line: string, verdict: ClaimVerdict['verdict'], { colours }: Layout): string {
+  const paint = { holds: colours.green, refuted: colours.red, undecided: colours.yellow }[verdict];
+  return paint(verdict) + line.slice(verdict.length);
+}
+
+function isNarrow({ bracket: { lower, upper } }: ClaimVerdict): boolean {
+  const low = lower?.value ?? null;
+  const high = upper?.value ?? null;
+  if (low === null || high === null) return false;
+  return Math.abs(high - low) <= CLOSE_ENDS * Math.max(Math.abs(low), Math.abs(high));
+}
+
+function sign(relation: ClaimVerdict['relation']): string {
+  return relation === 'at-least' ? '≥' : '≤';
+}
+
+function padded(texts: readonly string[]): string[] {
+  const width = Math.max(0, ...texts.map((text) => text.length));
+  return texts.map((text) => text.padEnd(width));
 }

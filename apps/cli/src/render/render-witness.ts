@@ -1,43 +1,30 @@
+import { bracketText } from '@thalweg/core';
 import type { WitnessDocument } from '@thalweg/format';
-import type { Layout } from './render-sheet.js';
+import { constantName } from './constant-name.js';
+import { proseWidth, type Layout } from './layout.js';
+import { matrixLines } from './matrix-lines.js';
 import { wrap } from './wrap.js';
 
-const LARGEST_SHOWN = 6;
-
-type MatrixText = WitnessDocument['state'];
+const INDENT = 4;
 
 /** A witness for people: the value, the state and the observable. */
-export function renderWitness(witness: WitnessDocument, { width, colours }: Layout): string {
-  const name =
-    witness.mean !== undefined && witness.mean !== 'logarithmic'
-      ? `${witness.constant}:${witness.mean}`
-      : witness.constant;
-  const ancilla = witness.amplification > 1 ? ` with an ancilla of side ${witness.amplification}` : '';
-  return `${[
-    ...wrap(`${name} ≤ ${witness.value.toPrecision(10).replace('-', '−')}${ancilla}, shown by`, width, 2).map((line) =>
-      colours.bold(line),
-    ),
+export function renderWitness(witness: WitnessDocument, layout: Layout): string {
+  const { colours } = layout;
+  const { constant, mean, value, amplification } = witness;
+  const ancilla = amplification > 1 ? ` with an ancilla of side ${amplification}` : '';
+  const bound = bracketText(null, { value }, false).upper ?? '';
+  const what = witness.observable === null ? 'this state' : 'this state and observable';
+  const head = `${constantName({ id: constant, mean })} ≤ ${bound}, shown by ${what}${ancilla}`;
+  const lines = [
+    ...wrap(head, proseWidth(layout), 2).map((line) => colours.bold(line)),
+    ...part('state', witness.state, layout),
+    ...(witness.observable === null ? [] : part('observable', witness.observable, layout)),
     '',
-    '  state',
-    ...matrixLines(witness.state),
-    ...(witness.observable === null ? [] : ['', '  observable', ...matrixLines(witness.observable)]),
-    '',
-    ...wrap(`model ${witness.model}`, width, 2).map((line) => colours.dim(line)),
-  ].join('\n')}\n`;
+    ...wrap(`model ${witness.model}`, layout.width, 2).map((line) => colours.dim(line)),
+  ];
+  return `${lines.join('\n')}\n`;
 }
 
-function matrixLines(matrix: MatrixText): string[] {
-  const parts = Array.isArray(matrix) ? { re: matrix, im: null } : 're' in matrix ? matrix : null;
-  if (parts === null || parts.re.length > LARGEST_SHOWN) return ['    too large to show; --json or -o gives it'];
-  return (parts.re as readonly (readonly number[])[]).map((row, i) => {
-    const cells = row.map((x, j) =>
-      entryText(x, Number((parts.im as readonly (readonly number[])[] | null)?.[i]?.[j] ?? 0)),
-    );
-    return `    ${cells.join('  ')}`;
-  });
-}
-
-function entryText(re: number, im: number): string {
-  const real = re.toFixed(6).replace('-', '−').padStart(9);
-  return im === 0 ? real : `${real}${im < 0 ? '−' : '+'}${Math.abs(im).toFixed(6)}i`;
+function part(name: string, matrix: WitnessDocument['state'], { width }: Layout): string[] {
+  return ['', `  ${name}`, ...(matrixLines(matrix, width, INDENT) ?? ['    too large to show; --json or -o gives it'])];
 }

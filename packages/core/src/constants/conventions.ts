@@ -70,7 +70,7 @@ const ENTROPY_DEFINITIONS: Record<EntropyConstant, Record<ConventionName, string
 };
 
 const DEFINITIONS: Record<Exclude<ConstantId, EntropyConstant>, string> = {
-  gap: 'largest λ with −<A,LA>_σ ≥ λ ‖A−EA‖²_σ for all observables A, <A,B>_σ = Tr σ^{1/2}A*σ^{1/2}B',
+  gap: 'largest λ with −⟨A,LA⟩_σ ≥ λ ‖A−EA‖²_σ for all observables A, ⟨A,B⟩_σ = Tr σ^{1/2}A*σ^{1/2}B',
   ge: 'largest K with ‖P_tA‖²_ρ ≤ e^{-2Kt} ‖A‖²_{P_t†ρ} for all states ρ, observables A and t ≥ 0',
   cge: 'largest K with ‖P_tA‖²_ρ ≤ e^{-2Kt} ‖A‖²_{P_t†ρ} for L⊗id_k and all states and observables of M⊗M_k, every k',
   be: 'largest K with Γ₂(A,A) ≥ K Γ(A,A) for all observables A',

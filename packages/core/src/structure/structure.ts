@@ -93,7 +93,6 @@ function markovNotes({ hermitian, unital, completelyPositive }: MarkovChecks): s
       `The semigroup is not completely positive (smallest eigenvalue ${completelyPositive.smallestEigenvalue.toPrecision(6)}).`,
     );
   }
-  if (completelyPositive.byForm) notes.push('Complete positivity follows from the jumps; no eigenvalue was computed.');
   return notes;
 }
 

@@ -16,6 +16,6 @@ export function modelSummary(structure: Structure, digest: string, title: string
     dimension: structure.algebra.dimension,
     blocks: [...structure.algebra.blocks],
     symmetry: SYMMETRY[structure.symmetry.kind],
-    primitive: structure.fixedPoints?.primitive ?? false,
+    primitive: structure.fixedPoints?.primitive ?? null,
   };
 }

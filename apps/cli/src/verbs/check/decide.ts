@@ -1,4 +1,4 @@
-import type { ConstantDocument, VerdictDocument } from '@thalweg/format';
+import { endValue, type ConstantDocument, type VerdictDocument } from '@thalweg/format';
 import type { Claim } from '../option-values.js';
 
 type ClaimVerdict = VerdictDocument['claims'][number];
@@ -11,8 +11,8 @@ type ClaimVerdict = VerdictDocument['claims'][number];
 export function decideClaim(claim: Claim, row: ConstantDocument, slack: number): ClaimVerdict {
   const { relation, bound, constant } = claim;
   const tolerance = slack * Math.max(1, Math.abs(bound));
-  const lower = valueOf(row.lower, -Infinity);
-  const upper = valueOf(row.upper, Infinity);
+  const lower = row.lower && endValue(row.id, row.lower);
+  const upper = row.upper && endValue(row.id, row.upper);
   const verdict =
     relation === 'at-least'
       ? between(lower !== null && lower >= bound - tolerance, upper !== null && upper < bound - tolerance)
@@ -30,8 +30,4 @@ export function decideClaim(claim: Claim, row: ConstantDocument, slack: number):
 
 function between(holds: boolean, fails: boolean): ClaimVerdict['verdict'] {
   return holds ? 'holds' : fails ? 'refuted' : 'undecided';
-}
-
-function valueOf(end: ConstantDocument['lower'], unbounded: number): number | null {
-  return end === null ? null : (end.value ?? unbounded);
 }

@@ -1,0 +1,102 @@
+import type { ConstantDocument } from '@thalweg/format';
+import { boundTexts } from './bound-texts.js';
+import { constantName } from './constant-name.js';
+import { decimalColumn } from './decimal-column.js';
+import type { Layout } from './layout.js';
+import { unitOf, type Units } from './units.js';
+
+/** One row of the table, as text. */
+interface Cells {
+  readonly name: string;
+  readonly lower: string;
+  readonly lowerGrade: string;
+  readonly upper: string;
+  readonly upperGrade: string;
+  readonly closed: boolean;
+}
+
+const GAP = '  ';
+const CLOSED = 'closed';
+
+/** Brackets below each other, each end with its grade; where they do not fit side by side, one end a line. */
+export function sheetTable(constants: readonly ConstantDocument[], units: Units, layout: Layout): string[] {
+  const rows = aligned(constants.map((row) => cellsOf(row, units)));
+  const width = GAP.length + widthOf(rows);
+  return width <= layout.width ? wideTable(rows, layout) : narrowTable(constants, units, layout);
+}
+
+function cellsOf(row: ConstantDocument, units: Units): Cells {
+  const { lower, upper } = boundTexts(row.id, row, row.closed, unitOf(row, units));
+  return {
+    name: constantName(row),
+    lower,
+    lowerGrade: row.lower?.grade ?? '',
+    upper,
+    upperGrade: row.upper?.grade ?? '',
+    closed: row.closed,
+  };
+}
+
+/** Cells of a column get the same width, numbers with their points below each other. */
+function aligned(rows: readonly Cells[]): Cells[] {
+  const lower = decimalColumn(rows.map((row) => row.lower));
+  const upper = decimalColumn(rows.map((row) => row.upper));
+  const name = column(['constant', ...rows.map((row) => row.name)]).slice(1);
+  const lowerGrade = column(rows.map((row) => row.lowerGrade));
+  const upperGrade = column(rows.map((row) => row.upperGrade));
+  return rows.map((row, k) => ({
+    name: name[k] ?? '',
+    lower: lower[k] ?? '',
+    lowerGrade: lowerGrade[k] ?? '',
+    upper: upper[k] ?? '',
+    upperGrade: upperGrade[k] ?? '',
+    closed: row.closed,
+  }));
+}
+
+function wideTable(rows: readonly Cells[], { colours }: Layout): string[] {
+  const [first] = rows;
+  if (first === undefined) return [];
+  const endWidth = (value: string, grade: string) => value.length + GAP.length + grade.length;
+  const head = [
+    'constant'.padEnd(first.name.length),
+    'lower end'.padEnd(endWidth(first.lower, first.lowerGrade)),
+    'upper end',
+  ].join(`${GAP} `);
+  const lines = rows.map(({ name, lower, lowerGrade, upper, upperGrade, closed }) =>
+    [
+      colours.bold(name),
+      `${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}`,
+      `${upper}${GAP}${colours.dim(upperGrade)}`,
+      closed ? colours.green(CLOSED) : '',
+    ].join(`${GAP} `),
+  );
+  return [colours.bold(GAP + head), GAP + '─'.repeat(widthOf(rows)), ...lines.map((line) => (GAP + line).trimEnd())];
+}
+
+function narrowTable(constants: readonly ConstantDocument[], units: Units, { colours }: Layout): string[] {
+  const rows = constants.map((row) => cellsOf(row, units));
+  const values = decimalColumn(rows.flatMap(({ lower, upper }) => [lower, upper]));
+  return rows.flatMap(({ name, lowerGrade, upperGrade, closed }, k) => {
+    const [lower = '', upper = ''] = values.slice(2 * k, 2 * k + 2);
+    return [
+      `${GAP}${colours.bold(name)}${closed ? `${GAP}${colours.green(CLOSED)}` : ''}`,
+      `${GAP}${GAP}lower${GAP}${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}`.trimEnd(),
+      `${GAP}${GAP}upper${GAP}${upper}${GAP}${colours.dim(upperGrade)}`.trimEnd(),
+    ];
+  });
+}
+
+function widthOf(rows: readonly Cells[]): number {
+  const [first] = rows;
+  if (first === undefined) return 0;
+  const { name, lower, lowerGrade, upper, upperGrade } = first;
+  const cells = [name, lower + GAP + lowerGrade, upper + GAP + upperGrade];
+  const closed = rows.some((row) => row.closed) ? GAP.length + 1 + CLOSED.length : 0;
+  return cells.join(`${GAP} `).length + closed;
+}
+
+function column(texts: readonly string[]): string[] {
+  const width = Math.max(0, ...texts.map((text) => text.length));
+  return texts.map((text) => text.padEnd(width));
+}
