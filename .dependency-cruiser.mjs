@@ -40,6 +40,23 @@ export default {
       from: { path: '^(packages|apps)/[^/]+/src' },
       to: { circular: true, viaOnly: { dependencyTypesNot: ['type-only'] } },
     },
+    {
+      name: 'checker-stands-alone',
+      severity: 'error',
+      comment:
+        'What proves a result shares no code with what found it: matrix storage, the algebra and the model itself only.',
+      from: { path: '^packages/core/src/checker/' },
+      to: {
+        path: '^(packages/core/src|node_modules)/',
+        pathNot: [
+          '^packages/core/src/checker/',
+          '^packages/core/src/errors\\.ts$',
+          '^packages/core/src/linalg/(complex|sparse)-matrix\\.ts$',
+          '^packages/core/src/algebra/block-algebra\\.ts$',
+          '^packages/core/src/generator/(generator|apply-generator)\\.ts$',
+        ],
+      },
+    },
     { name: 'everything-resolves', severity: 'error', from: {}, to: { couldNotResolve: true } },
     {
       name: 'sources-do-not-import-tests',

@@ -90,6 +90,12 @@ test.each([
     "export * from '../../../packages/core/src/matrix.js';",
     'other-packages-through-their-index',
   ],
+  [
+    'the checker imports a solver',
+    'packages/core/src/checker/check-certificate.ts',
+    "export { one } from '../matrix.js';",
+    'checker-stands-alone',
+  ],
   ['two modules import each other', 'packages/core/src/matrix.ts', "export { one } from './index.js';", 'no-cycles'],
   ['an import leads nowhere', 'packages/core/src/matrix.ts', "export * from './nowhere.js';", 'everything-resolves'],
 ])('%s: refused', async (_title, path, text, rule) => {

@@ -8,7 +8,10 @@ import type { ProgrammeIterate } from '../programme/programme-options.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
 import { CERTIFY_LIFT_SIDE, CERTIFY_LIFT_UNKNOWNS, LIFT_CLOSED } from '../tolerances.js';
+import type { Generator } from '../generator/generator.js';
 import { draftCertificate } from './draft-certificate.js';
+import { exactCertificate } from './exact-certificate.js';
+import { rationalDraft } from './rational-draft.js';
 
 /** A certificate that passed the checker, and how it was found. */
 export interface MadeCertificate {
@@ -70,7 +73,8 @@ export function makeCertificate(
     return { ...none, reason: stopped ? 'stopped' : 'exhausted', note: 'no ansatz has a lift within the limits' };
   }
   const { lift, rung, reason } = found;
-  const certificate = { ...draftCertificate(found.canonical, lift), constant };
+  const draft = { ...draftCertificate(found.canonical, lift), constant };
+  const certificate = exactOrNull(generator, draft, lift.optimum, options) ?? draft;
   const verdict = checkCertificate(generator, certificate);
   if (!verdict.holds) {
     const failed = verdict.conditions.find(({ holds }) => !holds);
@@ -84,4 +88,22 @@ export function makeCertificate(
     reason,
     note: open ? `the lift stays below cbe = ${ceiling}` : null,
   };
+}
+
+/** The same lift over the rationals, when the model is rational and it passes. */
+function exactOrNull(
+  generator: Generator,
+  draft: LiftCertificate,
+  optimum: number,
+  options: CertifyOptions,
+): LiftCertificate | null {
+  const rationalised = rationalDraft(draft);
+  if (!rationalised) return null;
+  return exactCertificate({
+    algebra: generator.algebra,
+    draft: rationalised,
+    optimum,
+    accepts: (candidate) => checkCertificate(generator, candidate).holds,
+    stop: options.stop ?? (() => false),
+  });
 }

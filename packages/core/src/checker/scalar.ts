@@ -9,11 +9,9 @@ export function rationalOf(x: Scalar): Rational {
   return typeof x === 'number' ? rationalFromDouble(x) : x;
 }
 
-/** A double within a unit in the last place. */
+/** The largest double that is not above x. */
 export function doubleOf(x: Scalar): number {
-  if (typeof x === 'number') return x;
-  const { lo, hi } = intervalFromRational(x);
-  return Math.abs(hi) === Infinity ? lo : hi;
+  return typeof x === 'number' ? x : intervalFromRational(x).lo;
 }
 
 export function intervalOf(x: Scalar): Interval {
