@@ -25,8 +25,8 @@ export interface CoefficientRows {
 /** Entries of one unknown; coordinates distinct. */
 export interface RowEntries {
   readonly unknown: number;
-  readonly coordinates: readonly number[];
-  readonly values: readonly number[];
+  readonly coordinates: ArrayLike<number>;
+  readonly values: ArrayLike<number>;
 }
 
 /** `rows` must come in order of decreasing length. */
@@ -38,14 +38,11 @@ export function coefficientRows(rows: readonly RowEntries[], width: number): Coe
   const value = new Float64Array(start[count]);
   const prefix = new Int32Array(count);
   rows.forEach((row, t) => {
-    const order = row.coordinates.map((_, k) => k).sort((a, b) => row.coordinates[a] - row.coordinates[b]);
-    order.forEach((k, p) => {
-      coordinate[start[t] + p] = row.coordinates[k];
-      value[start[t] + p] = row.values[k];
-    });
+    coordinate.set(row.coordinates, start[t]);
+    value.set(row.values, start[t]);
   });
   for (let t = count - 1, top = 0; t >= 0; t--) {
-    if (start[t + 1] > start[t]) top = Math.max(top, coordinate[start[t + 1] - 1] + 1);
+    for (let e = start[t]; e < start[t + 1]; e++) top = Math.max(top, coordinate[e] + 1);
     prefix[t] = top;
   }
   let denseCount = 0;

@@ -1,5 +1,5 @@
 import { type ProgrammeBlock } from './programme.js';
-import { coefficientRows, type CoefficientRows, type RowEntries } from './coefficient-rows.js';
+import { coefficientRows, type CoefficientRows } from './coefficient-rows.js';
 import { type Component } from './split-blocks.js';
 import { type SparseMatrix } from '../linalg/sparse-matrix.js';
 
@@ -25,17 +25,11 @@ export interface ConePattern {
   readonly leading: Int32Array;
 }
 
-/** One real entry of a coefficient: position p ≤ q of the component, 0 or 1 for real or imaginary part. */
-interface Entry {
-  readonly p: number;
-  readonly q: number;
-  readonly part: number;
-  readonly value: number;
-}
-
+/** The coefficient of one unknown: keys 2 (p · size + q) + part of its real entries, p ≤ q, part 1 for imaginary ones. */
 interface Row {
   readonly unknown: number;
-  readonly entries: Entry[];
+  readonly keys: Int32Array;
+  readonly values: Float64Array;
 }
 
 /** `include` tells which unknowns to keep. */
@@ -50,45 +44,68 @@ export function conePattern(
   const rows: Row[] = [];
   for (const { unknown, matrix } of block.coefficients) {
     if (!include(unknown)) continue;
-    const entries = upperEntries(matrix, indices, local);
-    if (entries.length > 0) rows.push({ unknown, entries });
+    const row = upperEntries(unknown, matrix, indices, local);
+    if (row.keys.length > 0) rows.push(row);
   }
-  rows.sort((a, b) => b.entries.length - a.entries.length || a.unknown - b.unknown);
+  rows.sort((a, b) => b.keys.length - a.keys.length || a.unknown - b.unknown);
   const { order, leading } = orderIndices(rows, size);
   const place = new Int32Array(size);
   order.forEach((p, k) => (place[p] = k));
-  const numbered = numberCoordinates(rows, place, size);
+  const renumbered = rows.map((row) => renumber(row, place, size));
+  const keys = orderKeys(renumbered, size);
+  const coordinate = new Int32Array(2 * size * size);
+  keys.forEach((key, c) => (coordinate[key] = c));
+  const complexConstant = upperEntries(-1, block.constant, indices, local).keys.some((key) => (key & 1) === 1);
   return {
     block: number,
     size,
-    complex: numbered.complex || upperEntries(block.constant, indices, local).some((entry) => entry.part === 1),
-    indices: Int32Array.from(order, (p) => indices[p]),
-    rows: coefficientRows(numbered.rows, numbered.row.length),
-    row: numbered.row,
-    col: numbered.col,
-    imaginary: numbered.imaginary,
+    complex: complexConstant || keys.some((key) => (key & 1) === 1),
+    indices: order.map((p) => indices[p]),
+    rows: coefficientRows(
+      renumbered.map(({ unknown, keys: used, values }) => ({
+        unknown,
+        coordinates: used.map((key) => coordinate[key]),
+        values,
+      })),
+      keys.length,
+    ),
+    row: keys.map((key) => Math.floor((key >> 1) / size)),
+    col: keys.map((key) => (key >> 1) % size),
+    imaginary: Uint8Array.from(keys, (key) => key & 1),
     leading,
   };
 }
 
-/** The upper triangle of (A + A*)/2 restricted to the component. */
-function upperEntries(a: SparseMatrix, indices: Int32Array, local: Int32Array): Entry[] {
-  const entries: Entry[] = [];
-  for (let p = 0; p < indices.length; p++) {
+/** The upper triangle of A restricted to the component. */
+function upperEntries(unknown: number, a: SparseMatrix, indices: Int32Array, local: Int32Array): Row {
+  const size = indices.length;
+  const keys: number[] = [];
+  const values: number[] = [];
+  for (let p = 0; p < size; p++) {
     const i = indices[p];
     for (let e = a.rowStart[i]; e < a.rowStart[i + 1]; e++) {
       const q = local[a.colIndex[e]];
       if (q < p) continue;
-      if (Math.abs(a.re[e]) > 0) entries.push({ p, q, part: 0, value: a.re[e] });
-      if (q > p && Math.abs(a.im[e]) > 0) entries.push({ p, q, part: 1, value: a.im[e] });
+      const key = 2 * (p * size + q);
+      if (Math.abs(a.re[e]) > 0) {
+        keys.push(key);
+        values.push(a.re[e]);
+      }
+      if (q > p && Math.abs(a.im[e]) > 0) {
+        keys.push(key + 1);
+        values.push(a.im[e]);
+      }
     }
   }
-  return entries;
+  return { unknown, keys: Int32Array.from(keys), values: Float64Array.from(values) };
 }
 
+/** Rows of the component in order of their last use, latest first. */
 function orderIndices(rows: readonly Row[], size: number): { order: Int32Array; leading: Int32Array } {
   const lastUse = new Int32Array(size).fill(-1);
-  rows.forEach(({ entries }, t) => entries.forEach(({ p, q }) => (lastUse[p] = lastUse[q] = t)));
+  rows.forEach(({ keys }, t) => {
+    for (const key of keys) lastUse[Math.floor((key >> 1) / size)] = lastUse[(key >> 1) % size] = t;
+  });
   const order = Int32Array.from({ length: size }, (_, p) => p).sort((a, b) => lastUse[b] - lastUse[a] || a - b);
   const leading = new Int32Array(rows.length);
   for (let t = rows.length - 1, k = 0; t >= 0; t--) {
@@ -98,36 +115,27 @@ function orderIndices(rows: readonly Row[], size: number): { order: Int32Array; 
   return { order, leading };
 }
 
-interface Numbered {
-  readonly rows: RowEntries[];
-  readonly row: Int32Array;
-  readonly col: Int32Array;
-  readonly imaginary: Uint8Array;
-  readonly complex: boolean;
+/** Keys in the new numbering, off-diagonal values times √2. */
+function renumber({ unknown, keys, values }: Row, place: Int32Array, size: number): Row {
+  const newKeys = new Int32Array(keys.length);
+  const newValues = new Float64Array(keys.length);
+  for (let e = 0; e < keys.length; e++) {
+    const part = keys[e] & 1;
+    const p = place[Math.floor((keys[e] >> 1) / size)];
+    const q = place[(keys[e] >> 1) % size];
+    newKeys[e] = 2 * (Math.min(p, q) * size + Math.max(p, q)) + part;
+    // A transposed position holds the conjugate.
+    newValues[e] = (p === q ? 1 : Math.SQRT2) * (part === 1 && p > q ? -values[e] : values[e]);
+  }
+  return { unknown, keys: newKeys, values: newValues };
 }
 
-/** Coordinates in order of their last use, latest first, then by position. */
-function numberCoordinates(rows: readonly Row[], place: Int32Array, size: number): Numbered {
-  const key = ({ p, q, part }: Entry): number =>
-    2 * (Math.min(place[p], place[q]) * size + Math.max(place[p], place[q])) + part;
-  const lastUse = new Map<number, number>();
-  rows.forEach(({ entries }, t) => entries.forEach((entry) => lastUse.set(key(entry), t)));
-  const keys = [...lastUse.keys()].sort((a, b) => lastUse.get(b)! - lastUse.get(a)! || a - b);
-  const number = new Map(keys.map((k, c) => [k, c]));
-  const scaled = (entry: Entry): number => {
-    const value = entry.p === entry.q ? entry.value : Math.SQRT2 * entry.value;
-    // A transposed position holds the conjugate.
-    return entry.part === 1 && place[entry.p] > place[entry.q] ? -value : value;
-  };
-  return {
-    rows: rows.map(({ unknown, entries }) => ({
-      unknown,
-      coordinates: entries.map((entry) => number.get(key(entry))!),
-      values: entries.map(scaled),
-    })),
-    row: Int32Array.from(keys, (k) => Math.floor((k >> 1) / size)),
-    col: Int32Array.from(keys, (k) => (k >> 1) % size),
-    imaginary: Uint8Array.from(keys, (k) => k & 1),
-    complex: keys.some((k) => (k & 1) === 1),
-  };
+/** All keys in order of their last use, latest first, then by position. */
+function orderKeys(rows: readonly Row[], size: number): Int32Array {
+  const lastUse = new Int32Array(2 * size * size).fill(-1);
+  rows.forEach(({ keys }, t) => {
+    for (const key of keys) lastUse[key] = t;
+  });
+  const used = Int32Array.from({ length: lastUse.length }, (_, key) => key).filter((key) => lastUse[key] >= 0);
+  return used.sort((a, b) => lastUse[b] - lastUse[a] || a - b);
 }

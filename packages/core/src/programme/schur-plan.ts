@@ -32,15 +32,23 @@ export function schurPlan({ size, rows, row, col, leading, complex }: ConePatter
   const sameAsPrevious = new Uint8Array(count);
   const denseProduct = new Uint8Array(count);
   const wholeMatrix = new Uint8Array(count);
+  const seen = new Int32Array(size);
+  const place = new Int32Array(size);
   let mostTouched = 0;
   for (let t = 0; t < count; t++) {
-    const set = new Set<number>();
-    for (let e = start[t]; e < start[t + 1]; e++) set.add(row[coordinate[e]]).add(col[coordinate[e]]);
-    const list = [...set].sort((a, b) => a - b);
-    const place = new Map(list.map((p, k) => [p, k]));
+    const list: number[] = [];
     for (let e = start[t]; e < start[t + 1]; e++) {
-      entryRow[e] = place.get(row[coordinate[e]])!;
-      entryCol[e] = place.get(col[coordinate[e]])!;
+      for (const p of [row[coordinate[e]], col[coordinate[e]]]) {
+        if (seen[p] === t + 1) continue;
+        seen[p] = t + 1;
+        list.push(p);
+      }
+    }
+    list.sort((a, b) => a - b);
+    list.forEach((p, k) => (place[p] = k));
+    for (let e = start[t]; e < start[t + 1]; e++) {
+      entryRow[e] = place[row[coordinate[e]]];
+      entryCol[e] = place[col[coordinate[e]]];
     }
     const before = t > 0 ? touched.slice(touchedStart[t - 1]) : [];
     sameAsPrevious[t] = Number(

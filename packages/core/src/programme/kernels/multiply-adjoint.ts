@@ -47,8 +47,8 @@ function sharedKernel(): SimdKernel | null {
 }
 
 /**
- * The product in the kernel's memory. Complex rows are packed as [Re | Im] and, for the imaginary part of the product,
- * once more as [Im | −Re]: Re(A B*) = Re A Re Bᵀ + Im A Im Bᵀ and Im(A B*) = Im A Re Bᵀ − Re A Im Bᵀ.
+ * The product in the kernel's memory. Of complex operands, the real rows are followed by the imaginary ones; the four
+ * products of parts come out at once, and Re(A B*) = Re A Re Bᵀ + Im A Im Bᵀ, Im(A B*) = Im A Re Bᵀ − Re A Im Bᵀ.
  */
 export function multiplyBySimd(
   kernel: SimdKernel,
@@ -61,71 +61,87 @@ export function multiplyBySimd(
   for (let from = 0; from === 0 || from < inner; from += SIMD_CHUNK) {
     const length = Math.min(SIMD_CHUNK, inner - from);
     const parts = complex ? 2 : 1;
-    const areas = kernel.reserve(parts * rows, cols, parts * length);
+    const areas = kernel.reserve(parts * rows, parts * cols, length);
     const { data, inner: width } = areas;
-    packRows(data, areas.a, width, a, from, length, rows, complex);
-    if (complex) packTurned(data, areas.a + rows * width, width, a, from, length, rows);
-    packRows(data, areas.b, width, b, from, length, cols, complex);
+    for (let part = 0; part < parts; part++) {
+      packRows(data, areas.a + part * rows * width, width, a, part * a.imaginary + from, length, rows);
+      packRows(data, areas.b + part * cols * width, width, b, part * b.imaginary + from, length, cols);
+    }
     kernel.multiply(areas, parts * rows);
     const add = accumulate || from > 0;
-    unpackRows(data, areas.c, areas.cols, c, 0, rows, cols, factor, add);
-    if (complex) unpackRows(data, areas.c + rows * areas.cols, areas.cols, c, c.imaginary, rows, cols, factor, add);
+    if (complex) unpackComplex(data, areas.c, areas.cols, c, rows, cols, factor, add);
+    else unpackReal(data, areas.c, areas.cols, c, rows, cols, factor, add);
   }
 }
 
 function packRows(
-  data: Float64Array,
+  target: Float64Array,
   at: number,
   width: number,
-  panel: Panel,
-  from: number,
-  length: number,
-  rows: number,
-  complex: boolean,
-): void {
-  for (let r = 0, target = at; r < rows; r++, target += width) {
-    const source = panel.start + r * panel.stride + from;
-    for (let k = 0; k < length; k++) data[target + k] = panel.data[source + k];
-    if (complex) {
-      const imaginary = source + panel.imaginary;
-      for (let k = 0; k < length; k++) data[target + length + k] = panel.data[imaginary + k];
-    } else if (length < width) data[target + length] = 0;
-  }
-}
-
-function packTurned(
-  data: Float64Array,
-  at: number,
-  width: number,
-  panel: Panel,
-  from: number,
-  length: number,
-  rows: number,
-): void {
-  for (let r = 0, target = at; r < rows; r++, target += width) {
-    const source = panel.start + r * panel.stride + from;
-    const imaginary = source + panel.imaginary;
-    for (let k = 0; k < length; k++) data[target + k] = panel.data[imaginary + k];
-    for (let k = 0; k < length; k++) data[target + length + k] = -panel.data[source + k];
-  }
-}
-
-function unpackRows(
-  data: Float64Array,
-  from: number,
-  width: number,
-  c: Panel,
+  { data, start, stride }: Panel,
   shift: number,
+  length: number,
+  rows: number,
+): void {
+  const first = start + shift;
+  if (stride === width && length === width) {
+    target.set(data.subarray(first, first + rows * stride), at);
+    return;
+  }
+  for (let r = 0; r < rows; r++) {
+    const out = at + r * width;
+    const source = first + r * stride;
+    // A native copy of a row costs about as much as this many entries.
+    if (length > 16) target.set(data.subarray(source, source + length), out);
+    else for (let k = 0; k < length; k++) target[out + k] = data[source + k];
+    if (length < width) target[out + length] = 0;
+  }
+}
+
+function unpackReal(
+  source: Float64Array,
+  from: number,
+  width: number,
+  { data, start, stride }: Panel,
+  rows: number,
+  cols: number,
+  factor: number,
+  accumulate: boolean,
+): void {
+  if (!accumulate && factor === 1 && stride === width && cols === width) {
+    data.set(source.subarray(from, from + rows * width), start);
+    return;
+  }
+  for (let r = 0; r < rows; r++) {
+    const row = from + r * width;
+    const out = start + r * stride;
+    if (accumulate) for (let s = 0; s < cols; s++) data[out + s] += factor * source[row + s];
+    else for (let s = 0; s < cols; s++) data[out + s] = factor * source[row + s];
+  }
+}
+
+function unpackComplex(
+  source: Float64Array,
+  from: number,
+  width: number,
+  { data, start, stride, imaginary }: Panel,
   rows: number,
   cols: number,
   factor: number,
   accumulate: boolean,
 ): void {
   for (let r = 0; r < rows; r++) {
-    const source = from + r * width;
-    const target = c.start + r * c.stride + shift;
-    if (accumulate) for (let s = 0; s < cols; s++) c.data[target + s] += factor * data[source + s];
-    else for (let s = 0; s < cols; s++) c.data[target + s] = factor * data[source + s];
+    const upper = from + r * width;
+    const lower = upper + rows * width;
+    const out = start + r * stride;
+    if (!accumulate) {
+      data.fill(0, out, out + cols);
+      data.fill(0, out + imaginary, out + imaginary + cols);
+    }
+    for (let s = 0; s < cols; s++) {
+      data[out + s] += factor * (source[upper + s] + source[lower + cols + s]);
+      data[out + imaginary + s] += factor * (source[lower + s] - source[upper + cols + s]);
+    }
   }
 }
 
