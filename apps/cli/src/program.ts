@@ -58,6 +58,17 @@ export function createProgram(runVerb: RunVerb): Command {
     .addOption(meanOption())
     .addHelpText('after', examples(['thalweg check qubit.json --at-least cge=1/2 --at-most mlsi=1']));
 
+  addEvidenceVerbs(program, runVerb);
+
+  addVerb(program, runVerb, 'completion', 'print a completion script for a shell')
+    .addArgument(withWords(new Argument('<shell>', 'which shell'), SHELLS))
+    .addHelpText('after', examples(['source <(thalweg completion bash)', 'thalweg completion fish | source']));
+
+  return program;
+}
+
+/** What makes evidence for an end of a bracket, and what checks it. */
+function addEvidenceVerbs(program: Command, runVerb: RunVerb): void {
   addVerb(program, runVerb, 'witness', 'find the best upper bound of a constant, or its value at a given state')
     .addArgument(modelArgument())
     .addArgument(withWords(new Argument('<constant>', 'which constant'), CONSTANT_WORDS))
@@ -83,12 +94,6 @@ export function createProgram(runVerb: RunVerb): Command {
     .addArgument(new Argument('<evidence>', 'witness or certificate (JSON file, - for standard input)'))
     .option('--model <model>', 'the model it speaks about (JSON file)')
     .addHelpText('after', examples(['thalweg verify w.json --model qubit.json']));
-
-  addVerb(program, runVerb, 'completion', 'print a completion script for a shell')
-    .addArgument(withWords(new Argument('<shell>', 'which shell'), SHELLS))
-    .addHelpText('after', examples(['source <(thalweg completion bash)', 'thalweg completion fish | source']));
-
-  return program;
 }
 
 function addVerb(program: Command, runVerb: RunVerb, name: VerbName, summary: string): Command {

@@ -27,8 +27,17 @@ printf '%s\\n' "\${COMPREPLY[@]}"`;
 }
 
 test('verbs', async () => {
-  expect(await offers('')).toEqual(['inspect', 'constants', 'check', 'witness', 'verify', 'completion', 'help']);
-  expect(await offers('c')).toEqual(['constants', 'check', 'completion']);
+  expect(await offers('')).toEqual([
+    'inspect',
+    'constants',
+    'check',
+    'witness',
+    'certify',
+    'verify',
+    'completion',
+    'help',
+  ]);
+  expect(await offers('c')).toEqual(['constants', 'check', 'certify', 'completion']);
   expect(await offers('--json', 'w')).toEqual(['witness']);
   expect(await offers('--seed', '3', 'w')).toEqual(['witness']);
 });

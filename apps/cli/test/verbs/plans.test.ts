@@ -3,6 +3,7 @@ import { planCheck } from '../../src/verbs/check/plan.js';
 import { planCompletion } from '../../src/verbs/completion/plan.js';
 import { planConstants } from '../../src/verbs/constants/plan.js';
 import { planInspect } from '../../src/verbs/inspect/plan.js';
+import { planCertify } from '../../src/verbs/certify/plan.js';
 import { planVerify } from '../../src/verbs/verify/plan.js';
 import { planWitness } from '../../src/verbs/witness/plan.js';
 
@@ -77,6 +78,14 @@ test('the mean of witness: in the constant first, then --mean, then logarithmic'
   expect(meanOf('ge:left', 'right')).toBe('left');
   expect(meanOf('ge', 'right')).toBe('right');
   expect(meanOf('ge')).toBe('logarithmic');
+});
+
+test('certify takes the constants that a lift bounds', () => {
+  const plan = planCertify({ model: 'm.json', constant: 'cge', verbose: true }, machine);
+  expect(plan).toMatchObject({ model: 'm.json', constant: 'cge', output: null, verbose: true });
+  expect(() => planCertify({ model: 'm.json', constant: 'gap' }, machine)).toThrow(
+    'constant: expected one of cge, ge, clsi, mlsi, got "gap"',
+  );
 });
 
 test('completion knows three shells', () => {

@@ -21,7 +21,7 @@ const MOST_TERMS = 2000;
 const DENOMINATORS = [12n, 720n, 2n ** 40n];
 
 /** How far below the optimum K is put, relative to max(1, |K|), when no simple fraction is reached. */
-const BACK_OFF = 5e-7;
+const BACK_OFF = 1e-7;
 
 export interface ExactRequest {
   readonly algebra: BlockAlgebra;

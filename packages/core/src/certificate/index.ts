@@ -1,4 +1,5 @@
 export {
+  certificateOf,
   makeCertificate,
   type CertificateResult,
   type CertifyOptions,

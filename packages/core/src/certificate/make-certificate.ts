@@ -73,9 +73,7 @@ export function makeCertificate(
     return { ...none, reason: stopped ? 'stopped' : 'exhausted', note: 'no ansatz has a lift within the limits' };
   }
   const { lift, rung, reason } = found;
-  const draft = { ...draftCertificate(found.canonical, lift), constant };
-  const certificate = exactOrNull(generator, draft, lift.optimum, options) ?? draft;
-  const verdict = checkCertificate(generator, certificate);
+  const { certificate, verdict } = certificateOf(generator, found, constant, options);
   if (!verdict.holds) {
     const failed = verdict.conditions.find(({ holds }) => !holds);
     return { ...none, reason, note: `a lift for K = ${lift.curvature} was found, but fails: ${failed?.name}` };
@@ -90,12 +88,24 @@ export function makeCertificate(
   };
 }
 
+/** A lift written down as a certificate, over the rationals where possible, and what the checker says of it. */
+export function certificateOf(
+  generator: Generator,
+  { canonical, lift }: Pick<LadderResult, 'canonical' | 'lift'>,
+  constant: CertifiedConstant,
+  options: Pick<CertifyOptions, 'stop'> = {},
+): { readonly certificate: LiftCertificate; readonly verdict: CertificateVerdict } {
+  const draft = { ...draftCertificate(canonical, lift), constant };
+  const certificate = exactOrNull(generator, draft, lift.optimum, options) ?? draft;
+  return { certificate, verdict: checkCertificate(generator, certificate) };
+}
+
 /** The same lift over the rationals, when the model is rational and it passes. */
 function exactOrNull(
   generator: Generator,
   draft: LiftCertificate,
   optimum: number,
-  options: CertifyOptions,
+  options: Pick<CertifyOptions, 'stop'>,
 ): LiftCertificate | null {
   const rationalised = rationalDraft(draft);
   if (!rationalised) return null;
