@@ -17,18 +17,18 @@ import { basisElement, fromCoordinates } from '../algebra/block-algebra.js';
 import type { End } from '../sheet/bracket.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import { type Structure, analyse } from '../structure/structure.js';
-import { EPSILON, RULE_TOLERANCE } from '../tolerances.js';
+import { DENSE_LIMIT, EPSILON, RULE_TOLERANCE } from '../tolerances.js';
 
-/** A lower end of `cge` from a theorem about the form of the generator, or null when none applies; the best that applies. */
+/**
+ * A lower end of `cge` from a theorem about the form of the generator, or null when none applies; the best that applies. Above
+ * DENSE_LIMIT only tensor products are looked at: the other hypotheses are about all observables.
+ */
 export function completeCurvatureRule(structure: Structure): End | null {
   const known = rules.get(structure);
   if (known !== undefined) return known;
-  const end = best([
-    expectationRule(structure),
-    tensorRule(structure),
-    intertwiningRule(structure),
-    reflectionRule(structure),
-  ]);
+  const direct = [expectationRule, intertwiningRule, reflectionRule];
+  const usable = structure.algebra.dimension <= DENSE_LIMIT ? [...direct, tensorRule] : [tensorRule];
+  const end = best(usable.map((rule) => rule(structure)));
   rules.set(structure, end);
   return end;
 }
@@ -37,6 +37,7 @@ const rules = new WeakMap<Structure, End | null>();
 
 /** A lower end of `ge` that is not one of `cge`: r(½ + 1/N) for r(E−id) with E onto the scalars, tracial. */
 export function curvatureRule(structure: Structure): End | null {
+  if (structure.algebra.dimension > DENSE_LIMIT) return null;
   const rate = expectationRate(structure);
   if (rate === null || !structure.fixedPoints?.primitive) return null;
   const n = structure.algebra.size;
