@@ -3,7 +3,7 @@ import type { CertifiedConstant, LiftCertificate } from '../checker/lift-certifi
 import { carreDuChamp } from '../constants/carre-du-champ.js';
 import { completeBakryEmery } from '../constants/bakry-emery.js';
 import { ThalwegError } from '../errors.js';
-import { type LadderResult, climbLadder } from '../lift/index.js';
+import { type LiftAnsatz, type LadderResult, climbLadder } from '../lift/index.js';
 import type { ProgrammeIterate } from '../programme/programme-options.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
@@ -38,6 +38,8 @@ export interface CertificateResult {
 }
 
 export interface CertifyOptions {
+  /** Only the rungs of the ladder with this ansatz. */
+  readonly ansatz?: LiftAnsatz;
   readonly stop?: () => boolean;
   readonly onIterate?: (record: ProgrammeIterate) => void;
 }

@@ -26,6 +26,8 @@ export interface LadderOptions extends LiftOptions {
   readonly target: number;
   /** Rungs whose form would be larger than this are left out. */
   readonly maxSide: number;
+  /** Only the rungs with this ansatz; all where left out. */
+  readonly ansatz?: LiftAnsatz;
 }
 
 /** From cheap to rich. */
@@ -42,6 +44,7 @@ const LIFT_LADDER: readonly LiftRung[] = [
 export function climbLadder(g: Generator, canonical: CanonicalForm, options: LadderOptions): LadderResult | null {
   let best: LadderResult | null = null;
   for (const rung of LIFT_LADDER) {
+    if (options.ansatz && rung.ansatz !== options.ansatz) continue;
     if (options.stop?.()) return best && { ...best, reason: 'stopped' };
     const rebased = inJumpBasis(canonical, rung.basis);
     if (!rebased || formSide(rebased, rung.ansatz) > options.maxSide) continue;

@@ -16,7 +16,7 @@ const MODELS: [string, Generator][] = [
 ];
 
 /** Corruptions of each model. */
-const COUNT = 500;
+const COUNT = 2500;
 
 /** A number moved by a relative 1e-6 to 1e3, or replaced; always by more than a residual may be. */
 function moved(x: Scalar, random: Random): Scalar {

@@ -7,6 +7,7 @@ import {
   type CertificateVerdict,
   type CertifiedConstant,
   type Condition,
+  type LiftAnsatz,
   type LiftCertificate,
 } from '@thalweg/core';
 import {
@@ -32,15 +33,25 @@ export interface CertifyOutcome {
   readonly iterates: readonly string[];
 }
 
+/** What `certify` asks for: one ansatz at a time, so that a large one can be cut off without losing the result of a small one. */
+export interface CertifyRequest {
+  readonly source: DocumentSource;
+  readonly constant: CertifiedConstant;
+  readonly ansatz: LiftAnsatz;
+  /** Milliseconds since 1970 after which no iteration is begun; null for no limit. */
+  readonly deadline: number | null;
+}
+
 /** Find, write down and check a certificate. */
 export function makeCertificateDocument(
-  { source, constant }: { readonly source: DocumentSource; readonly constant: CertifiedConstant },
+  { source, constant, ansatz, deadline }: CertifyRequest,
   context: TaskContext,
 ): CertifyOutcome {
   const { structure, digest } = markovModel(source);
   const iterates: string[] = [];
   const { made, reason, note } = makeCertificate(structure, constant, {
-    stop: context.isOutOfTime,
+    ansatz,
+    stop: () => context.isOutOfTime() || (deadline !== null && Date.now() >= deadline),
     onIterate: ({ iteration, primalObjective, dualObjective, gap, dualInfeasibility }) => {
       const line = `iteration ${iteration}: objective ${primalObjective.toPrecision(10)} ${dualObjective.toPrecision(10)}, gap ${gap.toExponential(2)}, infeasibility ${dualInfeasibility.toExponential(2)}`;
       iterates.push(line);

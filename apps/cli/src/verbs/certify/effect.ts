@@ -2,7 +2,7 @@ import { writeJson } from '@thalweg/format';
 import { only } from '../../compute/only.js';
 import type { CertifyOutcome } from '../../compute/tasks/certificate-tasks.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
-import { readSource } from '../../input/read-source.js';
+import { type DocumentSource, readSource } from '../../input/read-source.js';
 import type { Output } from '../../output/output.js';
 import { writeFileAtomically } from '../../output/write-file-atomically.js';
 import { renderCertificateVerdict } from '../../render/render-certificate-verdict.js';
@@ -14,8 +14,7 @@ export async function certifyEffect(plan: CertifyPlan, session: Session): Promis
   const { model, constant, verbose, output: file } = plan;
   const source = await readSource(model, session.terminal.stdin);
   const { output } = session;
-  output.progress('climbing the ladder of lifts');
-  const found = await session.compute(plan, async (pool) => only(await pool.run('certify', [{ source, constant }])));
+  const found = await climb(source, plan, session);
   if (verbose) for (const line of found.iterates) output.note(line);
   const { certificate, verdict } = found;
   if (certificate === null || verdict === null) {
@@ -28,6 +27,29 @@ export async function certifyEffect(plan: CertifyPlan, session: Session): Promis
   tellMore(found, output);
   if (file !== null) output.note(`wrote ${file}; check it with: thalweg verify ${file} --model ${model}`);
   return EXIT_STATUS.yes;
+}
+
+/** The small ansatz first; the full one if that leaves a gap, and the better of the two. */
+async function climb(source: DocumentSource, plan: CertifyPlan, session: Session): Promise<CertifyOutcome> {
+  const { constant, timeLimit } = plan;
+  const deadline = timeLimit === null ? null : Date.now() + timeLimit;
+  return session.compute(plan, async (pool) => {
+    session.output.progress('diagonal lifts');
+    const small = only(await pool.run('certify', [{ source, constant, ansatz: 'diagonal', deadline }]));
+    if (small.reason === 'closed') return small;
+    session.output.progress('full lifts');
+    const [full] = await pool.run('certify', [{ source, constant, ansatz: 'full', deadline }]);
+    return full?.done ? better(small, full.result) : { ...small, reason: 'stopped' };
+  });
+}
+
+function better(small: CertifyOutcome, full: CertifyOutcome): CertifyOutcome {
+  const found = boundOf(small) > boundOf(full) ? small : full;
+  return { ...found, reason: full.reason, iterates: [...small.iterates, ...full.iterates] };
+}
+
+function boundOf({ verdict }: CertifyOutcome): number {
+  return verdict?.claims[0]?.bracket.lower?.value ?? -Infinity;
 }
 
 function tellMore({ reason, note }: CertifyOutcome, output: Output): void {
