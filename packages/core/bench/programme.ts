@@ -11,7 +11,8 @@ import { sparseFromTriplets, type Triplet } from '../src/linalg/sparse-matrix.js
 import { type Coefficient, type Programme } from '../src/programme/programme.js';
 import { solveProgramme } from '../src/programme/solve-programme.js';
 import { seededRandom } from '../src/random.js';
-import { depolarisingJumps, liftInstance, smallAnsatz, wideAnsatz } from '../test/programme/support/lift-instance.js';
+import { depolarisingJumps } from '../test/programme/support/gell-mann.js';
+import { liftInstance, smallAnsatz, wideAnsatz } from '../test/programme/support/lift-instance.js';
 import { randomProgramme } from '../test/programme/support/random-programme.js';
 import { rivalSolutions } from '../test/programme/support/reference-solver.js';
 

@@ -142,6 +142,9 @@ export const CLOSED_TOLERANCE = 1e-8;
 /** Lower ends may exceed upper ones by this, relative, before the order of a sheet counts as violated. */
 export const ORDER_TOLERANCE = 1e-9;
 
+/** A vector of which at least this part is left by a projection is orthogonal to rounding; below, it is projected once more. */
+export const REORTHOGONALISE = 0.717;
+
 /** A Krylov space counts as exhausted when the next direction is below this times ε ‖A‖ √dimension. */
 export const KRYLOV_BREAKDOWN = 8;
 
@@ -215,6 +218,9 @@ export const DEPENDENCE_PIVOT = 1e-11;
 
 /** ‖Σ c_j A_j‖/Σ|c_j| for unit A_j below which they are dependent. */
 export const DEPENDENCE_RESIDUAL = 1e-13;
+
+/** Norm of a coefficient, relative to the largest of all, below which it is rounding. */
+export const NEGLIGIBLE_COEFFICIENT = 1e-14;
 
 /** |Σ c_j b_j|/Σ|c_j b_j| above which dependent coefficients contradict the objective. */
 export const OBJECTIVE_CONSISTENCY = 1e-10;

@@ -24,6 +24,8 @@ export interface ConicForm {
   /** Kept unknowns, in the numbering of the programme. */
   readonly unknowns: Int32Array;
   readonly norms: Float64Array;
+  /** 0 without coefficients. */
+  readonly largestNorm: number;
   /** Scaled. */
   readonly objective: Float64Array;
   /** Scaled, flat. */
@@ -65,6 +67,7 @@ export function conicForm(programme: Programme, kept: Int32Array): ConicForm {
     ...layout,
     unknowns: kept,
     norms,
+    largestNorm: norms.reduce((top, norm) => Math.max(top, norm), 0),
     objective: scaledObjective,
     constant,
     objectiveNorm: scaleToUnit(scaledObjective),

@@ -1,11 +1,11 @@
-import { DEPENDENCE_PIVOT, DEPENDENCE_RESIDUAL, OBJECTIVE_CONSISTENCY } from '../tolerances.js';
+import { DEPENDENCE_PIVOT, DEPENDENCE_RESIDUAL, NEGLIGIBLE_COEFFICIENT, OBJECTIVE_CONSISTENCY } from '../tolerances.js';
 import { addProducts, addRowsTimes, BATCH, combineRows, type CoefficientRows } from './coefficient-rows.js';
 import { type ConicForm } from './conic-form.js';
 import { choleskyFactor } from './kernels/cholesky-factor.js';
 import { solveLower, solveLowerAdjoint } from './kernels/triangular-solve.js';
 
 export interface Dependence {
-  /** Positions among the kept unknowns of the form whose coefficients are combinations of earlier ones. */
+  /** Positions among the kept unknowns of the form whose coefficients are combinations of earlier ones, or vanish. */
   readonly dependent: readonly number[];
   /**
    * A scaled y with Σ y_i A_i = 0 and b·y > 0, if some dependent unknown has an objective coefficient that does not follow
@@ -17,7 +17,7 @@ export interface Dependence {
 }
 
 /**
- * Finds coefficients that depend linearly on earlier ones: small pivots of the Cholesky factor of their Gram matrix, each
+ * Finds coefficients that depend linearly on earlier ones, or are rounding beside them: small pivots of the Cholesky factor of their Gram matrix, each
  * then confirmed by the norm of A_i − Σ_j c_j A_j, because a Gram matrix alone cannot tell distances below √ε.
  */
 export function dependentCoefficients(form: ConicForm): Dependence {
@@ -30,7 +30,8 @@ export function dependentCoefficients(form: ConicForm): Dependence {
   const dependent: number[] = [];
   let ray: Float64Array | null = null;
   for (let i = 0; i < m; i++) {
-    if (!skipped[i]) continue;
+    if (isRounding(form, i)) dependent.push(i);
+    if (!skipped[i] || isRounding(form, i)) continue;
     const c = combination(parts, gram, factor, m, i);
     const weight = c.reduce((sum, x) => sum + Math.abs(x), 0);
     if (combinationNorm(parts, c) > DEPENDENCE_RESIDUAL * weight) continue;
@@ -44,6 +45,11 @@ export function dependentCoefficients(form: ConicForm): Dependence {
     if (Math.abs(value) > OBJECTIVE_CONSISTENCY * size) ray ??= c.map((x) => x / value);
   }
   return { dependent, ray, gramFactor: factor };
+}
+
+/** A coefficient that is nothing beside the others, of an unknown without a share in the objective. */
+function isRounding({ norms, largestNorm, objective }: ConicForm, i: number): boolean {
+  return norms[i] < NEGLIGIBLE_COEFFICIENT * largestNorm && !(Math.abs(objective[i]) > 0);
 }
 
 function gramMatrix(parts: readonly CoefficientRows[], m: number): Float64Array {

@@ -114,14 +114,20 @@ function advance(newton: NewtonSystem, measures: Measures, predictor: NewtonStep
   if (!newton.prepare()) return false;
   const mu = measures.complementarity / newton.degree;
   newton.solve(0, null, predictor);
+  if (!isFiniteStep(predictor)) return false;
   newton.measureStep(predictor, 1);
   const shortest = Math.min(predictor.primalLength, predictor.dualLength);
   const exponent = mu > SMALL_BARRIER ? Math.max(1, 3 * shortest * shortest) : 1;
   const ratio = stepComplementarity(newton, predictor) / measures.complementarity;
   const centring = Math.min(1, Math.max(ratio, 0) ** exponent);
   newton.solve(centring * mu, predictor, corrector);
+  if (!isFiniteStep(corrector)) return false;
   newton.measureStep(corrector, 0.9 + 0.09 * shortest);
   return takeStep(newton, corrector);
+}
+
+function isFiniteStep({ x, s }: NewtonStep): boolean {
+  return Number.isFinite(dot(x, x) + dot(s, s));
 }
 
 /** <X + α dX, S + β dS>. */

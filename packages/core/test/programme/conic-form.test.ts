@@ -126,6 +126,14 @@ describe('dependent coefficients', () => {
     expect(dependentCoefficients(form).dependent).toEqual([]);
   });
 
+  it('include coefficients that are rounding beside the others', () => {
+    const tiny = unit(2, 0, 1).map((row) => row.map((x) => 1e-17 * x));
+    const blocks = [symmetricBlock(unit(2, 0), unit(2, 0), unit(2, 1), tiny)];
+    const solution = solveProgramme({ objective: [1, 1, 0], blocks });
+    expect(solution).toMatchObject({ status: 'optimal', dependent: [2] });
+    expectClose(solution.dualObjective, 1, 1e-8, 'optimum');
+  });
+
   it('include coefficients that vanish', () => {
     const zero = [
       [0, 0],

@@ -3,7 +3,8 @@ import { deepestFeasible, strictlyFeasible } from '../../src/programme/deepest-f
 import { seededRandom } from '../../src/random.js';
 import { expectBelow, expectClose } from '../linalg/support/expect-close.js';
 import { diagonalBlock, symmetricBlock, unit } from './support/block.js';
-import { depolarisingJumps, liftInstance, smallAnsatz } from './support/lift-instance.js';
+import { depolarisingJumps } from './support/gell-mann.js';
+import { liftInstance, smallAnsatz } from './support/lift-instance.js';
 import { randomProgramme } from './support/random-programme.js';
 
 describe('deepestFeasible', () => {

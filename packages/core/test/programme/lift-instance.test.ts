@@ -4,15 +4,8 @@ import { solveProgramme } from '../../src/programme/solve-programme.js';
 import { seededRandom } from '../../src/random.js';
 import { expectClose } from '../linalg/support/expect-close.js';
 import { randomUnitary } from '../linalg/support/inputs.js';
-import {
-  depolarisingJumps,
-  gellMann,
-  liftInstance,
-  smallAnsatz,
-  wideAnsatz,
-  type Jumps,
-  type LiftTensor,
-} from './support/lift-instance.js';
+import { depolarisingJumps, gellMann } from './support/gell-mann.js';
+import { liftInstance, smallAnsatz, wideAnsatz, type Jumps, type LiftTensor } from './support/lift-instance.js';
 import { expectOptimal } from './support/optimality.js';
 
 const [sx, , sz] = gellMann(2);
