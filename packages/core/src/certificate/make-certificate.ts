@@ -7,7 +7,7 @@ import { type LiftAnsatz, type LadderResult, climbLadder } from '../lift/index.j
 import type { ProgrammeIterate } from '../programme/programme-options.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
-import { CERTIFY_LIFT_SIDE, CERTIFY_LIFT_UNKNOWNS, LIFT_CLOSED } from '../tolerances.js';
+import { CERTIFY_LIFT_SIDE, CERTIFY_LIFT_UNKNOWNS, CLOSED_TOLERANCE, LIFT_CLOSED } from '../tolerances.js';
 import type { Generator } from '../generator/generator.js';
 import { draftCertificate } from './draft-certificate.js';
 import { exactCertificate } from './exact-certificate.js';
@@ -90,16 +90,33 @@ export function makeCertificate(
   };
 }
 
-/** A lift written down as a certificate, over the rationals where possible, and what the checker says of it. */
+/**
+ * A lift written down as a certificate and what the checker says of it: over the rationals where possible, save that with
+ * `prefer: 'largest'` a rounded one is kept when it proves clearly more than the rational one.
+ */
 export function certificateOf(
   generator: Generator,
   { canonical, lift }: Pick<LadderResult, 'canonical' | 'lift'>,
   constant: CertifiedConstant,
-  options: Pick<CertifyOptions, 'stop'> = {},
-): { readonly certificate: LiftCertificate; readonly verdict: CertificateVerdict } {
+  options: Pick<CertifyOptions, 'stop'> & { readonly prefer?: 'exact' | 'largest' } = {},
+): CheckedCertificate {
+  const checked = (certificate: LiftCertificate): CheckedCertificate => ({
+    certificate,
+    verdict: checkCertificate(generator, certificate),
+  });
   const draft = { ...draftCertificate(canonical, lift), constant };
-  const certificate = exactOrNull(generator, draft, lift.optimum, options) ?? draft;
-  return { certificate, verdict: checkCertificate(generator, certificate) };
+  const rational = exactOrNull(generator, draft, lift.optimum, options);
+  if (!rational) return checked(draft);
+  const exact = checked(rational);
+  if (options.prefer !== 'largest' || exact.verdict.bound >= lift.curvature) return exact;
+  const rounded = checked(draft);
+  const gain = rounded.verdict.bound - exact.verdict.bound;
+  return rounded.verdict.holds && gain > CLOSED_TOLERANCE ? rounded : exact;
+}
+
+interface CheckedCertificate {
+  readonly certificate: LiftCertificate;
+  readonly verdict: CertificateVerdict;
 }
 
 /** The same lift over the rationals, when the model is rational and it passes. */

@@ -1,3 +1,4 @@
+import { certificateOf } from '../certificate/make-certificate.js';
 import {
   type BakryEmeryResult,
   type CompleteBakryEmery,
@@ -95,12 +96,17 @@ function liftFinding(structure: Structure, target: number, stop?: () => boolean)
     ...(stop ? { stop } : {}),
   });
   if (!result) return { kind: 'lift', end: null, reason: 'none' };
-  const { lift, rung, reason } = result;
+  const { rung, reason } = result;
+  const { verdict } = certificateOf(structure.generator, result, 'cge', {
+    prefer: 'largest',
+    ...(stop ? { stop } : {}),
+  });
+  if (!verdict.holds || !verdict.grade) return { kind: 'lift', end: null, reason };
   const end: End = {
-    value: lift.curvature,
-    grade: 'certified',
-    by: `lift of ∂ (${rung.ansatz} form, ${JUMP_WORDS[rung.basis]})`,
-    margin: Math.abs(lift.optimum - lift.curvature),
+    value: verdict.bound,
+    grade: verdict.grade,
+    by: `lift of ∂ (${rung.ansatz} form, ${JUMP_WORDS[rung.basis]}), checked`,
+    ...(verdict.grade === 'exact' ? {} : { margin: verdict.allowance }),
   };
   return { kind: 'lift', end, reason };
 }
