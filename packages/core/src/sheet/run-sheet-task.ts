@@ -96,7 +96,7 @@ function liftFinding(structure: Structure, target: number, stop?: () => boolean)
     ...(stop ? { stop } : {}),
   });
   if (!result) return { kind: 'lift', end: null, reason: 'none' };
-  const { rung, reason } = result;
+  const { lift, rung, reason } = result;
   const { verdict } = certificateOf(structure.generator, result, 'cge', {
     prefer: 'largest',
     ...(stop ? { stop } : {}),
@@ -106,7 +106,7 @@ function liftFinding(structure: Structure, target: number, stop?: () => boolean)
     value: verdict.bound,
     grade: verdict.grade,
     by: `lift of ∂ (${rung.ansatz} form, ${JUMP_WORDS[rung.basis]}), checked`,
-    ...(verdict.grade === 'exact' ? {} : { margin: verdict.allowance }),
+    ...(verdict.grade === 'exact' ? {} : { margin: Math.abs(lift.optimum - verdict.bound) }),
   };
   return { kind: 'lift', end, reason };
 }
