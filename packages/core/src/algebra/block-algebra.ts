@@ -87,30 +87,69 @@ export function toCoordinates(
   return out;
 }
 
+/** `factor` times the coordinates of a Hermitian element, from its entries on and above the diagonal, which are read row by row. */
+export function upperToCoordinates(
+  { blocks, offsets, size: n }: BlockAlgebra,
+  { re, im }: ComplexMatrix,
+  out: Float64Array,
+  factor = 1,
+): Float64Array {
+  const pair = Math.SQRT2 * factor;
+  for (let b = 0, k = 0; b < blocks.length; b++) {
+    const end = offsets[b] + blocks[b];
+    for (let i = offsets[b]; i < end; i++) {
+      out[k++] = factor * re[i * n + i];
+      for (let at = i * n + i + 1, last = i * n + end; at < last; at++, k += 2) {
+        out[k] = pair * re[at];
+        out[k + 1] = pair * im[at];
+      }
+    }
+  }
+  return out;
+}
+
 /** The Hermitian element with the given real coordinates. */
 export function fromCoordinates(
   algebra: BlockAlgebra,
   x: ArrayLike<number>,
   out: ComplexMatrix = zeros(algebra.size),
 ): ComplexMatrix {
-  const { row, col, size: n, dimension } = algebra;
+  const { blocks, offsets, size: n } = algebra;
   const { re, im } = out;
-  re.fill(0);
-  im.fill(0);
-  for (let k = 0; k < dimension; k++) {
-    const i = row[k];
-    const j = col[k];
-    if (i === j) re[i * n + i] = x[k];
-    else if (i < j) {
-      re[i * n + j] = x[k] * Math.SQRT1_2;
-      re[j * n + i] = x[k] * Math.SQRT1_2;
-    } else {
-      im[j * n + i] = x[k] * Math.SQRT1_2;
-      im[i * n + j] = -x[k] * Math.SQRT1_2;
+  if (blocks.length > 1) {
+    re.fill(0);
+    im.fill(0);
+  }
+  for (let b = 0, k = 0; b < blocks.length; b++) {
+    const end = offsets[b] + blocks[b];
+    for (let i = offsets[b]; i < end; i++) {
+      re[i * n + i] = x[k++];
+      im[i * n + i] = 0;
+      for (let at = i * n + i + 1, last = i * n + end; at < last; at++, k += 2) {
+        re[at] = x[k] * Math.SQRT1_2;
+        im[at] = x[k + 1] * Math.SQRT1_2;
+      }
     }
+    mirrorBlock(out, offsets[b], end);
   }
   return out;
 }
+
+/** Fill one block's lower triangle from its upper one, a few rows at a time, so that what is written lies together. */
+function mirrorBlock({ re, im, cols: n }: ComplexMatrix, start: number, end: number): void {
+  for (let from = start; from < end; from += MIRROR_ROWS) {
+    for (let j = from + 1; j < end; j++) {
+      const to = Math.min(from + MIRROR_ROWS, j);
+      for (let i = from, at = j * n + from; i < to; i++, at++) {
+        re[at] = re[i * n + j];
+        im[at] = -im[i * n + j];
+      }
+    }
+  }
+}
+
+/** Eight doubles are a cache line. */
+const MIRROR_ROWS = 16;
 
 /** The k-th element of the orthonormal Hermitian basis. */
 export function basisElement(algebra: BlockAlgebra, k: number): ComplexMatrix {

@@ -1,5 +1,6 @@
-import { fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
-import { applyGenerator } from '../generator/apply-generator.js';
+import { fromCoordinates, toCoordinates, upperToCoordinates } from '../algebra/block-algebra.js';
+import { applyToHermitian } from '../generator/apply-generator.js';
+import { generatorNormBound } from '../generator/generator-norm.js';
 import type { Generator } from '../generator/generator.js';
 import { type ComplexMatrix, identity, multiply, zeros } from '../linalg/complex-matrix.js';
 import { lanczosSmallest } from '../linalg/lanczos.js';
@@ -30,6 +31,7 @@ export function gapMatrixFree(g: Generator, state: ReferenceState | null, random
   const known: Float64Array[] = [
     unitVector(toCoordinates(algebra, state ? matrixFunction(state, Math.sqrt) : identity(algebra.size))),
   ];
+  const zero = FIXED_POINT_TOLERANCE * generatorNormBound(g);
   let matvecs = 0;
   for (;;) {
     const found = lanczosSmallest({
@@ -44,32 +46,64 @@ export function gapMatrixFree(g: Generator, state: ReferenceState | null, random
     matvecs += found.matvecs;
     const [value] = found.values;
     const [residual] = found.residuals;
-    if (Math.abs(value) > FIXED_POINT_TOLERANCE || known.length >= 64) {
+    if (Math.abs(value) > zero || known.length >= 64) {
       return { value, residual, matvecs, fixedPoints: known.length };
     }
     known.push(Float64Array.from(found.vectors[0]));
   }
 }
 
-function tracialOperator(g: Generator) {
+function tracialOperator(g: Generator): (x: Float64Array, y: Float64Array) => void {
   const { algebra } = g;
-  const work = zeros(algebra.size);
-  return (x: Float64Array, y: Float64Array): void => {
-    toCoordinates(algebra, applyGenerator(g, fromCoordinates(algebra, x, work)), y);
-    for (let k = 0; k < y.length; k++) y[k] = -y[k];
+  const [a, image] = [zeros(algebra.size), zeros(algebra.size)];
+  return (x, y) => {
+    fromCoordinates(algebra, x, a);
+    applyToHermitian(g, a, image);
+    upperToCoordinates(algebra, image, y, -1);
   };
 }
 
 /** σ^{1/4} L(σ^{−1/4} · σ^{−1/4}) σ^{1/4}: symmetric when L is KMS-symmetric, which the caller has checked. */
-function kmsOperator(g: Generator, state: ReferenceState) {
+function kmsOperator(g: Generator, state: ReferenceState): (x: Float64Array, y: Float64Array) => void {
   const { algebra } = g;
-  const quarter = matrixFunction(state, (x) => x ** 0.25);
-  const inverse = matrixFunction(state, (x) => x ** -0.25);
-  const sandwich = (outer: ComplexMatrix, a: ComplexMatrix): ComplexMatrix => multiply(outer, multiply(a, outer));
-  return (x: Float64Array, y: Float64Array): void => {
-    toCoordinates(algebra, sandwich(quarter, applyGenerator(g, sandwich(inverse, fromCoordinates(algebra, x)))), y);
-    for (let k = 0; k < y.length; k++) y[k] = -y[k];
+  const [a, image] = [zeros(algebra.size), zeros(algebra.size)];
+  const quarter = sandwichWith(matrixFunction(state, (x) => x ** 0.25));
+  const inverse = sandwichWith(matrixFunction(state, (x) => x ** -0.25));
+  return (x, y) => {
+    fromCoordinates(algebra, x, a);
+    applyToHermitian(g, inverse(a), image);
+    upperToCoordinates(algebra, quarter(image), y, -1);
   };
+}
+
+/** A ↦ WAW for Hermitian W and A, of which the result's upper triangle is used; in place, entry by entry, when W is diagonal. */
+function sandwichWith(w: ComplexMatrix): (a: ComplexMatrix) => ComplexMatrix {
+  const n = w.rows;
+  const diagonal = w.re.every((x, k) => Math.floor(k / n) === k % n || (x === 0 && w.im[k] === 0));
+  if (!diagonal) return (a) => multiply(w, multiply(mirrored(a), w));
+  const values = Float64Array.from({ length: n }, (_, i) => w.re[i * n + i]);
+  return (a) => {
+    for (let i = 0, k = 0; i < n; i++) {
+      for (let j = 0; j < n; j++, k++) {
+        const factor = values[i] * values[j];
+        a.re[k] *= factor;
+        a.im[k] *= factor;
+      }
+    }
+    return a;
+  };
+}
+
+/** Fill the lower triangle from the upper one, in place. */
+function mirrored(a: ComplexMatrix): ComplexMatrix {
+  const n = a.rows;
+  for (let i = 0; i < n; i++) {
+    for (let j = i + 1; j < n; j++) {
+      a.re[j * n + i] = a.re[i * n + j];
+      a.im[j * n + i] = -a.im[i * n + j];
+    }
+  }
+  return a;
 }
 
 function unitVector(v: Float64Array): Float64Array {

@@ -1,118 +1,87 @@
-import { fromCoordinates, projectToAlgebra, toCoordinates } from '../algebra/block-algebra.js';
-import { type ComplexMatrix, addScaledInto, adjoint, zeros } from '../linalg/complex-matrix.js';
+import { fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
+import { type ComplexMatrix, addScaledInto, zeros } from '../linalg/complex-matrix.js';
 import {
   type SparseMatrix,
-  denseTimesSparse,
   sparseAdd,
   sparseAdjoint,
   sparseFromTriplets,
   sparseMultiply,
-  sparseTimesDense,
 } from '../linalg/sparse-matrix.js';
 import type { Generator } from './generator.js';
+import { type SandwichSum, sandwichSum } from './sandwich-sum.js';
 
 export { generatorMatrix } from './generator-matrix.js';
 
 /** L(A) for A in the algebra (N×N); the result is again block-diagonal. */
 export function applyGenerator(g: Generator, a: ComplexMatrix): ComplexMatrix {
-  return projectToAlgebra(g.algebra, applyUnprojected(g, a));
+  const out = applyUnprojected(g, a);
+  clearOutside(g, out);
+  return out;
+}
+
+/** The entries of L(A) on and above the diagonal, for Hermitian A, written to `out`, which is not A; the others are not to be used. */
+export function applyToHermitian(g: Generator, a: ComplexMatrix, out: ComplexMatrix): void {
+  compiled(g).onObservables(a, out, true);
+  addSuperoperator(g, a, out, false);
+  clearOutside(g, out);
 }
 
 /** L(A) with whatever the jumps and H put outside the blocks. */
 export function applyUnprojected(g: Generator, a: ComplexMatrix): ComplexMatrix {
   const out = zeros(g.algebra.size);
-  for (const { matrix, adjointMatrix } of compiled(g).jumps) {
-    sandwichInto(out, adjointMatrix, matrix, a);
-  }
-  const { drift } = compiled(g);
-  if (drift) {
-    addScaledInto(out, denseTimesSparse(a, drift), 1);
-    addScaledInto(out, adjoint(denseTimesSparse(adjoint(a), drift)), 1);
-  }
+  compiled(g).onObservables(a, out);
   addSuperoperator(g, a, out, false);
   return out;
 }
 
 /** L†(ρ), the generator on states: Tr ρ L(A) = Tr L†(ρ) A. */
 export function applyGeneratorAdjoint(g: Generator, rho: ComplexMatrix): ComplexMatrix {
-  const n = g.algebra.size;
-  const out = zeros(n);
-  for (const { matrix, adjointMatrix } of compiled(g).jumps) {
-    sandwichInto(out, matrix, adjointMatrix, rho);
-  }
-  const { drift } = compiled(g);
-  if (drift) {
-    addScaledInto(out, sparseTimesDense(drift, rho), 1);
-    addScaledInto(out, adjoint(sparseTimesDense(drift, adjoint(rho))), 1);
-  }
+  const out = zeros(g.algebra.size);
+  compiled(g).onStates(rho, out);
   addSuperoperator(g, rho, out, true);
-  return projectToAlgebra(g.algebra, out);
+  clearOutside(g, out);
+  return out;
 }
 
+/** Zeros outside the blocks, where an element of the algebra has none. */
+function clearOutside({ algebra }: Generator, a: ComplexMatrix): void {
+  const { blockOf, size: n } = algebra;
+  if (algebra.blocks.length === 1) return;
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++) if (blockOf[i] !== blockOf[j]) a.re[i * n + j] = a.im[i * n + j] = 0;
+  }
+}
+
+/** What the jumps and H do. */
 interface Compiled {
-  readonly jumps: readonly { readonly matrix: IndexedSparse; readonly adjointMatrix: IndexedSparse }[];
-  /** G = −½ Σ R*R − iH, so that L(A) = Σ R*AR + AG + (A*G)*. */
-  readonly drift: SparseMatrix | null;
+  readonly onObservables: SandwichSum;
+  readonly onStates: SandwichSum;
 }
 
 const compilations = new WeakMap<Generator, Compiled>();
 
+/** With G = −½ Σ R*R − iH, L(A) = Σ R*AR + AG + G*A and L†(ρ) = Σ RρR* + ρG* + Gρ. */
 function compiled(g: Generator): Compiled {
   const known = compilations.get(g);
   if (known) return known;
-  const jumps = g.jumps.map(({ matrix }) => ({
-    matrix: indexed(matrix),
-    adjointMatrix: indexed(sparseAdjoint(matrix)),
-  }));
+  const n = g.algebra.size;
+  const jumps = g.jumps.map(({ matrix }) => matrix);
+  const adjoints = jumps.map(sparseAdjoint);
   let drift: SparseMatrix | null = null;
-  for (const { matrix, adjointMatrix } of jumps) {
-    drift = sparseAdd(drift ?? emptySquare(g.algebra.size), sparseMultiply(adjointMatrix, matrix), -0.5, 0);
-  }
-  if (g.hamiltonian) drift = sparseAdd(drift ?? emptySquare(g.algebra.size), g.hamiltonian, 0, -1);
-  const result = { jumps, drift };
+  jumps.forEach((r, m) => {
+    drift = sparseAdd(drift ?? emptySquare(n), sparseMultiply(adjoints[m], r), -0.5, 0);
+  });
+  if (g.hamiltonian) drift = sparseAdd(drift ?? emptySquare(n), g.hamiltonian, 0, -1);
+  const result = {
+    onObservables: sandwichSum(n, adjoints, drift),
+    onStates: sandwichSum(n, jumps, drift && sparseAdjoint(drift)),
+  };
   compilations.set(g, result);
   return result;
 }
 
 function emptySquare(n: number): SparseMatrix {
   return sparseFromTriplets(n, n, []);
-}
-
-/** out += X A Y for sparse X, Y: entry by entry where they are sparse enough (Pauli strings, matrix units), else as two products. */
-function sandwichInto(out: ComplexMatrix, x: IndexedSparse, y: IndexedSparse, a: ComplexMatrix): void {
-  const n = a.rows;
-  const countX = x.re.length;
-  const countY = y.re.length;
-  if (countX * countY > n * (countX + countY)) {
-    addScaledInto(out, sparseTimesDense(x, denseTimesSparse(a, y)), 1);
-    return;
-  }
-  for (let s = 0; s < countX; s++) {
-    const from = x.colIndex[s] * n;
-    const to = x.rowIndex[s] * n;
-    const xr = x.re[s];
-    const xi = x.im[s];
-    for (let t = 0; t < countY; t++) {
-      const ar = a.re[from + y.rowIndex[t]];
-      const ai = a.im[from + y.rowIndex[t]];
-      const tr = xr * ar - xi * ai;
-      const ti = xr * ai + xi * ar;
-      const j = to + y.colIndex[t];
-      out.re[j] += tr * y.re[t] - ti * y.im[t];
-      out.im[j] += tr * y.im[t] + ti * y.re[t];
-    }
-  }
-}
-
-/** A sparse matrix that also knows the row of each stored entry. */
-interface IndexedSparse extends SparseMatrix {
-  readonly rowIndex: Int32Array;
-}
-
-function indexed(s: SparseMatrix): IndexedSparse {
-  const rowIndex = new Int32Array(s.re.length);
-  for (let i = 0; i < s.rows; i++) rowIndex.fill(i, s.rowStart[i], s.rowStart[i + 1]);
-  return { ...s, rowIndex };
 }
 
 function addSuperoperator(g: Generator, a: ComplexMatrix, out: ComplexMatrix, transposed: boolean): void {

@@ -1,7 +1,7 @@
 import { ThalwegError } from '../errors.js';
 import type { Random } from '../random.js';
 import { EPSILON, KRYLOV_BREAKDOWN, LANCZOS_SUBSPACE, LANCZOS_WHOLE } from '../tolerances.js';
-import { norm, orthogonalise } from './orthogonalise.js';
+import { addCombination, norm, orthogonalise, projectOut } from './orthogonalise.js';
 import { symmetricEigen } from './symmetric-eigen.js';
 
 /** A symmetric operator with its account of work and the largest |Ritz value| seen. */
@@ -34,20 +34,23 @@ export function lanczosRun(run: LanczosRun): Ritz {
   const { operator, locked, want, tolerance, floor } = run;
   const size = subspaceSize(operator.dimension - locked.length, want);
   const projected = new Float64Array(size * size);
-  let basis = [freshDirection(run, [])];
+  const basis = [freshDirection(run, [])];
+  const spare: Float64Array[] = [];
   let kept = 0;
   for (;;) {
-    const { coupling, next } = extend(run, basis, projected, size, kept);
+    const { coupling, next } = extend(run, basis, spare, projected, size, kept);
     const { values, vectors } = symmetricEigen(projected, size);
     operator.scale = Math.max(operator.scale, Math.abs(values[0]), Math.abs(values[size - 1]));
     const residual = (j: number): number => coupling * Math.abs(vectors[(size - 1) * size + j]);
     let converged = true;
     for (let j = 0; j < want; j++) converged &&= residual(j) <= tolerance * operator.scale;
     if (converged || values[0] - residual(0) > floor) {
-      return { values: values.slice(0, want), vectors: combine(basis, vectors, size, want) };
+      combine(basis, vectors, want);
+      return { values: values.slice(0, want), vectors: basis.slice(0, want) };
     }
     kept = Math.min(size - 1, want + Math.floor((size - want) / 2));
-    basis = combine(basis, vectors, size, kept);
+    combine(basis, vectors, kept);
+    spare.push(...basis.splice(kept));
     projected.fill(0);
     for (let j = 0; j < kept; j++) projected[j * size + j] = values[j];
     basis.push(next);
@@ -59,10 +62,11 @@ function subspaceSize(available: number, want: number): number {
   return available <= LANCZOS_WHOLE ? available : Math.min(available, 2 * want + LANCZOS_SUBSPACE);
 }
 
-/** Grows the basis to full size, filling the projected matrix from column `from`; returns the last direction. */
+/** Grows the basis to full size, in arrays of `spare` while there are any, filling the projected matrix from column `from`; returns the last direction. */
 function extend(
   run: LanczosRun,
   basis: Float64Array[],
+  spare: Float64Array[],
   projected: Float64Array,
   size: number,
   from: number,
@@ -70,10 +74,14 @@ function extend(
   const { operator, locked } = run;
   let largest = operator.scale;
   for (let j = from; ; j++) {
-    const w = multiply(operator, basis[j]);
+    const w = multiply(operator, basis[j], spare.pop());
     largest = Math.max(largest, norm(w));
     orthogonalise(w, locked);
+    // The three-term recurrence first: what is left then is near orthogonal to the rest, and one more projection does.
+    const first = Math.max(0, j - 1);
+    const recent = projectOut(w, basis.slice(first));
     const coefficients = orthogonalise(w, basis);
+    recent.forEach((product, i) => (coefficients[first + i] += product));
     for (let i = 0; i <= j; i++) projected[i * size + j] = projected[j * size + i] = coefficients[i];
     // Rounding left in w by the projections must not count as a new direction.
     orthogonalise(w, locked);
@@ -81,19 +89,23 @@ function extend(
     const whole = basis.length + locked.length === operator.dimension;
     const exhausted = whole || coupling <= KRYLOV_BREAKDOWN * EPSILON * largest * Math.sqrt(operator.dimension);
     if (exhausted) coupling = 0;
-    if (j === size - 1) return { coupling, next: exhausted ? w : w.map((x) => x / coupling) };
-    basis.push(exhausted ? freshDirection(run, basis) : w.map((x) => x / coupling));
+    if (!exhausted) for (let p = 0; p < w.length; p++) w[p] /= coupling;
+    if (j === size - 1) return { coupling, next: w };
+    basis.push(exhausted ? freshDirection(run, basis) : w);
   }
 }
 
-function multiply(operator: KrylovOperator, x: Float64Array): Float64Array {
+function multiply(
+  operator: KrylovOperator,
+  x: Float64Array,
+  y: Float64Array = new Float64Array(operator.dimension),
+): Float64Array {
   if (operator.matvecs >= operator.maxMatvecs) {
     throw new ThalwegError(
       'no-convergence',
       `expected Lanczos to converge within ${operator.maxMatvecs} products; allow more or ask for less accuracy`,
     );
   }
-  const y = new Float64Array(operator.dimension);
   operator.apply(x, y);
   operator.matvecs++;
   return y;
@@ -112,17 +124,25 @@ function freshDirection({ operator, locked, random }: LanczosRun, basis: readonl
   }
 }
 
-/** The first `count` columns of (basis as columns) · vectors. */
-function combine(basis: readonly Float64Array[], vectors: Float64Array, size: number, count: number): Float64Array[] {
-  const result: Float64Array[] = [];
-  for (let j = 0; j < count; j++) {
-    const x = new Float64Array(basis[0].length);
-    for (let i = 0; i < size; i++) {
-      const factor = vectors[i * size + j];
-      const v = basis[i];
-      for (let p = 0; p < x.length; p++) x[p] += factor * v[p];
-    }
-    result.push(x);
+/** Overwrite the first `count` basis vectors by the first columns of (basis as columns) · vectors, a stretch of entries at a time. */
+function combine(basis: readonly Float64Array[], vectors: Float64Array, count: number): void {
+  const size = basis.length;
+  const dimension = basis[0].length;
+  const stretch = basis.map(() => new Float64Array(STRETCH));
+  const columns = Array.from({ length: count }, (_, j) =>
+    Float64Array.from({ length: size }, (_, i) => vectors[i * size + j]),
+  );
+  const sum = new Float64Array(STRETCH);
+  for (let from = 0; from < dimension; from += STRETCH) {
+    const to = Math.min(dimension, from + STRETCH);
+    basis.forEach((v, i) => stretch[i].set(v.subarray(from, to)));
+    columns.forEach((column, j) => {
+      sum.fill(0);
+      addCombination(sum, stretch, column);
+      basis[j].set(to - from < STRETCH ? sum.subarray(0, to - from) : sum, from);
+    });
   }
-  return result;
 }
+
+/** Entries of all basis vectors that fit the second-level cache together. */
+const STRETCH = 512;
