@@ -241,6 +241,10 @@ export const SCHUR_REFINEMENTS = 20;
 /** Relative residual at which they end. */
 export const SCHUR_RESIDUAL = 1e-14;
 
+/** Refinements of a primal step at most, and the norm of b − A(X + dX), for ‖b‖ = 1, that needs none. */
+export const STEP_REFINEMENTS = 4;
+export const STEP_RESIDUAL = 1e-13;
+
 /** Lanczos steps for one step length at most. */
 export const LANCZOS_STEPS = 60;
 

@@ -1,7 +1,9 @@
+import { STEP_REFINEMENTS, STEP_RESIDUAL } from '../tolerances.js';
 import { type Cone } from './cone.js';
 import { type ConicForm } from './conic-form.js';
 import { LinearCone } from './linear-cone.js';
 import { MatrixCone } from './matrix-cone.js';
+import { dot } from './measures.js';
 import { SchurSystem } from './schur-system.js';
 
 /** A step (dX, dy, dS), and how far it can be followed: 1 at most. */
@@ -36,6 +38,8 @@ export class NewtonSystem {
   readonly #curvature: Float64Array;
   readonly #scratch: Float64Array;
   readonly #right: Float64Array;
+  readonly #product: Float64Array;
+  readonly #correction: Float64Array;
 
   constructor(form: ConicForm) {
     const flat = (): Float64Array => new Float64Array(form.length);
@@ -54,6 +58,8 @@ export class NewtonSystem {
     this.#curvature = flat();
     this.#scratch = flat();
     this.#right = new Float64Array(m);
+    this.#product = flat();
+    this.#correction = new Float64Array(m);
   }
 
   newStep(): NewtonStep {
@@ -124,13 +130,44 @@ export class NewtonSystem {
     this.#right.set(form.objective);
     this.addValues(curvature, 1, this.#right);
     this.system.solve(this.#right, step.y);
-    const scratch = this.#scratch.fill(0);
-    this.addAdjoint(step.y, 1, scratch);
-    for (let i = 0; i < scratch.length; i++) step.s[i] = this.dualResidual[i] - scratch[i];
-    for (const cone of this.#cones) cone.scaledProduct(x, scratch, null, null, this.#inverse, step.x);
-    for (let i = 0; i < scratch.length; i++) step.x[i] -= curvature[i] + x[i];
+    step.s.set(this.dualResidual);
+    for (let i = 0; i < curvature.length; i++) step.x[i] = -curvature[i] - x[i];
+    this.#follow(step.y, step);
+    this.#refine(step);
     step.primalLength = 1;
     step.dualLength = 1;
+  }
+
+  /** Adds the part of a step that belongs to dy: −Aᵀ dy to dS, and H(X Aᵀ(dy) S⁻¹) to dX. */
+  #follow(dy: Float64Array, step: NewtonStep): void {
+    const image = this.#scratch.fill(0);
+    this.addAdjoint(dy, 1, image);
+    const product = this.#product;
+    for (const cone of this.#cones) cone.scaledProduct(this.x, image, null, null, this.#inverse, product);
+    for (let i = 0; i < image.length; i++) {
+      step.s[i] -= image[i];
+      step.x[i] += product[i];
+    }
+  }
+
+  /**
+   * Iterative refinement of A(dX) = b − A(X) on the dX that was computed: where S is nearly singular, rounding in the
+   * products that make dX is far larger than in the Schur complement's solution.
+   */
+  #refine(step: NewtonStep): void {
+    const r = this.#right;
+    const correction = this.#correction;
+    let last = Infinity;
+    for (let k = 0; k < STEP_REFINEMENTS; k++) {
+      r.set(this.primalResidual);
+      this.addValues(step.x, -1, r);
+      const size = Math.sqrt(dot(r, r));
+      if (!(size > STEP_RESIDUAL) || size > 0.5 * last) return;
+      last = size;
+      this.system.solve(r, correction);
+      for (let i = 0; i < r.length; i++) step.y[i] += correction[i];
+      this.#follow(correction, step);
+    }
   }
 
   /** Sets the lengths of a step to the fraction `damping` of the way to the boundary, at most 1. */

@@ -6,7 +6,7 @@ import { type ProgrammeSolution } from '../../../src/programme/programme-solutio
 import { expectBelow } from '../../linalg/support/expect-close.js';
 
 /** The conditions of optimality, each relative to the size of what enters it; all are 0 for an exact solution. */
-export interface OptimalityResiduals {
+interface OptimalityResiduals {
   /** max_i |<A_i, X> − b_i| / (|b_i| + ‖A_i‖‖X‖). */
   readonly primal: number;
   /** ‖C − Σ y_i A_i − S‖ / (‖C‖ + Σ |y_i| ‖A_i‖). */
@@ -22,7 +22,7 @@ export interface OptimalityResiduals {
 }
 
 /** Evaluated from the programme itself by plain dense formulas, sharing nothing with the solver but matrix storage. */
-export function optimalityResiduals(programme: Programme, solution: ProgrammeSolution): OptimalityResiduals {
+function optimalityResiduals(programme: Programme, solution: ProgrammeSolution): OptimalityResiduals {
   const { objective, blocks } = programme;
   const values = new Float64Array(objective.length);
   const norms = new Float64Array(objective.length);
