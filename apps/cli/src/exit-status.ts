@@ -52,5 +52,6 @@ export const EXIT_STATUS_OF_ERROR: Readonly<Record<ErrorCode, ExitStatus>> = {
   usage: EXIT_STATUS.usage,
   'not-supported': EXIT_STATUS.badDocument,
   interrupted: EXIT_STATUS.interrupted,
+  'time-limit': EXIT_STATUS.tryAgain,
   internal: EXIT_STATUS.internal,
 };

@@ -32,6 +32,7 @@ export const ERROR_CODES = {
   usage: 'a command or function was called wrongly',
   'not-supported': 'a well-formed request that is outside what is implemented',
   interrupted: 'the computation was stopped from outside',
+  'time-limit': 'the time limit passed before there was a result',
   internal: 'an invariant of the program itself failed',
 } as const;
 

@@ -2,6 +2,7 @@ export * from './linalg/index.js';
 export * from './search/index.js';
 export * from './entropy/index.js';
 export { ERROR_CODES, ThalwegError, type ErrorCode, type ErrorContext } from './errors.js';
+export { memoryText } from './memory-text.js';
 export { seededRandom, type Random } from './random.js';
 export { MEAN_NAMES, type MeanName } from './metric/operator-mean.js';
 export * from './sheet/index.js';

@@ -13,7 +13,7 @@ export interface DocumentSource {
   readonly folder: string;
 }
 
-/** Reads a file, or standard input for `-`. Throws `not-found`, `bad-file` and `too-large`. */
+/** Reads a file, or standard input for `-`, which can be read once. Throws `not-found`, `bad-file`, `too-large` and `usage`. */
 export async function readSource(path: string, stdin: Readable): Promise<DocumentSource> {
   if (path === '-') return { name: 'standard input', bytes: await readStream(stdin), folder: process.cwd() };
   try {
@@ -33,6 +33,12 @@ export async function readSource(path: string, stdin: Readable): Promise<Documen
 }
 
 async function readStream(stream: Readable): Promise<Uint8Array> {
+  if (stream.readableEnded || stream.destroyed) {
+    throw new ThalwegError(
+      'usage',
+      'expected "-" for one document at most, got it for two: standard input can be read once; name a file for the other',
+    );
+  }
   const chunks: Buffer[] = [];
   let size = 0;
   for await (const chunk of stream) {

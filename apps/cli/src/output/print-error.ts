@@ -31,8 +31,19 @@ function internalError(error: unknown): ThalwegError {
 
 function asText(error: ThalwegError, terminal: Terminal, style: ErrorStyle): string {
   const paint = colours(terminal.stderr, terminal.env, style.color);
-  const place = error.pointer === undefined ? '' : ` (at ${error.pointer === '' ? 'the top' : error.pointer})`;
-  return `${paint.red('thalweg:')} ${error.message}${place}\n`;
+  return `${paint.red('thalweg:')} ${error.message}${place(error)}\n`;
+}
+
+/** Longer pointers are shown by their ends; --json has them whole. */
+const POINTER_ROOM = 120;
+
+/** ` (at /generator/jumps/0/rate of m.json)`, as much of it as is known. */
+function place({ pointer, details }: ThalwegError): string {
+  const name = typeof details?.document === 'string' ? details.document : null;
+  if (pointer === undefined) return name === null ? '' : ` (in ${name})`;
+  const half = POINTER_ROOM / 2;
+  const shown = pointer.length <= POINTER_ROOM ? pointer : `${pointer.slice(0, half)}…${pointer.slice(-half)}`;
+  return ` (at ${shown === '' ? 'the top' : shown}${name === null ? '' : ` of ${name}`})`;
 }
 
 function asJson(error: ThalwegError, exitStatus: ExitStatus): string {

@@ -16,6 +16,7 @@ interface Cells {
 }
 
 const GAP = '  ';
+const BETWEEN = '   ';
 const CLOSED = 'closed';
 
 /** Brackets below each other, each end with its grade; where they do not fit side by side, one end a line. */
@@ -54,24 +55,30 @@ function aligned(rows: readonly Cells[]): Cells[] {
   }));
 }
 
+const HEADS = ['lower end', 'upper end'] as const;
+
 function wideTable(rows: readonly Cells[], { colours }: Layout): string[] {
-  const [first] = rows;
-  if (first === undefined) return [];
-  const endWidth = (value: string, grade: string) => value.length + GAP.length + grade.length;
-  const head = [
-    'constant'.padEnd(first.name.length),
-    'lower end'.padEnd(endWidth(first.lower, first.lowerGrade)),
-    'upper end',
-  ].join(`${GAP} `);
+  const [lowerWidth, upperWidth] = endWidths(rows);
+  const head = ['constant'.padEnd(rows[0]?.name.length ?? 0), HEADS[0].padEnd(lowerWidth), HEADS[1]].join(BETWEEN);
   const lines = rows.map(({ name, lower, lowerGrade, upper, upperGrade, closed }) =>
     [
       colours.bold(name),
-      `${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}`,
-      `${upper}${GAP}${colours.dim(upperGrade)}`,
+      `${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}${filling(lower, lowerGrade, lowerWidth)}`,
+      `${upper}${GAP}${colours.dim(upperGrade)}${filling(upper, upperGrade, upperWidth)}`,
       closed ? colours.green(CLOSED) : '',
-    ].join(`${GAP} `),
+    ].join(BETWEEN),
   );
   return [colours.bold(GAP + head), GAP + '─'.repeat(widthOf(rows)), ...lines.map((line) => (GAP + line).trimEnd())];
+}
+
+function filling(value: string, grade: string, width: number): string {
+  return ' '.repeat(width - (value + GAP + grade).length);
+}
+
+function endWidths([first]: readonly Cells[]): readonly [number, number] {
+  const { lower = '', lowerGrade = '', upper = '', upperGrade = '' } = first ?? {};
+  const width = (head: string, value: string, grade: string) => Math.max(head.length, (value + GAP + grade).length);
+  return [width(HEADS[0], lower, lowerGrade), width(HEADS[1], upper, upperGrade)];
 }
 
 function narrowTable(constants: readonly ConstantDocument[], units: Units, { colours }: Layout): string[] {
@@ -88,12 +95,10 @@ function narrowTable(constants: readonly ConstantDocument[], units: Units, { col
 }
 
 function widthOf(rows: readonly Cells[]): number {
-  const [first] = rows;
-  if (first === undefined) return 0;
-  const { name, lower, lowerGrade, upper, upperGrade } = first;
-  const cells = [name, lower + GAP + lowerGrade, upper + GAP + upperGrade];
-  const closed = rows.some((row) => row.closed) ? GAP.length + 1 + CLOSED.length : 0;
-  return cells.join(`${GAP} `).length + closed;
+  const [lower, upper] = endWidths(rows);
+  const name = rows[0]?.name.length ?? 0;
+  const closed = rows.some((row) => row.closed) ? BETWEEN.length + CLOSED.length : 0;
+  return name + lower + upper + 2 * BETWEEN.length + closed;
 }
 
 function column(texts: readonly string[]): string[] {

@@ -12,7 +12,7 @@ export function wrapPieces(pieces: readonly string[], separator: string, width: 
  * A sentence with formulas: broken beside no operator and before no single letter where that can be helped, and into lines of
  * about the same length.
  */
-export function wrapFormulas(text: string, width: number, indent: number): string[] {
+function wrapFormulas(text: string, width: number, indent: number): string[] {
   const room = roomOf(width, indent);
   const pieces = gluedFormulas(text).flatMap((piece) => (piece.length > room ? piece.split(' ') : [piece]));
   let lines = filled(pieces, ' ', room);

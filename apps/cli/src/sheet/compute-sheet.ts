@@ -19,8 +19,17 @@ export interface ComputedSheet {
   readonly sheet: SheetDocument;
   /** What every task found, in the order of the tasks. */
   readonly findings: readonly SheetFinding[];
-  /** Searches cut short by the time limit. */
-  readonly unfinished: number;
+  /** What the time limit cut short: all but the theorems, or some searches. */
+  readonly unfinished: Unfinished | null;
+}
+
+export type Unfinished = 'proofs' | 'searches';
+
+/** What a reader of the result is told, `more` being what more time may do. */
+export function unfinishedNote(unfinished: Unfinished, more: string): string {
+  return unfinished === 'proofs'
+    ? 'The time limit ended the eigenvalue problems: only what theorems give is here. Give more with --time-limit.'
+    : `The time limit ended some searches early: ${more}.`;
 }
 
 /** ε of `mixing` on a sheet, trace norm. */
@@ -33,9 +42,8 @@ export async function computeSheet(job: SheetJob, session: Session): Promise<Com
   const started = Date.now();
   return session.compute(limits, async (pool) => {
     session.output.progress('eigenvalue problems and lifts');
-    const { findings, searches } = only(
-      await pool.run('sheet-proofs', [{ source, request, searchClosed: job.searchClosed ?? false }]),
-    );
+    const [proofs] = await pool.run('sheet-proofs', [{ source, request, searchClosed: job.searchClosed ?? false }]);
+    const { findings, searches } = proofs?.done ? proofs.result : { findings: [], searches: [] };
     session.output.progress(`searching, ${searches.length} starts`);
     const outcomes = await pool.run(
       'sheet-search',
@@ -45,7 +53,11 @@ export async function computeSheet(job: SheetJob, session: Session): Promise<Com
     for (const outcome of outcomes) if (outcome.done) found.push(outcome.result);
     const sheet = only(await pool.run('sheet-document', [{ source, request, findings: found, convention }]));
     const late = limits.timeLimit !== null && Date.now() - started >= limits.timeLimit;
-    const missing = outcomes.filter((outcome) => !outcome.done).length;
-    return { sheet, findings: found, unfinished: late ? Math.max(1, missing) : missing };
+    const unfinished = !proofs?.done
+      ? 'proofs'
+      : late || found.length < findings.length + searches.length
+        ? 'searches'
+        : null;
+    return { sheet, findings: found, unfinished };
   });
 }

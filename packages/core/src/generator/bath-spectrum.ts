@@ -40,7 +40,7 @@ function thermalFactor(beta: number, w: number, tolerance: number): number {
 function requirePositive(x: number, pointer: string, what: string): void {
   requireFiniteNumber(x, pointer, what);
   if (x > 0) return;
-  throw new ThalwegError('usage', `expected ${what} to be positive, got ${x}`, { pointer });
+  throw new ThalwegError('usage', `expected ${what} to be positive, got ${x}; correct it`, { pointer });
 }
 
 function tabulated(

@@ -33,10 +33,14 @@ export function densityMatrix(algebra: BlockAlgebra, state: MatrixInput, pointer
   }
   const smallest = hermitianEigenvalues(sigma)[0];
   if (smallest < -INPUT_TOLERANCE) {
-    throw new ThalwegError('state-not-positive', `expected a positive state, got the eigenvalue ${smallest}`, {
-      pointer,
-      details: { smallestEigenvalue: smallest },
-    });
+    throw new ThalwegError(
+      'state-not-positive',
+      `expected a positive state, got the eigenvalue ${smallest}; a density matrix has none below 0`,
+      {
+        pointer,
+        details: { smallestEigenvalue: smallest },
+      },
+    );
   }
   return sigma;
 }

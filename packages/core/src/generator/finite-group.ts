@@ -36,7 +36,7 @@ export function finiteGroup(form: GroupForm): FiniteGroup {
 
 function size(n: number, name: string, order: (n: number) => number): number {
   if (!Number.isInteger(n) || n < 1) {
-    throw new ThalwegError('usage', `expected "${name}" to be a whole number of at least 1, got ${n}`, {
+    throw new ThalwegError('usage', `expected "${name}" to be a whole number of at least 1, got ${n}; correct it`, {
       pointer: `${POINTER}/${name}`,
     });
   }
@@ -46,10 +46,14 @@ function size(n: number, name: string, order: (n: number) => number): number {
 
 function requireOrder(order: number, pointer: string): void {
   if (order <= MAX_GROUP_ORDER) return;
-  throw new ThalwegError('too-large', `expected a group of order at most ${MAX_GROUP_ORDER}, got ${order}`, {
-    pointer,
-    details: { limit: MAX_GROUP_ORDER, order },
-  });
+  throw new ThalwegError(
+    'too-large',
+    `expected a group of order at most ${MAX_GROUP_ORDER}, got ${order}; take a smaller group`,
+    {
+      pointer,
+      details: { limit: MAX_GROUP_ORDER, order },
+    },
+  );
 }
 
 function factorial(n: number): number {

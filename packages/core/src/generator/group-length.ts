@@ -73,7 +73,7 @@ function requireLength(group: FiniteGroup, values: Float64Array): void {
   if (values.length !== order) {
     throw new ThalwegError(
       'dimension-mismatch',
-      `expected ${order} lengths, one for each element, got ${values.length}`,
+      `expected ${order} lengths, one for each element, got ${values.length}; list them in the order of the elements`,
       {
         pointer: POINTER,
       },
@@ -81,22 +81,26 @@ function requireLength(group: FiniteGroup, values: Float64Array): void {
   }
   const bad = values.findIndex((x) => !Number.isFinite(x));
   if (bad >= 0) {
-    throw new ThalwegError('not-finite', `expected a finite length of element ${bad}, got ${values[bad]}`, {
+    throw new ThalwegError('not-finite', `expected a finite length of element ${bad}, got ${values[bad]}; correct it`, {
       pointer: `${POINTER}/${bad}`,
     });
   }
   const top = values.reduce((a, b) => Math.max(a, Math.abs(b)), 0);
   if (Math.abs(values[identity]) > INPUT_TOLERANCE * top) {
-    throw new ThalwegError('usage', `expected ℓ = 0 at the identity, element ${identity}, got ${values[identity]}`, {
-      pointer: `${POINTER}/${identity}`,
-    });
+    throw new ThalwegError(
+      'usage',
+      `expected ℓ = 0 at the identity, element ${identity}, got ${values[identity]}; check the order of the elements`,
+      {
+        pointer: `${POINTER}/${identity}`,
+      },
+    );
   }
   const lopsided = values.findIndex((x, g) => Math.abs(x - values[inverse[g]]) > INPUT_TOLERANCE * top);
   if (lopsided < 0) return;
   const other = inverse[lopsided];
   throw new ThalwegError(
     'usage',
-    `expected ℓ(g) = ℓ(g⁻¹), got ${values[lopsided]} at element ${lopsided} and ${values[other]} at its inverse ${other}`,
+    `expected ℓ(g) = ℓ(g⁻¹), got ${values[lopsided]} at element ${lopsided} and ${values[other]} at its inverse ${other}; make them equal`,
     { pointer: `${POINTER}/${lopsided}` },
   );
 }

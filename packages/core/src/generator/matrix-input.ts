@@ -44,7 +44,7 @@ export function requireFiniteNumber(x: number, pointer: string, what: string): v
 export function requireRate(x: number, pointer: string, what: string): void {
   requireFiniteNumber(x, pointer, what);
   if (x >= 0) return;
-  throw new ThalwegError('negative-rate', `expected ${what} to be at least 0, got ${x}`, {
+  throw new ThalwegError('negative-rate', `expected ${what} to be at least 0, got ${x}; change its sign or remove it`, {
     pointer,
     details: { value: x },
   });
@@ -55,7 +55,7 @@ export function requireSize(algebra: BlockAlgebra, n: number, what: string): voi
   if (algebra.size === n) return;
   throw new ThalwegError(
     'dimension-mismatch',
-    `expected an algebra of ${n}×${n} matrices for ${what}, got blocks [${algebra.blocks.join(', ')}]`,
+    `expected an algebra of ${n}×${n} matrices for ${what}, got blocks [${algebra.blocks.join(', ')}]; correct "algebra"`,
     { pointer: '/algebra' },
   );
 }
@@ -66,12 +66,18 @@ function isSparse(a: MatrixInput): a is SparseMatrix {
 
 function requireShape(a: MatrixInput, n: number, pointer: string): void {
   if (a.rows === n && a.cols === n) return;
-  throw new ThalwegError('dimension-mismatch', `expected a ${n}×${n} matrix, got ${a.rows}×${a.cols}`, {
-    pointer,
-    details: { expected: [n, n], got: [a.rows, a.cols] },
-  });
+  throw new ThalwegError(
+    'dimension-mismatch',
+    `expected a ${n}×${n} matrix, got ${a.rows}×${a.cols}; correct it or "algebra"`,
+    {
+      pointer,
+      details: { expected: [n, n], got: [a.rows, a.cols] },
+    },
+  );
 }
 
 function notFinite(pointer: string): ThalwegError {
-  return new ThalwegError('not-finite', 'expected finite matrix entries, got NaN or an infinity', { pointer });
+  return new ThalwegError('not-finite', 'expected finite matrix entries, got NaN or an infinity; correct them', {
+    pointer,
+  });
 }

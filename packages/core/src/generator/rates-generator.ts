@@ -26,28 +26,36 @@ export function ratesGenerator(rates: readonly (readonly number[])[]): Generator
 function requireRow(row: readonly number[], x: number, n: number): void {
   const pointer = `/generator/rates/${x}`;
   if (row.length !== n) {
-    throw new ThalwegError('ragged-matrix', `expected ${n} rates in row ${x}, got ${row.length}`, { pointer });
+    throw new ThalwegError(
+      'ragged-matrix',
+      `expected ${n} rates in row ${x}, got ${row.length}; make the matrix square`,
+      { pointer },
+    );
   }
   let leaving = 0;
   for (let y = 0; y < n; y++) {
     if (!Number.isFinite(row[y])) {
-      throw new ThalwegError('not-finite', `expected a finite rate from ${x} to ${y}, got ${row[y]}`, {
+      throw new ThalwegError('not-finite', `expected a finite rate from ${x} to ${y}, got ${row[y]}; correct it`, {
         pointer: `${pointer}/${y}`,
       });
     }
     if (x === y) continue;
     if (row[y] < 0) {
-      throw new ThalwegError('negative-rate', `expected a rate of at least 0 from ${x} to ${y}, got ${row[y]}`, {
-        pointer: `${pointer}/${y}`,
-        details: { from: x, to: y, value: row[y] },
-      });
+      throw new ThalwegError(
+        'negative-rate',
+        `expected a rate of at least 0 from ${x} to ${y}, got ${row[y]}; change its sign`,
+        {
+          pointer: `${pointer}/${y}`,
+          details: { from: x, to: y, value: row[y] },
+        },
+      );
     }
     leaving += row[y];
   }
   if (Math.min(Math.abs(row[x]), Math.abs(row[x] + leaving)) > INPUT_TOLERANCE * leaving) {
     throw new ThalwegError(
       'row-sum-mismatch',
-      `expected the diagonal entry of row ${x} to be 0 or minus the sum of the others, ${-leaving}, got ${row[x]}`,
+      `expected the diagonal entry of row ${x} to be 0 or minus the sum of the others, ${-leaving}, got ${row[x]}; write 0 to have it filled in`,
       { pointer: `${pointer}/${x}`, details: { expected: -leaving, got: row[x] } },
     );
   }

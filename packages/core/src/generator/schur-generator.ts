@@ -35,9 +35,13 @@ export function schurGenerator(form: SchurForm): Generator {
 function requirePoint(point: readonly number[], i: number, width: number): void {
   const pointer = `/generator/points/${i}`;
   if (point.length !== width) {
-    throw new ThalwegError('ragged-matrix', `expected ${width} coordinates of point ${i}, got ${point.length}`, {
-      pointer,
-    });
+    throw new ThalwegError(
+      'ragged-matrix',
+      `expected ${width} coordinates of point ${i}, got ${point.length}; give every point as many`,
+      {
+        pointer,
+      },
+    );
   }
   point.forEach((x, k) => requireFiniteNumber(x, `${pointer}/${k}`, `coordinate ${k} of point ${i}`));
 }

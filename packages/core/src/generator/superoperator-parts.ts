@@ -1,5 +1,6 @@
 import { type BlockAlgebra, basisElement, toCoordinates } from '../algebra/block-algebra.js';
 import { ThalwegError } from '../errors.js';
+import { memoryText } from '../memory-text.js';
 import type { ComplexMatrix } from '../linalg/complex-matrix.js';
 
 /** Largest algebra dimension D for which D×D matrices are stored; 1024 is five qubits, 8 MiB a matrix. */
@@ -13,7 +14,7 @@ export function requireDenseDimension(algebra: BlockAlgebra, what: string): void
   if (algebra.dimension <= MAX_DENSE_DIMENSION) return;
   throw new ThalwegError(
     'too-large',
-    `expected an algebra of dimension at most ${MAX_DENSE_DIMENSION} for ${what}, got ${algebra.dimension}; ` +
+    `expected an algebra of dimension at most ${MAX_DENSE_DIMENSION} for ${what}, got ${algebra.dimension} (a matrix would take ${memoryText(8 * algebra.dimension ** 2)}); ` +
       'give it by jumps (form "lindblad" or "balanced") instead',
     { details: { limit: MAX_DENSE_DIMENSION, dimension: algebra.dimension } },
   );

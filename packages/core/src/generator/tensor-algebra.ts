@@ -18,10 +18,14 @@ export interface TensorAlgebra {
 export function tensorAlgebra(factors: readonly BlockAlgebra[]): TensorAlgebra {
   const size = factors.reduce((n, f) => n * f.size, 1);
   if (size > MAX_TENSOR_SIZE) {
-    throw new ThalwegError('too-large', `expected a tensor product of size at most ${MAX_TENSOR_SIZE}, got ${size}`, {
-      pointer: '/generator/factors',
-      details: { limit: MAX_TENSOR_SIZE, size },
-    });
+    throw new ThalwegError(
+      'too-large',
+      `expected a tensor product of size at most ${MAX_TENSOR_SIZE}, got ${size}; leave factors out`,
+      {
+        pointer: '/generator/factors',
+        details: { limit: MAX_TENSOR_SIZE, size },
+      },
+    );
   }
   const blocks = factors.reduce<number[]>((list, f) => list.flatMap((n) => f.blocks.map((m) => n * m)), [1]);
   const order = Array.from({ length: size }, (_, k) => k);

@@ -106,7 +106,7 @@ describe('expectationGenerator', () => {
     expectError(
       () => expectationGenerator({ algebra: blockAlgebra([33]), onto: { scalars: true } }),
       'too-large',
-      /got 1089; give it by jumps/,
+      /got 1089 \(a matrix would take 9.05 MiB\); give it by jumps/,
     );
   });
 });

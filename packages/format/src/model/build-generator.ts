@@ -5,6 +5,7 @@ import {
   expectationGenerator,
   lengthGenerator,
   lindbladGenerator,
+  memoryText,
   ratesGenerator,
   sameAlgebra,
   schurGenerator,
@@ -17,6 +18,7 @@ import {
   type BlockAlgebra,
   type Generator,
 } from '@thalweg/core';
+import { MATRIX_LIMITS } from '../limits.js';
 import type { DecodedMatrix } from '../matrix/decode-matrix.js';
 import type { GeneratorForm, Model, SpectrumDocument } from './model-document.js';
 import { withBasePointer } from './with-base-pointer.js';
@@ -27,6 +29,7 @@ import { withBasePointer } from './with-base-pointer.js';
  * the offending place in this document, and `dimension-mismatch` where `algebra` contradicts the generator.
  */
 export function buildGenerator(model: Model<DecodedMatrix>): Generator {
+  if (model.algebra) requireSide(sum(model.algebra), '/algebra', 'levels in all blocks together');
   const declared = model.algebra && blockAlgebra(model.algebra);
   const generator = fromForm(model.generator, declared);
   requireDeclared(generator.algebra, declared);
@@ -41,6 +44,7 @@ function fromForm(form: GeneratorForm<DecodedMatrix>, declared: BlockAlgebra | u
     case 'length':
       return lengthGenerator({ group: form.group, length: form.length, ...given });
     case 'schur':
+      requireSide(form.points.length, '/generator/points', 'points');
       return schurGenerator({ points: form.points, ...given });
     case 'sum':
       return sumGenerator(
@@ -90,6 +94,23 @@ function requireAlgebra(declared: BlockAlgebra | undefined): BlockAlgebra {
       pointer: '/algebra',
     },
   );
+}
+
+/** Elements are held in N×N matrices: refused before any is allocated. */
+function requireSide(size: number, pointer: string, what: string): void {
+  const { side } = MATRIX_LIMITS;
+  if (size <= side) return;
+  throw new ThalwegError(
+    'too-large',
+    `expected at most ${side} ${what}, got ${size}: one complex matrix would take ${memoryText(BYTES_PER_ENTRY * size * size)}; reduce the model`,
+    { pointer, details: { limit: side, size } },
+  );
+}
+
+const BYTES_PER_ENTRY = 16;
+
+function sum(values: readonly number[]): number {
+  return values.reduce((total, value) => total + value, 0);
 }
 
 function requireDeclared(found: BlockAlgebra, declared: BlockAlgebra | undefined): void {

@@ -75,6 +75,14 @@ function readRegularFile(target: string, shown: string): Uint8Array {
 
 function unreadable(shown: string, cause: unknown): ThalwegError {
   const code = (cause as NodeJS.ErrnoException).code ?? 'unknown reason';
-  const message = `expected a readable file ${JSON.stringify(shown)}, got ${code}; check its name and permissions`;
+  const reason = REASONS[code] ?? code;
+  const message = `expected a readable file ${JSON.stringify(shown)}, got none: ${reason}; check its name and permissions`;
   return new ThalwegError('not-found', message, { cause, details: { path: shown, reason: code } });
 }
+
+const REASONS: Readonly<Record<string, string>> = {
+  ENOENT: 'there is no such file',
+  ENOTDIR: 'a part of its path is not a folder',
+  EACCES: 'permission denied',
+  ELOOP: 'its links go round in a circle',
+};

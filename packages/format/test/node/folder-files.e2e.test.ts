@@ -67,14 +67,14 @@ describe('filesInFolder', () => {
   });
 
   it.each([
-    ['missing.npy', 'ENOENT'],
-    ['a.npy/b.npy', 'ENOTDIR'],
-    ['loop.npy', 'ELOOP'],
+    ['missing.npy', 'there is no such file'],
+    ['a.npy/b.npy', 'a part of its path is not a folder'],
+    ['loop.npy', 'its links go round in a circle'],
   ])('refuses %s: %s', (path, reason) => {
     expect(refusal(() => read(path))).toEqual([
       'not-found',
       undefined,
-      `expected a readable file "${path}", got ${reason}; check its name and permissions`,
+      `expected a readable file "${path}", got none: ${reason}; check its name and permissions`,
     ]);
   });
 

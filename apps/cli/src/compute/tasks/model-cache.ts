@@ -1,7 +1,9 @@
 import { analyse, isMarkov, ThalwegError, type Structure } from '@thalweg/core';
 import { loadModel, type LoadedModel, type ModelDocument } from '@thalweg/format';
 import { createNodeSha256, filesInFolder } from '@thalweg/format/node';
+import { inDocument } from '../../input/in-document.js';
 import type { DocumentSource } from '../../input/read-source.js';
+import { requireMemory } from './require-memory.js';
 
 /** A model read and analysed, as every task starts from it. */
 export interface AnalysedModel {
@@ -17,15 +19,21 @@ export function analysedModel(source: DocumentSource): AnalysedModel {
   const key = `${source.folder}\n${Buffer.from(source.bytes).toString('latin1')}`;
   if (last?.key === key) return last.model;
   const { document, digest, generator } = readModel(source);
-  const model = { document, digest, structure: analyse(generator) };
+  const structure = inDocument(source.name, () => {
+    requireMemory(generator.algebra);
+    return analyse(generator);
+  });
+  const model = { document, digest, structure };
   last = { key, model };
   return model;
 }
 
 /** A model read, its generator built, nothing computed. */
 export function readModel(source: DocumentSource): LoadedModel {
-  refuseOtherFiles(source);
-  return loadModel(source.bytes, { readFile: filesInFolder(source.folder), createHash: createNodeSha256 });
+  return inDocument(source.name, () => {
+    refuseOtherFiles(source);
+    return loadModel(source.bytes, { readFile: filesInFolder(source.folder), createHash: createNodeSha256 });
+  });
 }
 
 /** The analysed model, refused with its smallest eigenvalue or residual when it is no Markov semigroup. */
@@ -36,6 +44,7 @@ export function markovModel(source: DocumentSource): AnalysedModel {
   throw new ThalwegError(
     'not-completely-positive',
     `expected a generator of a Markov semigroup, got one that is not: ${whyNot(markov)}; thalweg inspect tells more`,
+    { details: { document: source.name } },
   );
 }
 

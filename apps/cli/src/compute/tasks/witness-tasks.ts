@@ -26,6 +26,7 @@ import {
   type WitnessDocument,
 } from '@thalweg/format';
 import { filesInFolder } from '@thalweg/format/node';
+import { inDocument } from '../../input/in-document.js';
 import type { DocumentSource } from '../../input/read-source.js';
 import { TOOL } from '../../version.js';
 import { markovModel } from './model-cache.js';
@@ -43,7 +44,7 @@ export function witnessAtState({
   readonly mean: MeanName;
 }): WitnessDocument {
   const { structure, digest } = markovModel(source);
-  const rho = densityMatrix(structure.algebra, matrixOf(structure, state), '');
+  const rho = inDocument(state.name, () => densityMatrix(structure.algebra, matrixOf(structure, state), ''));
   return encodeWitness(witnessOf(structure, rho, constant, mean), digest, TOOL);
 }
 
@@ -82,7 +83,7 @@ function matrixOf(structure: Structure, { bytes, name, folder }: DocumentSource)
   if (matrix.rows !== size || matrix.cols !== size) {
     throw new ThalwegError(
       'dimension-mismatch',
-      `expected a ${size}×${size} density matrix for this model, got ${matrix.rows}×${matrix.cols} in ${name}`,
+      `expected a ${size}×${size} density matrix for this model, got ${matrix.rows}×${matrix.cols}; give a state of the model`,
     );
   }
   return matrix;
@@ -92,19 +93,22 @@ function matrixOf(structure: Structure, { bytes, name, folder }: DocumentSource)
 export function checkWitness({
   source,
   document,
+  name,
 }: {
   readonly source: DocumentSource;
   readonly document: WitnessDocument;
+  /** Of the witness, for messages. */
+  readonly name: string;
 }): VerdictDocument {
   const { structure, digest } = markovModel(source);
   if (document.model !== digest) {
     throw new ThalwegError(
       'dimension-mismatch',
-      `expected the model with digest ${document.model}, got ${digest}; the witness belongs to another model`,
-      { pointer: '/model' },
+      `expected the model with digest ${document.model}, got ${digest}; the witness belongs to another model: name that one with --model`,
+      { pointer: '/model', details: { document: name } },
     );
   }
-  const { holds, value, margin, error } = verifyWitness(structure, decodeWitness(document));
+  const { holds, value, margin, error } = inDocument(name, () => verifyWitness(structure, decodeWitness(document)));
   const { constant, mean } = document;
   return {
     schema: 'thalweg.verdict/1',

@@ -4,7 +4,7 @@ import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readSource } from '../../input/read-source.js';
 import { renderVerdict } from '../../render/render-verdict.js';
 import type { Session } from '../../session.js';
-import { computeSheet } from '../../sheet/compute-sheet.js';
+import { computeSheet, unfinishedNote } from '../../sheet/compute-sheet.js';
 import { decideClaim } from './decide.js';
 import type { CheckPlan } from './plan.js';
 
@@ -32,7 +32,7 @@ export async function checkEffect(plan: CheckPlan, session: Session): Promise<Ex
   const { output } = session;
   if (output.json) output.document(verdict);
   else output.result(renderVerdict(verdict, output));
-  if (unfinished > 0) output.note('The time limit ended some searches early: more time may refute more.');
+  if (unfinished !== null) output.note(unfinishedNote(unfinished, 'more time may decide more'));
   return statusOf(verdict);
 }
 

@@ -3,7 +3,7 @@ import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readSource } from '../../input/read-source.js';
 import { renderSheet } from '../../render/render-sheet.js';
 import type { Session } from '../../session.js';
-import { computeSheet } from '../../sheet/compute-sheet.js';
+import { computeSheet, unfinishedNote } from '../../sheet/compute-sheet.js';
 import type { ConstantsPlan } from './plan.js';
 
 /** Computes the sheet of a model and prints it. */
@@ -15,8 +15,7 @@ export async function constantsEffect(plan: ConstantsPlan, session: Session): Pr
   const { output } = session;
   if (output.json) output.document(sheet);
   else output.result(renderSheet(sheet, output));
-  if (unfinished > 0)
-    output.note('The time limit ended some searches early: observed ends may be lower with more time.');
+  if (unfinished !== null) output.note(unfinishedNote(unfinished, 'observed ends may be lower with more time'));
   return EXIT_STATUS.yes;
 }
 

@@ -2,6 +2,7 @@ import { ThalwegError } from '@thalweg/core';
 import { parseEvidence } from '@thalweg/format';
 import { only } from '../../compute/only.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { inDocument } from '../../input/in-document.js';
 import { readSource } from '../../input/read-source.js';
 import { renderCertificateVerdict } from '../../render/render-certificate-verdict.js';
 import { renderVerdict } from '../../render/render-verdict.js';
@@ -11,7 +12,8 @@ import type { VerifyPlan } from './plan.js';
 /** Checks a witness or a certificate on its model. Ends with `no` when it does not show what it states. */
 export async function verifyEffect(plan: VerifyPlan, session: Session): Promise<ExitStatus> {
   const { stdin } = session.terminal;
-  const document = parseEvidence((await readSource(plan.evidence, stdin)).bytes);
+  const evidence = await readSource(plan.evidence, stdin);
+  const document = inDocument(evidence.name, () => parseEvidence(evidence.bytes));
   if (plan.model === null) {
     throw new ThalwegError(
       'usage',
@@ -24,7 +26,7 @@ export async function verifyEffect(plan: VerifyPlan, session: Session): Promise<
     only(
       isCertificate
         ? await pool.run('certificate-check', [{ source, document }])
-        : await pool.run('witness-check', [{ source, document }]),
+        : await pool.run('witness-check', [{ source, document, name: evidence.name }]),
     ),
   );
   const { output } = session;

@@ -3,6 +3,7 @@ import { encodeWitness, writeJson, type WitnessDocument } from '@thalweg/format'
 import { only } from '../../compute/only.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readSource } from '../../input/read-source.js';
+import { requireTarget } from '../../output/require-target.js';
 import { writeFileAtomically } from '../../output/write-file-atomically.js';
 import { renderWitness } from '../../render/render-witness.js';
 import type { Session } from '../../session.js';
@@ -11,6 +12,7 @@ import type { WitnessPlan } from './plan.js';
 
 /** Finds the best witness of a constant, or the one at a given state; prints it and writes it with -o. */
 export async function witnessEffect(plan: WitnessPlan, session: Session): Promise<ExitStatus> {
+  if (plan.output !== null) await requireTarget(plan.output);
   const witness = plan.at === null ? await searchedWitness(plan, session) : await witnessAt(plan, plan.at, session);
   if (plan.output !== null) await writeFileAtomically(plan.output, writeJson(witness));
   const { output } = session;
