@@ -25,7 +25,7 @@ import { type ModelDocument, encodeMatrix } from '@thalweg/format';
 
 type Form<K extends string> = Extract<ModelDocument['generator'], { form: K }>;
 
-export function randomMatrix(random: Random, n: number): ComplexMatrix {
+function randomMatrix(random: Random, n: number): ComplexMatrix {
   return fromEntries(n, n, () => [random.normal(), random.normal()]);
 }
 
