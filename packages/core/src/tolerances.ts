@@ -180,6 +180,10 @@ export const CLOSED_FLOOR = 1e-3;
 export const LANCZOS_WHOLE = 160;
 export const LANCZOS_SUBSPACE = 40;
 
+/** From this dimension on Lanczos tests for convergence every so many steps, and not only when its subspace is full. */
+export const LANCZOS_CHECK_DIMENSION = 4096;
+export const LANCZOS_CHECK_STEPS = 5;
+
 /** A witness may state a value below its own quotient by this, relative: decimal rounding of the document. */
 export const WITNESS_TOLERANCE = 1e-12;
 

@@ -1,6 +1,13 @@
 import { ThalwegError } from '../errors.js';
 import type { Random } from '../random.js';
-import { EPSILON, KRYLOV_BREAKDOWN, LANCZOS_SUBSPACE, LANCZOS_WHOLE } from '../tolerances.js';
+import {
+  EPSILON,
+  KRYLOV_BREAKDOWN,
+  LANCZOS_CHECK_DIMENSION,
+  LANCZOS_CHECK_STEPS,
+  LANCZOS_SUBSPACE,
+  LANCZOS_WHOLE,
+} from '../tolerances.js';
 import { addCombination, norm, orthogonalise, projectOut } from './orthogonalise.js';
 import { symmetricEigen } from './symmetric-eigen.js';
 
@@ -11,6 +18,8 @@ export interface KrylovOperator {
   readonly maxMatvecs: number;
   matvecs: number;
   scale: number;
+  /** Arrays of earlier work that may be overwritten: fresh memory is slow to touch. */
+  readonly spare: Float64Array[];
 }
 
 export interface LanczosRun {
@@ -33,28 +42,40 @@ interface Ritz {
 export function lanczosRun(run: LanczosRun): Ritz {
   const { operator, locked, want, tolerance, floor } = run;
   const size = subspaceSize(operator.dimension - locked.length, want);
+  // Where products are dear, convergence is looked for between restarts as well.
+  const stretch = operator.dimension < LANCZOS_CHECK_DIMENSION ? size : LANCZOS_CHECK_STEPS;
   const projected = new Float64Array(size * size);
   const basis = [freshDirection(run, [])];
-  const spare: Float64Array[] = [];
-  let kept = 0;
-  for (;;) {
-    const { coupling, next } = extend(run, basis, spare, projected, size, kept);
-    const { values, vectors } = symmetricEigen(projected, size);
-    operator.scale = Math.max(operator.scale, Math.abs(values[0]), Math.abs(values[size - 1]));
-    const residual = (j: number): number => coupling * Math.abs(vectors[(size - 1) * size + j]);
+  for (let from = 0; ;) {
+    const to = Math.min(size, Math.max(want, from + stretch));
+    const { coupling, next } = extend(run, basis, projected, size, from, to);
+    const { values, vectors } = symmetricEigen(leadingBlock(projected, size, to), to);
+    operator.scale = Math.max(operator.scale, Math.abs(values[0]), Math.abs(values[to - 1]));
+    const residual = (j: number): number => coupling * Math.abs(vectors[(to - 1) * to + j]);
     let converged = true;
     for (let j = 0; j < want; j++) converged &&= residual(j) <= tolerance * operator.scale;
-    if (converged || values[0] - residual(0) > floor) {
+    if (converged || (to === size && values[0] - residual(0) > floor)) {
       combine(basis, vectors, want);
-      return { values: values.slice(0, want), vectors: basis.slice(0, want) };
+      operator.spare.push(...basis.splice(want), next);
+      return { values: values.slice(0, want), vectors: basis };
     }
-    kept = Math.min(size - 1, want + Math.floor((size - want) / 2));
-    combine(basis, vectors, kept);
-    spare.push(...basis.splice(kept));
-    projected.fill(0);
-    for (let j = 0; j < kept; j++) projected[j * size + j] = values[j];
+    from = to;
+    if (to === size) {
+      from = Math.min(size - 1, want + Math.floor((size - want) / 2));
+      combine(basis, vectors, from);
+      operator.spare.push(...basis.splice(from));
+      projected.fill(0);
+      for (let j = 0; j < from; j++) projected[j * size + j] = values[j];
+    }
     basis.push(next);
   }
+}
+
+function leadingBlock(a: Float64Array, size: number, count: number): Float64Array {
+  if (count === size) return a;
+  const out = new Float64Array(count * count);
+  for (let i = 0; i < count; i++) out.set(a.subarray(i * size, i * size + count), i * count);
+  return out;
 }
 
 /** Small problems are solved whole, which also settles spectra too close for restarts. */
@@ -62,19 +83,19 @@ function subspaceSize(available: number, want: number): number {
   return available <= LANCZOS_WHOLE ? available : Math.min(available, 2 * want + LANCZOS_SUBSPACE);
 }
 
-/** Grows the basis to full size, in arrays of `spare` while there are any, filling the projected matrix from column `from`; returns the last direction. */
+/** Grows the basis to `to` vectors, filling the projected matrix from column `from`; returns the next direction. */
 function extend(
   run: LanczosRun,
   basis: Float64Array[],
-  spare: Float64Array[],
   projected: Float64Array,
   size: number,
   from: number,
+  to: number,
 ): { coupling: number; next: Float64Array } {
   const { operator, locked } = run;
   let largest = operator.scale;
   for (let j = from; ; j++) {
-    const w = multiply(operator, basis[j], spare.pop());
+    const w = multiply(operator, basis[j]);
     largest = Math.max(largest, norm(w));
     orthogonalise(w, locked);
     // The three-term recurrence first: what is left then is near orthogonal to the rest, and one more projection does.
@@ -90,22 +111,19 @@ function extend(
     const exhausted = whole || coupling <= KRYLOV_BREAKDOWN * EPSILON * largest * Math.sqrt(operator.dimension);
     if (exhausted) coupling = 0;
     if (!exhausted) for (let p = 0; p < w.length; p++) w[p] /= coupling;
-    if (j === size - 1) return { coupling, next: w };
+    if (j === to - 1) return { coupling, next: w };
     basis.push(exhausted ? freshDirection(run, basis) : w);
   }
 }
 
-function multiply(
-  operator: KrylovOperator,
-  x: Float64Array,
-  y: Float64Array = new Float64Array(operator.dimension),
-): Float64Array {
+function multiply(operator: KrylovOperator, x: Float64Array): Float64Array {
   if (operator.matvecs >= operator.maxMatvecs) {
     throw new ThalwegError(
       'no-convergence',
       `expected Lanczos to converge within ${operator.maxMatvecs} products; allow more or ask for less accuracy`,
     );
   }
+  const y = operator.spare.pop() ?? new Float64Array(operator.dimension);
   operator.apply(x, y);
   operator.matvecs++;
   return y;

@@ -50,6 +50,7 @@ export function lanczosSmallest(request: LanczosRequest): LanczosResult {
     matvecs: 0,
     maxMatvecs: request.maxMatvecs,
     scale: 0,
+    spare: [],
   };
   let found: Float64Array[] = [];
   if (count > 0) found = lanczosRun({ operator, locked, want: count, random, tolerance, floor: Infinity }).vectors;

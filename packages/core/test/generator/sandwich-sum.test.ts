@@ -44,6 +44,7 @@ const CASES: [string, ComplexMatrix[], ComplexMatrix | null][] = [
   ['nothing', [], null],
   ['a real permutation', [monomial(N, () => [random.normal(), 0])], null],
   ['an imaginary one, whose phase drops out', [monomial(N, () => [0, random.normal()])], null],
+  ['six permutations, four of them together', Array.from({ length: 6 }, (_, k) => monomial(N, () => (k % 2 === 0 ? [random.normal(), 0] : [0, random.normal()]))), null],
   ['complex monomials with empty rows', [monomial(3, complex), monomial(N, complex), monomial(1, complex)], null],
   ['diagonal matrices, real and complex', [diagonal([1, -1, 2, 0, 1, 1, 3]), fromEntries(N, N, (i, j) => (i === j ? complex() : [0, 0]))], null],
   ['a diagonal drift alone', [], fromEntries(N, N, (i, j) => (i === j && i !== 2 ? complex() : [0, 0]))],
