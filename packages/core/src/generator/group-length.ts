@@ -21,7 +21,7 @@ export function groupLength(group: FiniteGroup, length: readonly number[] | 'wor
   throw new ThalwegError(
     'length-not-conditionally-negative',
     `expected k(g,h) = ½(ℓ(g)+ℓ(h)−ℓ(g⁻¹h)) to be positive semidefinite, got the eigenvalue ${smallest.toPrecision(6)}; ` +
-      'this length does not generate a Markov semigroup',
+      'this length does not generate a Markov semigroup, give one that is conditionally negative',
     { pointer: POINTER, details: { eigenvalue: smallest } },
   );
 }

@@ -4,6 +4,7 @@ import type { CertifyOutcome } from '../../compute/tasks/certificate-tasks.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { type DocumentSource, readSource } from '../../input/read-source.js';
 import type { Output } from '../../output/output.js';
+import { requireTarget } from '../../output/require-target.js';
 import { writeFileAtomically } from '../../output/write-file-atomically.js';
 import { renderCertificateVerdict } from '../../render/render-certificate-verdict.js';
 import type { Session } from '../../session.js';
@@ -12,6 +13,7 @@ import type { CertifyPlan } from './plan.js';
 /** Makes a certificate, checks it and writes it. Ends with `undecided` when none is found that passes. */
 export async function certifyEffect(plan: CertifyPlan, session: Session): Promise<ExitStatus> {
   const { model, constant, verbose, output: file } = plan;
+  if (file !== null) await requireTarget(file);
   const source = await readSource(model, session.terminal.stdin);
   const { output } = session;
   const found = await climb(source, plan, session);
