@@ -41,5 +41,8 @@ async function searchedWitness(plan: WitnessPlan, session: Session): Promise<Wit
   if (found !== null) return encodeWitness(found, sheet.model.digest, sheet.tool);
   const [row] = sheet.constants;
   const why = row?.note ?? (row?.upper ? `its upper end comes from: ${row.upper.by}` : 'nothing bounds it from above');
-  throw new ThalwegError('not-supported', `expected a witness for ${constant}, but there is none to show: ${why}; thalweg constants shows which constants are given`);
+  throw new ThalwegError(
+    'not-supported',
+    `expected a witness for ${constant}, but there is none to show: ${why}; thalweg constants shows which constants are given`,
+  );
 }
