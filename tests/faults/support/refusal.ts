@@ -38,9 +38,9 @@ export function folderWith(files: Files) {
 
 /**
  * Runs a command line that must be refused: the right exit code, nothing on standard output, one line on standard error without
- * a stack that says what was expected, what came and what to do, and no file more or less than before.
+ * a stack, and no file more or less than before. Resolves to that line.
  */
-export async function expectRefusal(files: Files, args: readonly string[], refusal: Refusal): Promise<void> {
+export async function expectRefusal(files: Files, args: readonly string[], refusal: Refusal): Promise<string> {
   const { list, run, remove } = folderWith(files);
   try {
     const before = list();
@@ -48,6 +48,7 @@ export async function expectRefusal(files: Files, args: readonly string[], refus
     expect({ exitCode, stdout }, stderr).toEqual({ exitCode: refusal.exitCode, stdout: '' });
     expectOneMessage(stderr, refusal.says);
     expect(list()).toEqual(before);
+    return stderr;
   } finally {
     remove();
   }
