@@ -62,13 +62,19 @@ function wideTable(rows: readonly Cells[], { colours }: Layout): string[] {
   const head = ['constant'.padEnd(rows[0]?.name.length ?? 0), HEADS[0].padEnd(lowerWidth), HEADS[1]].join(BETWEEN);
   const lines = rows.map(({ name, lower, lowerGrade, upper, upperGrade, closed }) =>
     [
-      colours.bold(name),
-      `${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}${filling(lower, lowerGrade, lowerWidth)}`,
-      `${upper}${GAP}${colours.dim(upperGrade)}${filling(upper, upperGrade, upperWidth)}`,
+      painted(name, colours.bold),
+      `${painted(lower, colours.blue)}${GAP}${painted(lowerGrade, colours.dim)}${filling(lower, lowerGrade, lowerWidth)}`,
+      `${upper}${GAP}${painted(upperGrade, colours.dim)}${filling(upper, upperGrade, upperWidth)}`,
       closed ? colours.green(CLOSED) : '',
     ].join(BETWEEN),
   );
   return [colours.bold(GAP + head), GAP + '─'.repeat(widthOf(rows)), ...lines.map((line) => (GAP + line).trimEnd())];
+}
+
+/** Paints the text and not the spaces around it. */
+function painted(text: string, paint: (text: string) => string): string {
+  const word = text.trim();
+  return word === '' ? text : text.replace(word, () => paint(word));
 }
 
 function filling(value: string, grade: string, width: number): string {
@@ -88,8 +94,8 @@ function narrowTable(constants: readonly ConstantDocument[], units: Units, { col
     const [lower = '', upper = ''] = values.slice(2 * k, 2 * k + 2);
     return [
       `${GAP}${colours.bold(name)}${closed ? `${GAP}${colours.green(CLOSED)}` : ''}`,
-      `${GAP}${GAP}lower${GAP}${colours.blue(lower)}${GAP}${colours.dim(lowerGrade)}`.trimEnd(),
-      `${GAP}${GAP}upper${GAP}${upper}${GAP}${colours.dim(upperGrade)}`.trimEnd(),
+      `${GAP}${GAP}lower${GAP}${painted(lower, colours.blue)}${GAP}${painted(lowerGrade, colours.dim)}`.trimEnd(),
+      `${GAP}${GAP}upper${GAP}${upper}${GAP}${painted(upperGrade, colours.dim)}`.trimEnd(),
     ];
   });
 }
