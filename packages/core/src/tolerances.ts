@@ -28,7 +28,7 @@ export const KERNEL_TOLERANCE = 1e-11;
 /** Non-zero eigenvalues above this, relative, are clearly non-zero; between the two a kernel is undecided and said so. */
 export const KERNEL_GAP = 1e-8;
 
-/** An alternating minimisation ends when one round gains less than this, relative to 1+|value|. */
+/** An alternating minimisation ends when one round gains less than this, relative to ‖Γ₂‖/‖Γ‖ + |value|. */
 export const ALTERNATION_TOLERANCE = 1e-13;
 
 /** |t| below which artanh(t)/t is summed as a series of ten terms; t^20 then stays below 1e-20. */

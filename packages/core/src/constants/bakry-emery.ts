@@ -74,6 +74,7 @@ interface Step {
 /** Best observable at fixed ψ, then best ψ at fixed observable, until the value settles. The value never increases. */
 function alternate(gamma: ComplexMatrix, gamma2: ComplexMatrix, start: ComplexMatrix, stop?: () => boolean): Step {
   let step = solveObservable(gamma, gamma2, start);
+  const rate = frobeniusNorm(gamma2) / frobeniusNorm(gamma);
   for (let round = 0; round < 400; round++) {
     if (!Number.isFinite(step.pencil.value) || stop?.()) return step;
     const a = step.pencil.vector;
@@ -83,7 +84,7 @@ function alternate(gamma: ComplexMatrix, gamma2: ComplexMatrix, start: ComplexMa
     const gain = step.pencil.value - next.pencil.value;
     if (gain <= 0) return step;
     step = next;
-    if (gain <= ALTERNATION_TOLERANCE * (1 + Math.abs(next.pencil.value))) return step;
+    if (gain <= ALTERNATION_TOLERANCE * (rate + Math.abs(next.pencil.value))) return step;
   }
   return step;
 }

@@ -62,6 +62,11 @@ export function runEntropyStart(
       : exponentialState(algebra, fromCoordinates(algebra, x));
   let lowest = Infinity;
   let entropyAtLowest = Infinity;
+  const x0 = Float64Array.from(start.x);
+  const first = problem.evaluate(stateAt(x0));
+  if (!first) return null;
+  // In units of the first value, so that the tolerances of the search do not depend on the unit of time.
+  const unit = first.value > 0 ? first.value : 1;
   const objective = (x: Float64Array, gradient: Float64Array): number => {
     const found = problem.evaluate(stateAt(x));
     if (!found) return Infinity;
@@ -69,10 +74,9 @@ export function runEntropyStart(
     const h = found.gradient();
     if (start.diagonal) for (let a = 0; a < x.length; a++) gradient[a] = h.re[a * x.length + a];
     else toCoordinates(algebra, h, gradient);
-    return found.value;
+    for (let k = 0; k < gradient.length; k++) gradient[k] /= unit;
+    return found.value / unit;
   };
-  const x0 = Float64Array.from(start.x);
-  if (!problem.evaluate(stateAt(x0))) return null;
   const found = minimiseBfgs(objective, x0, {
     maxIterations: 400,
     valueTolerance: 1e-12,

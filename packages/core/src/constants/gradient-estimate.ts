@@ -8,7 +8,7 @@ import { type StateFrame, fromFrame } from '../metric/state-frame.js';
 import { type StateParameters, diagonalParameters, hermitianParameters } from '../metric/state-parameters.js';
 import { minimiseBfgs } from '../search/bfgs.js';
 import { minimiseScalar } from '../search/brent.js';
-import { type ComplexMatrix, zeros } from '../linalg/complex-matrix.js';
+import { type ComplexMatrix, frobeniusNorm, zeros } from '../linalg/complex-matrix.js';
 import { LOG_EIGENVALUE_RANGE, STATE_FLOORS } from '../tolerances.js';
 import type { SearchStart } from './search-starts.js';
 
@@ -127,8 +127,12 @@ function parametersOf(problem: GradientEstimateProblem): StateParameters {
   return commutative || problem.covariant ? diagonalParameters(algebra.size) : hermitianParameters(algebra);
 }
 
-/** κ and its gradient in the parameters; +∞ outside the range of eigenvalues where doubles resolve the forms. */
+/**
+ * κ and its gradient in the parameters, in units of the generator's rates, so that the tolerances of the search do not depend
+ * on the unit of time; +∞ outside the range of eigenvalues where doubles resolve the forms.
+ */
 function objective(pencil: CurvaturePencil, parameters: StateParameters, counter: { evaluations: number }) {
+  const unit = meanRate(pencil.model);
   const slope = zeros(pencil.model.algebra.size);
   return (x: Float64Array, gradient: Float64Array): number => {
     const frame = parameters.frame(x);
@@ -137,8 +141,16 @@ function objective(pencil: CurvaturePencil, parameters: StateParameters, counter
     const kappa = pencil.withGradient(frame, slope);
     if (!Number.isFinite(kappa)) return Infinity;
     parameters.pullBack(frame, slope, gradient);
-    return kappa;
+    for (let k = 0; k < gradient.length; k++) gradient[k] /= unit;
+    return kappa / unit;
   };
+}
+
+/** Tr Σ e^{−ω_j/2} 2V_j*V_j / N, the mean rate at which the jumps leave a level. */
+function meanRate({ jumps, algebra }: MetricModel): number {
+  let sum = 0;
+  for (const { matrix, frequency } of jumps) sum += 2 * Math.exp(-frequency / 2) * frobeniusNorm(matrix) ** 2;
+  return sum > 0 ? sum / algebra.size : 1;
 }
 
 /** Minimise along the ray s·x from the maximally mixed state first: two-level spectra often carry the minimum. */
