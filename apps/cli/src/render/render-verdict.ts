@@ -4,7 +4,6 @@ import { constantName } from './constant-name.js';
 import { decimalColumn } from './decimal-column.js';
 import type { Layout } from './layout.js';
 import { minus, shortNumber } from './number-text.js';
-import { hanging } from './wrap.js';
 
 type ClaimVerdict = VerdictDocument['claims'][number];
 
@@ -35,7 +34,7 @@ function claimLines(claims: readonly ClaimVerdict[], layout: Layout): string[] {
 
 /** What a witness was found to show. */
 function witnessLines({ claims, checks = [] }: VerdictDocument, layout: Layout): string[] {
-  return claims.flatMap(({ constant: id, mean, value, verdict, note }) => {
+  return claims.map(({ constant: id, mean, value, verdict, note }) => {
     const [check] = checks;
     const size =
       check?.value === undefined
@@ -43,13 +42,9 @@ function witnessLines({ claims, checks = [] }: VerdictDocument, layout: Layout):
         : `, off by ${shortNumber(check.value)}, error bound ${shortNumber(check.bound ?? 0)}`;
     const found = note ?? `evaluated afresh${size}`;
     const name = constantName({ id, mean });
-    return hangingAnswer(verdict, `${name} ≤ ${minus(value.toPrecision(10))}: ${found}`, layout);
+    const line = `${verdict.padEnd(ANSWER)}${name} ≤ ${minus(value.toPrecision(10))}: ${found}`;
+    return painted(line, verdict, layout);
   });
-}
-
-function hangingAnswer(verdict: ClaimVerdict['verdict'], text: string, layout: Layout): string[] {
-  const [first = '', ...rest] = hanging(verdict, text, layout.width, ANSWER);
-  return [painted(first, verdict, layout), ...rest];
 }
 
 function painted(line: string, verdict: ClaimVerdict['verdict'], { colours }: Layout): string {

@@ -33,11 +33,12 @@ export function assembleSheet(
   const closed = closeBrackets(withLsiLower(structure, direct), relations, scale);
   const derived = closed.map((row) => derivedRow(structure, request, closed, row));
   const final = closeBrackets(derived, relations, scale);
-  const wanted = new Set(request.rows.map(nameOf));
-  const t2 = final.find(({ key }) => key.id === 't2')?.lower ?? null;
-  return final
-    .filter((row) => wanted.has(nameOf(row.key)))
-    .map((row) => ({ ...row, notes: [...row.notes, ...missingEndNotes(structure, row, t2)] }));
+  const byName = new Map(final.map((row) => [nameOf(row.key), row]));
+  const t2 = byName.get('t2')?.lower ?? null;
+  return request.rows.map((key) => {
+    const row = byName.get(nameOf(key)) as SheetRow;
+    return { ...row, notes: [...row.notes, ...missingEndNotes(structure, row, t2)] };
+  });
 }
 
 /** Every row that the findings so far bound, wanted or not. */
