@@ -28,10 +28,12 @@ export interface Pool<Registry extends TaskRegistry> {
   /**
    * Runs one task for each input, in any order and on any thread, and resolves to the outcomes in the order of the inputs.
    * When tasks fail, throws the error of the first of them in that order, whichever failed first in time.
+   * `onDone` hears after every task how many are done.
    */
   run<Name extends keyof Registry & string>(
     name: Name,
     inputs: readonly InputOf<Registry[Name]>[],
+    onDone?: (done: number) => void,
   ): Promise<TaskOutcome<ResultOf<Registry[Name]>>[]>;
   /** Ends the threads. */
   close(): Promise<void>;
@@ -41,7 +43,7 @@ export interface Pool<Registry extends TaskRegistry> {
 export function createPool<Registry extends TaskRegistry>(options: PoolOptions): Pool<Registry> {
   const idle: Thread[] = [];
   return {
-    run: (name, inputs) => new Batch(options, idle, name, inputs).run() as Promise<never>,
+    run: (name, inputs, onDone) => new Batch(options, idle, name, inputs, onDone).run() as Promise<never>,
     close: async () => {
       await Promise.all(idle.splice(0).map((thread) => thread.end()));
     },
@@ -55,18 +57,26 @@ class Batch {
   readonly #name: string;
   readonly #inputs: readonly unknown[];
   readonly #outcomes: TaskOutcome<unknown>[];
+  readonly #onDone: ((done: number) => void) | undefined;
   readonly #busy = new Set<Thread>();
   readonly #deadline: number | null;
   #next = 0;
   #failure: { index: number; error: unknown } | null = null;
   #settle: () => void = () => undefined;
 
-  constructor(options: PoolOptions, idle: Thread[], name: string, inputs: readonly unknown[]) {
+  constructor(
+    options: PoolOptions,
+    idle: Thread[],
+    name: string,
+    inputs: readonly unknown[],
+    onDone?: (done: number) => void,
+  ) {
     this.#options = options;
     this.#idle = idle;
     this.#name = name;
     this.#inputs = inputs;
     this.#outcomes = inputs.map(() => ({ done: false }));
+    this.#onDone = onDone;
     this.#deadline = options.timeLimit === null ? null : Date.now() + options.timeLimit;
   }
 
@@ -111,7 +121,7 @@ class Batch {
           this.#options.progress?.(message.text);
           return;
         }
-        if (message.kind === 'done') this.#outcomes[index] = { done: true, result: message.result };
+        if (message.kind === 'done') this.#finish(index, message.result);
         else this.#fail(index, restoreError(message.error));
         this.#idle.push(thread);
         this.#release(thread);
@@ -121,6 +131,11 @@ class Batch {
         this.#release(thread);
       },
     });
+  }
+
+  #finish(index: number, result: unknown): void {
+    this.#outcomes[index] = { done: true, result };
+    this.#onDone?.(this.#outcomes.filter(({ done }) => done).length);
   }
 
   #release(thread: Thread): void {

@@ -44,11 +44,11 @@ export async function computeSheet(job: SheetJob, session: Session): Promise<Com
     session.output.progress('eigenvalue problems and lifts');
     const [proofs] = await pool.run('sheet-proofs', [{ source, request, searchClosed: job.searchClosed ?? false }]);
     const { findings, searches } = proofs?.done ? proofs.result : { findings: [], searches: [] };
-    session.output.progress(`searching, ${searches.length} starts`);
-    const outcomes = await pool.run(
-      'sheet-search',
-      searches.map((task) => ({ source, task })),
-    );
+    const tell = (done: number): void =>
+      session.output.progress(`searching: ${done} of ${searches.length} starts done`);
+    tell(0);
+    const inputs = searches.map((task) => ({ source, task }));
+    const outcomes = await pool.run('sheet-search', inputs, tell);
     const found: SheetFinding[] = [...findings];
     for (const outcome of outcomes) if (outcome.done) found.push(outcome.result);
     const sheet = only(await pool.run('sheet-document', [{ source, request, findings: found, convention }]));

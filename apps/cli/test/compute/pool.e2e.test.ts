@@ -48,6 +48,13 @@ test.each([1, 2, 5])('results stand in the order of the inputs on %i threads', a
   expect(await start({ threads }).run('slowSquare', inputs)).toEqual([0, 1, 4, 9, 16].map(done));
 });
 
+test('the number of tasks done so far reaches the caller', async () => {
+  const heard: number[] = [];
+  const inputs = [30, 20, 10].map((milliseconds, x) => ({ x, milliseconds }));
+  await start({ threads: 1 }).run('slowSquare', inputs, (count) => heard.push(count));
+  expect(heard).toEqual([1, 2, 3]);
+});
+
 test('no input, no thread, no result', async () => {
   expect(await start().run('square', [])).toEqual([]);
 });
