@@ -68,7 +68,7 @@ export function curvatureForms(model: MetricModel, mean: OperatorMean, paired: b
       fillMeanTable(tables[k], mean, lambda, model.frequencies[k]);
       addJumpForms(forms, units, tensor, tables[k], eta, scratch);
     });
-    subtractGeneratorPart(forms, generator, d);
+    subtractGeneratorPart(forms, generator, d, scratch);
   }
   return { units, metricRe, metricIm, curvatureRe, curvatureIm, rotated, eta, generator, tables, usedJumps, evaluate };
 }
@@ -87,23 +87,29 @@ function clear({ re, im }: Parts): void {
   im.fill(0);
 }
 
-/** curvature −= ½(G·L + (G·L)*), G the metric form and L the generator on matrix units. */
-function subtractGeneratorPart(forms: readonly Float64Array[], generator: Parts, d: number): void {
-  const [gr, gi, qr, qi] = forms;
-  const { re: lr, im: li } = generator;
+/** curvature −= ½(G·L + (G·L)*), G the metric form and L the generator on matrix units; work holds 2D numbers. */
+function subtractGeneratorPart(
+  [gr, gi, qr, qi]: readonly Float64Array[],
+  { re: lr, im: li }: Parts,
+  d: number,
+  work: Float64Array,
+): void {
   for (let p = 0; p < d; p++) {
+    work.fill(0);
     for (let k = 0; k < d; k++) {
       const xr = 0.5 * gr[p * d + k];
       const xi = 0.5 * gi[p * d + k];
       if (xr === 0 && xi === 0) continue;
-      for (let q = 0; q < d; q++) {
-        const tr = xr * lr[k * d + q] - xi * li[k * d + q];
-        const ti = xr * li[k * d + q] + xi * lr[k * d + q];
-        qr[p * d + q] -= tr;
-        qi[p * d + q] -= ti;
-        qr[q * d + p] -= tr;
-        qi[q * d + p] += ti;
+      for (let q = 0, at = k * d; q < d; q++, at++) {
+        work[q] += xr * lr[at] - xi * li[at];
+        work[d + q] += xr * li[at] + xi * lr[at];
       }
+    }
+    for (let q = 0; q < d; q++) {
+      qr[p * d + q] -= work[q];
+      qi[p * d + q] -= work[d + q];
+      qr[q * d + p] -= work[q];
+      qi[q * d + p] += work[d + q];
     }
   }
 }

@@ -31,6 +31,7 @@ export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms:
   const scratch = new Float64Array(2 * nn);
   const values = new Float64Array(n);
   const tables = model.frequencies.map(() => emptyMeanTable(n));
+  const groups = new Set(forms.usedJumps.map(({ group }) => group));
   const { blockOf } = model.algebra;
 
   function at(lambda: Float64Array, a: Parts, kappa: number, out: Parts): void {
@@ -40,7 +41,7 @@ export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms:
     forms.usedJumps.forEach(({ index, weight, group }) => {
       commutatorInto(derivations[index], forms.rotated[index], a, n);
       commutatorInto(image, forms.rotated[index], la, n);
-      addFormGradient(norm, forms.tables[group], derivations[index], derivations[index], weight, n, blockOf);
+      addNormGradient(norm, forms.tables[group], derivations[index], weight, n, blockOf);
       addFormGradient(out, forms.tables[group], derivations[index], image, -weight, n, blockOf);
     });
     applyOnUnits(forms, norm, la);
@@ -61,11 +62,11 @@ export function curvatureGradient(model: MetricModel, mean: OperatorMean, forms:
       for (let i = 0; i < n; i++) moved.re[i * n + i] += lambda[i];
       nearDiagonalEigen(moved.re, moved.im, n, vectors.re, vectors.im);
       for (let i = 0; i < n; i++) values[i] = moved.re[i * n + i];
-      tables.forEach((table, k) => fillMeanTable(table, mean, values, model.frequencies[k]));
+      for (const k of groups) fillMeanTable(tables[k], mean, values, model.frequencies[k]);
       clear(slope);
       forms.usedJumps.forEach(({ index, weight, group }) => {
         rotateInto(turned, derivations[index], vectors, n, scratch);
-        addFormGradient(slope, tables[group], turned, turned, weight, n, blockOf);
+        addNormGradient(slope, tables[group], turned, weight, n, blockOf);
       });
       rotateBackInto(turned, slope, vectors, n, scratch);
       addScaled(out, turned, (0.25 * sign) / step);
@@ -117,6 +118,42 @@ function commutatorInto(out: Parts, v: Parts, a: Parts, n: number): void {
       }
       out.re[i * n + j] = re;
       out.im[i * n + j] = im;
+    }
+  }
+}
+
+/** out += weight × the gradient in ρ of <X,[ρ]X>, Hermitian, blocks only. */
+function addNormGradient(
+  out: Parts,
+  { left, right }: MeanTable,
+  x: Parts,
+  weight: number,
+  n: number,
+  blockOf: Int32Array,
+): void {
+  const { re: xr, im: xi } = x;
+  for (let a = 0; a < n; a++) {
+    for (let c = a; c < n; c++) {
+      if (blockOf[a] !== blockOf[c]) continue;
+      let re = 0;
+      let im = 0;
+      for (let b = 0; b < n; b++) {
+        const t = left[(a * n + c) * n + b];
+        const ab = a * n + b;
+        const cb = c * n + b;
+        re += t * (xr[ab] * xr[cb] + xi[ab] * xi[cb]);
+        im += t * (xi[ab] * xr[cb] - xr[ab] * xi[cb]);
+        const s = right[(b * n + a) * n + c];
+        const bc = b * n + c;
+        const ba = b * n + a;
+        re += s * (xr[bc] * xr[ba] + xi[bc] * xi[ba]);
+        im += s * (xi[bc] * xr[ba] - xr[bc] * xi[ba]);
+      }
+      out.re[a * n + c] += weight * re;
+      out.im[a * n + c] += weight * im;
+      if (a === c) continue;
+      out.re[c * n + a] += weight * re;
+      out.im[c * n + a] -= weight * im;
     }
   }
 }

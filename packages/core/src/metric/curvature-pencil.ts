@@ -31,11 +31,17 @@ export interface CurvaturePencil {
 /**
  * κ(ρ) = inf_A q_ρ(A)/‖A‖²_ρ over observables outside the fixed points (§5 of the method; Carlen & Maas 2017, §10),
  * as the smallest eigenvalue of a real symmetric pencil of size dim M − dim F, twice that for means that are not
- * symmetric, where observables are not self-adjoint. Workspace is kept between calls.
+ * symmetric, where observables are not self-adjoint. Workspace is kept between calls, and one pencil with the model.
  */
 export function curvaturePencil(model: MetricModel, mean: MeanName): CurvaturePencil {
-  return model.commutative ? chainPencil(model, mean) : densePencil(model, mean);
+  const known = pencils.get(model) ?? new Map<MeanName, CurvaturePencil>();
+  pencils.set(model, known);
+  const pencil = known.get(mean) ?? (model.commutative ? chainPencil(model, mean) : densePencil(model, mean));
+  known.set(mean, pencil);
+  return pencil;
 }
+
+const pencils = new WeakMap<MetricModel, Map<MeanName, CurvaturePencil>>();
 
 /** The pencil on any algebra, commutative ones included: the plain path that `chainPencil` is tested against. */
 export function densePencil(model: MetricModel, mean: MeanName): CurvaturePencil {

@@ -18,12 +18,12 @@ function logarithmicMeanSlope(x: number, y: number): number {
   return phi2(-r);
 }
 
-/** (Λ(x1,y) − Λ(x2,y))/(x1 − x2), the slope at x1 when x1 = x2; no cancellation as the two meet. */
-export function logarithmicMeanDifference(x1: number, x2: number, y: number): number {
+/** (Λ(x1,y) − Λ(x2,y))/(x1 − x2), the slope at x1 when x1 = x2; no cancellation as the two meet. Known values save logarithms. */
+export function logarithmicMeanDifference(x1: number, x2: number, y: number, value1?: number, value2?: number): number {
   if (x1 === x2) return logarithmicMeanSlope(x1, y);
   const width = x1 - x2;
   if (Math.abs(width) > CLOSE_ARGUMENTS * (x1 + x2)) {
-    return (logarithmicMean(x1, y) - logarithmicMean(x2, y)) / width;
+    return ((value1 ?? logarithmicMean(x1, y)) - (value2 ?? logarithmicMean(x2, y))) / width;
   }
   // The mean of the slope over [x2, x1] by Gauss–Legendre quadrature (six points).
   const centre = (x1 + x2) / 2;

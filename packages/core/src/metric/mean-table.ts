@@ -24,13 +24,19 @@ export function fillMeanTable(table: MeanTable, mean: OperatorMean, lambda: Floa
     const x = up * lambda[a];
     for (let b = 0; b < n; b++) f[a * n + b] = mean.value(x, down * lambda[b]);
   }
+  // At frequency zero a symmetric mean has the same differences on both sides.
+  const same = omega === 0 && mean.symmetric;
   for (let a = 0; a < n; a++) {
     for (let c = a; c < n; c++) {
       for (let b = 0; b < n; b++) {
-        const l = up * mean.firstDifference(up * lambda[a], up * lambda[c], down * lambda[b]);
+        const l =
+          up * mean.firstDifference(up * lambda[a], up * lambda[c], down * lambda[b], f[a * n + b], f[c * n + b]);
         left[(a * n + c) * n + b] = l;
         left[(c * n + a) * n + b] = l;
-        const r = down * mean.secondDifference(up * lambda[b], down * lambda[a], down * lambda[c]);
+        const r = same
+          ? l
+          : down *
+            mean.secondDifference(up * lambda[b], down * lambda[a], down * lambda[c], f[b * n + a], f[b * n + c]);
         right[(b * n + a) * n + c] = r;
         right[(b * n + c) * n + a] = r;
       }

@@ -29,8 +29,18 @@ export interface MetricModel {
   readonly commutative: boolean;
 }
 
-/** Collect the metric's data from a canonical form and its fixed points. */
+/** Collect the metric's data from a canonical form and its fixed points; kept while the form lives, with what is prepared on it. */
 export function metricModel(canonical: CanonicalForm, fixed: FixedPoints): MetricModel {
+  const known = models.get(canonical);
+  if (known?.fixed === fixed.basis) return known;
+  const model = collect(canonical, fixed);
+  models.set(canonical, model);
+  return model;
+}
+
+const models = new WeakMap<CanonicalForm, MetricModel>();
+
+function collect(canonical: CanonicalForm, fixed: FixedPoints): MetricModel {
   const frequencies: number[] = [];
   const jumps = canonical.jumps.map((jump, j): MetricJump => {
     let group = frequencies.findIndex((w) => Math.abs(w - jump.frequency) <= FREQUENCY_TOLERANCE * (1 + Math.abs(w)));

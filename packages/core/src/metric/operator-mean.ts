@@ -11,10 +11,10 @@ export interface OperatorMean {
   readonly symmetric: boolean;
   /** F(x,y) for x, y > 0. */
   readonly value: (x: number, y: number) => number;
-  /** (F(x1,y) − F(x2,y))/(x1 − x2), the derivative in x when they meet. */
-  readonly firstDifference: (x1: number, x2: number, y: number) => number;
+  /** (F(x1,y) − F(x2,y))/(x1 − x2), the derivative in x when they meet; the two values may be given where they are known. */
+  readonly firstDifference: (x1: number, x2: number, y: number, value1?: number, value2?: number) => number;
   /** (F(x,y1) − F(x,y2))/(y1 − y2), the derivative in y when they meet. */
-  readonly secondDifference: (x: number, y1: number, y2: number) => number;
+  readonly secondDifference: (x: number, y1: number, y2: number, value1?: number, value2?: number) => number;
 }
 
 /** The operator mean of the given name. */
@@ -60,5 +60,11 @@ function symmetricMean(
   value: OperatorMean['value'],
   firstDifference: OperatorMean['firstDifference'],
 ): OperatorMean {
-  return { name, symmetric: true, value, firstDifference, secondDifference: (x, y1, y2) => firstDifference(y1, y2, x) };
+  return {
+    name,
+    symmetric: true,
+    value,
+    firstDifference,
+    secondDifference: (x, y1, y2, value1, value2) => firstDifference(y1, y2, x, value1, value2),
+  };
 }

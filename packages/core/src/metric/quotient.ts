@@ -4,7 +4,7 @@ import { type MeanTable, emptyMeanTable, fillMeanTable } from './mean-table.js';
 import type { MetricModel } from './metric-model.js';
 import type { OperatorMean } from './operator-mean.js';
 import type { StateFrame } from './state-frame.js';
-import { canonicalGenerator, canonicalGeneratorAdjoint } from './canonical-generator.js';
+import { canonicalGenerator } from './canonical-generator.js';
 
 /** The two quadratic forms of the gradient estimate at one (ρ, A). */
 export interface Quotient {
@@ -24,8 +24,9 @@ export function quotientAt(model: MetricModel, mean: OperatorMean, frame: StateF
   const inFrame = rotateModel(model, frame, a);
   const n = model.algebra.size;
   const tables = meanTables(model, mean, frame.lambda);
-  const flow = canonicalGeneratorAdjoint(inFrame.model, diagonalMatrix(frame.lambda));
-  const la = canonicalGenerator(inFrame.model, inFrame.observable);
+  const generator = canonicalGenerator(inFrame.model);
+  const flow = generator.onStates(diagonalMatrix(frame.lambda));
+  const la = generator.onObservables(inFrame.observable);
   let metric = 0;
   let curvature = 0;
   let magnitude = 0;
