@@ -1,9 +1,8 @@
 /**
- * Times the linear algebra kernels against ml-matrix; lines give the best of many runs, which on a busy machine is the
- * only stable figure. From the repository root:
+ * Times the linear algebra kernels against ml-matrix; rows give the best of many runs, which on a busy machine is the
+ * only stable figure, and how many times longer ml-matrix takes.
  *
- *     npx tsx packages/core/bench/linalg.ts
- *     npx esbuild packages/core/bench/linalg.ts --bundle --platform=node --format=esm | node --input-type=module -
+ *     npm run bench -- linalg
  */
 import { CholeskyDecomposition, EigenvalueDecomposition, Matrix, SingularValueDecomposition } from 'ml-matrix';
 import { choleskyReal } from '../src/linalg/cholesky-real.js';
@@ -25,6 +24,8 @@ import { seededRandom } from '../src/random.js';
 /** Time spent on one line, in nanoseconds. */
 const BUDGET = 3e8;
 
+console.log('|   n | what                   |         time | ml-matrix |');
+console.log('| --- | ---------------------- | ------------ | --------- |');
 for (const n of [8, 16, 24, 64, 256]) {
   const random = seededRandom(`bench ${n}`);
   const general = Float64Array.from({ length: n * n }, () => random.normal());
@@ -129,6 +130,8 @@ function best(run: () => unknown): number {
 }
 
 function report(n: number, what: string, time: number, reference?: number): void {
-  const ratio = reference === undefined ? '' : `${(reference / time).toFixed(1)} × ml-matrix`;
-  console.log(`${String(n).padStart(4)}  ${what.padEnd(24)}${time.toFixed(1).padStart(10)} µs  ${ratio}`);
+  const ratio = reference === undefined ? '' : `${(reference / time).toFixed(1)} ×`;
+  console.log(
+    `| ${String(n).padStart(3)} | ${what.padEnd(22)} | ${time.toFixed(1).padStart(9)} µs | ${ratio.padEnd(9)} |`,
+  );
 }
