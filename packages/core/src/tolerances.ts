@@ -306,3 +306,9 @@ export const SHEET_LIFT_UNKNOWNS = 250;
 /** Largest side of a form, and most real unknowns of its programme, that `certify` will try. */
 export const CERTIFY_LIFT_SIDE = 600;
 export const CERTIFY_LIFT_UNKNOWNS = 1500;
+
+/** Off-diagonal entries of σ below this, relative to the diagonal ones, leave its given basis as the eigenbasis. */
+export const STATE_OFF_DIAGONAL = 1e-10;
+
+/** Entries of a jump in the eigenbasis of σ below this fraction of its norm are rounding. */
+export const JUMP_DUST = 1e-13;

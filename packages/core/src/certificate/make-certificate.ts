@@ -64,7 +64,7 @@ export function makeCertificate(
   const none = { made: null, ceiling, reason: 'exhausted' } as const;
   if (canonical.jumps.length === 0) return { ...none, note: 'L is 0: every constant is infinite' };
   if (ceiling === -Infinity) return { ...none, note: 'cbe is −∞, so that no lift exists' };
-  const found = climbLadder(generator, canonical, {
+  const found = climbLadder(canonical, {
     target: ceiling,
     maxSide: CERTIFY_LIFT_SIDE,
     maxUnknowns: CERTIFY_LIFT_UNKNOWNS,

@@ -1,4 +1,3 @@
-import type { Generator } from '../generator/generator.js';
 import { type ComplexMatrix, frobeniusNorm } from '../linalg/complex-matrix.js';
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
 import { denseFromSparse } from '../linalg/sparse-matrix.js';
@@ -13,6 +12,7 @@ import { type LiftUnknown, liftUnknowns } from './lift-orbits.js';
 import { liftProgramme } from './lift-programme.js';
 import { candidateUnitaries, diagonalCharges, jumpSymmetries } from './lift-symmetries.js';
 import { type LiftAnsatz, type LiftTerm, liftTerms } from './lift-terms.js';
+import { inStateBasis } from './state-basis.js';
 
 /** A lift found by the semidefinite programme, before it is checked. */
 export interface FoundLift {
@@ -44,18 +44,13 @@ export interface LiftOptions {
  * The best lift of one ansatz for a GNS-symmetric generator: largest K with CGE(K) proved by it (§6). Null when the ansatz
  * has no lift at all, is too large, or its programme ends without an optimum.
  */
-export function findLift(
-  g: Generator,
-  canonical: CanonicalForm,
-  ansatz: LiftAnsatz,
-  options: LiftOptions,
-): FoundLift | null {
-  const model = liftModel(canonical);
+export function findLift(canonical: CanonicalForm, ansatz: LiftAnsatz, options: LiftOptions): FoundLift | null {
+  const model = liftModel(inStateBasis(canonical));
   const symmetries = jumpSymmetries(model, candidateUnitaries(model));
   const terms = liftTerms(model, ansatz, diagonalCharges(model));
   const unknowns = liftUnknowns(model, terms, symmetries);
   if (unknowns.length > options.maxUnknowns || options.stop?.()) return null;
-  const solutions = solveIntertwining(g, model, unknowns);
+  const solutions = solveIntertwining(model, unknowns);
   if (!solutions) return null;
   const programme = liftProgramme(model, unknowns, solutions);
   const solution = solveProgramme(programme, options);

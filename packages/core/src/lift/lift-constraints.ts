@@ -1,5 +1,4 @@
-import { applyGenerator } from '../generator/apply-generator.js';
-import type { Generator } from '../generator/generator.js';
+import type { BlockAlgebra } from '../algebra/block-algebra.js';
 import {
   type ComplexMatrix,
   addScaledInto,
@@ -25,13 +24,9 @@ export interface LiftSolutions {
 }
 
 /** Solve the intertwining equations in the unknowns; null when the ansatz has no solution. */
-export function solveIntertwining(
-  g: Generator,
-  model: LiftModel,
-  unknowns: readonly LiftUnknown[],
-): LiftSolutions | null {
+export function solveIntertwining(model: LiftModel, unknowns: readonly LiftUnknown[]): LiftSolutions | null {
   const p = unknowns.length;
-  const { gram, right, norm, rows } = normalEquations(g, model, unknowns);
+  const { gram, right, norm, rows } = normalEquations(model, unknowns);
   const { values, vectors } = symmetricEigen(gram, p);
   const top = p > 0 ? Math.max(values[p - 1], 0) : 0;
   const origin = new Float64Array(p);
@@ -57,15 +52,15 @@ interface Equation {
   readonly right: number;
 }
 
-function normalEquations(g: Generator, model: LiftModel, unknowns: readonly LiftUnknown[]) {
+function normalEquations(model: LiftModel, unknowns: readonly LiftUnknown[]) {
   const p = unknowns.length;
   const gram = new Float64Array(p * p);
   const right = new Float64Array(p);
   const rows: Equation[] = [];
   let norm = 0;
   const byTarget = termsByTarget(model, unknowns);
-  for (const e of matrixUnitsOf(g)) {
-    const image = applyGenerator(g, e);
+  for (const e of matrixUnitsOf(model)) {
+    const image = generatorImage(model, e);
     const derivatives = model.jumps.map((_, j) => derivative(model, j, e));
     model.jumps.forEach((_, k) => {
       const target = derivative(model, k, image);
@@ -94,6 +89,37 @@ function termsByTarget(model: LiftModel, unknowns: readonly LiftUnknown[]): Targ
     for (const { term, re, im } of terms) out[term.to].push({ unknown, term, re, im });
   });
   return out;
+}
+
+/** L(A) = Σ_m R_m*AR_m − ½(SA + AS). */
+function generatorImage({ jumps, drift, algebra }: LiftModel, a: ComplexMatrix): ComplexMatrix {
+  const out = zeros(algebra.size);
+  for (const { corner, row, col } of jumps) {
+    const inside = subMatrix(algebra, a, row, row);
+    addCornerInto(out, algebra, col, multiplyAdjointFirst(corner, multiply(inside, corner)), 1);
+  }
+  drift.forEach((s, b) => {
+    const inside = subMatrix(algebra, a, b, b);
+    addCornerInto(out, algebra, b, addScaledInto(multiply(s, inside), multiply(inside, s), 1), -0.5);
+  });
+  return out;
+}
+
+function addCornerInto(
+  out: ComplexMatrix,
+  algebra: BlockAlgebra,
+  block: number,
+  part: ComplexMatrix,
+  factor: number,
+): void {
+  const start = algebra.offsets[block];
+  for (let i = 0; i < part.rows; i++) {
+    for (let j = 0; j < part.cols; j++) {
+      const to = (start + i) * algebra.size + start + j;
+      out.re[to] += factor * part.re[i * part.cols + j];
+      out.im[to] += factor * part.im[i * part.cols + j];
+    }
+  }
 }
 
 /** ½(Sξ + ξS) in the corner of k: the fixed part of a lift, moved to the right-hand side. */
@@ -166,7 +192,7 @@ function largestDefect(rows: readonly Equation[], x: Float64Array): number {
   return worst;
 }
 
-function matrixUnitsOf({ algebra }: Generator): ComplexMatrix[] {
+function matrixUnitsOf({ algebra }: LiftModel): ComplexMatrix[] {
   const n = algebra.size;
   const out: ComplexMatrix[] = [];
   for (let a = 0; a < n; a++) {

@@ -1,4 +1,3 @@
-import type { Generator } from '../generator/generator.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import { LIFT_CLOSED } from '../tolerances.js';
 import { type FoundLift, type LiftOptions, findLift } from './find-lift.js';
@@ -41,14 +40,14 @@ const LIFT_LADDER: readonly LiftRung[] = [
 ];
 
 /** Climb the ladder of ansätze until the target is reached; null when no rung has a lift. */
-export function climbLadder(g: Generator, canonical: CanonicalForm, options: LadderOptions): LadderResult | null {
+export function climbLadder(canonical: CanonicalForm, options: LadderOptions): LadderResult | null {
   let best: LadderResult | null = null;
   for (const rung of LIFT_LADDER) {
     if (options.ansatz && rung.ansatz !== options.ansatz) continue;
     if (options.stop?.()) return best && { ...best, reason: 'stopped' };
     const rebased = inJumpBasis(canonical, rung.basis);
     if (!rebased || formSide(rebased, rung.ansatz) > options.maxSide) continue;
-    const lift = findLift(g, rebased, rung.ansatz, options);
+    const lift = findLift(rebased, rung.ansatz, options);
     if (!lift) continue;
     if (!best || lift.optimum > best.lift.optimum) best = { lift, rung, canonical: rebased, reason: 'exhausted' };
     if (lift.optimum >= options.target - LIFT_CLOSED * Math.max(1, Math.abs(options.target)))

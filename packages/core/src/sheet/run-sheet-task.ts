@@ -89,7 +89,7 @@ function bakryEmeryFinding(
 
 function liftFinding(structure: Structure, target: number, stop?: () => boolean): SheetFinding {
   const canonical = structure.canonical as CanonicalForm;
-  const result = climbLadder(structure.generator, canonical, {
+  const result = climbLadder(canonical, {
     target,
     maxSide: SHEET_LIFT_SIDE,
     maxUnknowns: SHEET_LIFT_UNKNOWNS,

@@ -130,7 +130,7 @@ it('clsi and mlsi need a positive bound', () => {
 it('a residual lowers the bound by what the rule says', () => {
   const g = depolarising(2);
   const canonical = analyse(g).canonical as CanonicalForm;
-  const lift = findLift(g, canonical, 'diagonal', { maxUnknowns: 100 });
+  const lift = findLift(canonical, 'diagonal', { maxUnknowns: 100 });
   const draft = draftCertificate(canonical, lift as NonNullable<typeof lift>);
   const moved = withTerms({ ...draft, bound: 0.7 }, (term, t) => (t === 0 ? { ...term, re: doubleOf(term.re) * (1 + 1e-10) } : term)); // prettier-ignore
   const { holds, bound, allowance } = checkCertificate(g, moved);

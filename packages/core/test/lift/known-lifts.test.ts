@@ -26,7 +26,7 @@ function bestLift(g: Generator) {
   const target = completeBakryEmery(carreDuChamp(g)).value;
   const canonical = analyse(g).canonical as CanonicalForm;
   const limits = { maxSide: 1000, maxUnknowns: 250 };
-  return { target, result: climbLadder(g, canonical, { target, ...limits }) };
+  return { target, result: climbLadder(canonical, { target, ...limits }) };
 }
 
 /** K that a lift must reach; each equals cbe, so that the bracket of cge closes. */
