@@ -1,5 +1,4 @@
 import {
-  densityMatrix,
   gradientEstimateAt,
   hasGradientMetric,
   isUnitarilyCovariant,
@@ -14,22 +13,12 @@ import {
   type Structure,
   type Witness,
 } from '@thalweg/core';
-import {
-  decodeMatrix,
-  decodeWitness,
-  encodeWitness,
-  parseState,
-  readMtx,
-  readNpy,
-  toDense,
-  type VerdictDocument,
-  type WitnessDocument,
-} from '@thalweg/format';
-import { filesInFolder } from '@thalweg/format/node';
+import { decodeWitness, encodeWitness, type VerdictDocument, type WitnessDocument } from '@thalweg/format';
 import { inDocument } from '../../input/in-document.js';
 import type { DocumentSource } from '../../input/read-source.js';
 import { TOOL } from '../../version.js';
 import { markovModel } from './model-cache.js';
+import { readState } from './read-state.js';
 
 /** The witness at a given state: for `ge` the best observable there, for entropy constants the state alone. */
 export function witnessAtState({
@@ -44,8 +33,7 @@ export function witnessAtState({
   readonly mean: MeanName;
 }): WitnessDocument {
   const { structure, digest } = markovModel(source);
-  const rho = inDocument(state.name, () => densityMatrix(structure.algebra, matrixOf(structure, state), ''));
-  return encodeWitness(witnessOf(structure, rho, constant, mean), digest, TOOL);
+  return encodeWitness(witnessOf(structure, readState(structure, state), constant, mean), digest, TOOL);
 }
 
 function witnessOf(structure: Structure, rho: ComplexMatrix, constant: ConstantId, mean: MeanName): Witness {
@@ -71,22 +59,6 @@ function requireMetric(structure: Structure): void {
     'not-symmetric',
     'expected a GNS-symmetric generator for ge, got one that is not; gap, be, cbe, mlsi and lsi are still given by thalweg constants',
   );
-}
-
-function matrixOf(structure: Structure, { bytes, name, folder }: DocumentSource): ComplexMatrix {
-  const { size } = structure.algebra;
-  const matrix = /\.npy$/i.test(name)
-    ? toDense(readNpy(bytes))
-    : /\.mtx$/i.test(name)
-      ? toDense(readMtx(bytes))
-      : toDense(decodeMatrix(parseState(bytes), { readFile: filesInFolder(folder) }));
-  if (matrix.rows !== size || matrix.cols !== size) {
-    throw new ThalwegError(
-      'dimension-mismatch',
-      `expected a ${size}×${size} density matrix for this model, got ${matrix.rows}×${matrix.cols}; give a state of the model`,
-    );
-  }
-  return matrix;
 }
 
 /** Evaluate a witness afresh on its model and compare with the value it states. */
