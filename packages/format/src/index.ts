@@ -1,12 +1,30 @@
+export { isArchive, readArchive } from './archive/read-archive.js';
+export { packArchive, type PackageFiles } from './archive/pack-archive.js';
 export { canonicalChunks } from './digest/canonical-chunks.js';
 export { digestModel } from './digest/digest-model.js';
 export { createSha256, sha256Hex, type RunningHash } from './digest/sha256.js';
+export { type ClaimDocument } from './example/claims-schema.js';
+export { EXAMPLE_FILES, SHOWCASE_FILE, readExample, type ExamplePackage } from './example/example-package.js';
+export { type ExampleDocument } from './example/example-schema.js';
+export { isLicence } from './example/licence.js';
+export { isOrcid } from './example/orcid.js';
+export { isVersion } from './example/version.js';
+export {
+  completePoint,
+  readParameterValue,
+  unknownName,
+  type ParameterPoint,
+  type ParameterValue,
+} from './example/parameter-point.js';
+export { type Parameter } from './example/parameter-schema.js';
+export { type ShowcaseDocument } from './example/showcase-schema.js';
 export { canonicalJson } from './json/canonical-json.js';
 export { jsonPointer, type PathSegment } from './json/json-pointer.js';
 export { type JsonValue } from './json/json-value.js';
 export { parseJson } from './json/parse-json.js';
 export { writeJson } from './json/write-json.js';
 export {
+  ARCHIVE_LIMITS,
   FILE_BYTES_LIMIT,
   CERTIFICATE_LIMITS,
   JSON_LIMITS,

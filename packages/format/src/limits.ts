@@ -43,3 +43,22 @@ export const CERTIFICATE_LIMITS = {
   /** Terms of a lift. */
   terms: 2 ** 19,
 } as const;
+
+/** Limits on what `example.json` lists. */
+export const EXAMPLE_LIMITS = {
+  authors: 100,
+  keywords: 30,
+  references: 200,
+  parameters: 20,
+  choices: 100,
+  showcases: 50,
+} as const;
+
+/** Limits on an example package, packed or not. */
+export const ARCHIVE_LIMITS = {
+  /** Bytes of an archive. Its files are stored as they are, so their sum is smaller. */
+  bytes: 2 ** 24,
+  files: 200,
+  /** UTF-8 bytes of the name of a file. */
+  nameBytes: 200,
+} as const;

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { LIST_LIMIT, TEXT_LIMIT } from '../limits.js';
-import type { Fault } from '../fault.js';
+import { describeValue } from '../describe-value.js';
+import { fault, type Fault } from '../fault.js';
 
 /** A finite number. */
 export const finite = z.number();
@@ -42,4 +43,11 @@ export function withoutFault<T extends z.ZodType>(schema: T, find: (value: z.out
     const { code, message, path, details } = found;
     context.addIssue({ code: 'custom', message, path: [...path], params: { code, details } });
   });
+}
+
+/** A text that passes a test; `expected` says which texts do. */
+export function textThat(passes: (value: string) => boolean, expected: string) {
+  return withoutFault(z.string(), (value) =>
+    passes(value) ? null : fault('wrong-schema', `expected ${expected}, got ${describeValue(value)}; correct it`),
+  );
 }

@@ -4,6 +4,9 @@ import { describeValue } from '../describe-value.js';
 import { parseJson } from '../json/parse-json.js';
 import { requireDepth } from '../json/require-depth.js';
 import { valueAt } from '../json/value-at.js';
+import { claimsSchema, type ClaimDocument } from '../example/claims-schema.js';
+import { exampleSchema, type ExampleDocument } from '../example/example-schema.js';
+import { showcaseSchema, type ShowcaseDocument } from '../example/showcase-schema.js';
 import type { MatrixDocument } from '../matrix/matrix-document.js';
 import type { ModelDocument } from '../model/model-document.js';
 import { certificateSchema, type CertificateDocument } from './certificate-schema.js';
@@ -27,7 +30,9 @@ export type AnyDocument =
   | WitnessDocument
   | CertificateDocument
   | VerdictDocument
-  | StateDocument;
+  | StateDocument
+  | ExampleDocument
+  | ShowcaseDocument;
 
 const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.model/1': modelSchema,
@@ -37,6 +42,8 @@ const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.certificate/1': certificateSchema,
   'thalweg.verdict/1': verdictSchema,
   'thalweg.state/1': stateSchema,
+  'thalweg.example/1': exampleSchema,
+  'thalweg.showcase/1': showcaseSchema,
 };
 
 /** Reads a document of any schema. All `parse…` functions throw the errors of `parseJson` and of `checkDocument`. */
@@ -59,6 +66,19 @@ export function parseModel(source: Source): ModelDocument {
 export function checkModel(value: unknown): ModelDocument {
   requireDepth(value);
   return checkDocument(modelSchema, value);
+}
+
+/** What an example's generator states about its models; see `ClaimDocument`. */
+export function parseClaims(source: Source): ClaimDocument[] {
+  return checkDocument(claimsSchema, parseJson(source));
+}
+
+export function parseExample(source: Source): ExampleDocument {
+  return checkDocument(exampleSchema, parseJson(source));
+}
+
+export function parseShowcase(source: Source): ShowcaseDocument {
+  return checkDocument(showcaseSchema, parseJson(source));
 }
 
 /** A state: a `thalweg.state/1` document or a bare matrix. */
