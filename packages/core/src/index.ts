@@ -52,3 +52,4 @@ export * from './lift/index.js';
 export * from './programme/index.js';
 export * from './checker/index.js';
 export * from './certificate/index.js';
+export * from './flow/index.js';

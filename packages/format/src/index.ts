@@ -52,6 +52,7 @@ export { readMtx } from './mtx/read-mtx.js';
 export { readNpy } from './npy/read-npy.js';
 export * from './schema/parse-document.js';
 export { certificateSchema, type CertificateDocument } from './schema/certificate-schema.js';
+export { flowSchema, type FlowDocument } from './schema/flow-schema.js';
 export { matrixSchema } from './schema/matrix-schema.js';
 export { modelSchema } from './schema/model-schema.js';
 export { reportSchema, type ReportDocument } from './schema/report-schema.js';

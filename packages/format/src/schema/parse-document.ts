@@ -11,6 +11,7 @@ import type { MatrixDocument } from '../matrix/matrix-document.js';
 import type { ModelDocument } from '../model/model-document.js';
 import { certificateSchema, type CertificateDocument } from './certificate-schema.js';
 import { checkDocument } from './check-document.js';
+import { flowSchema, type FlowDocument } from './flow-schema.js';
 import { matrixSchema } from './matrix-schema.js';
 import { modelSchema } from './model-schema.js';
 import { reportSchema, type ReportDocument } from './report-schema.js';
@@ -30,6 +31,7 @@ export type AnyDocument =
   | WitnessDocument
   | CertificateDocument
   | VerdictDocument
+  | FlowDocument
   | StateDocument
   | ExampleDocument
   | ShowcaseDocument;
@@ -41,6 +43,7 @@ const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.witness/1': witnessSchema,
   'thalweg.certificate/1': certificateSchema,
   'thalweg.verdict/1': verdictSchema,
+  'thalweg.flow/1': flowSchema,
   'thalweg.state/1': stateSchema,
   'thalweg.example/1': exampleSchema,
   'thalweg.showcase/1': showcaseSchema,
