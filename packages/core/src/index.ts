@@ -53,3 +53,4 @@ export * from './programme/index.js';
 export * from './checker/index.js';
 export * from './certificate/index.js';
 export * from './flow/index.js';
+export * from './transport/index.js';
