@@ -288,7 +288,7 @@ export const FORM_ROUNDING = 1e-14;
 /** A lift within this of its target, relative to the larger of 1 and the target, closes the bracket: the ladder stops. */
 export const LIFT_CLOSED = 1e-6;
 
-/** Largest side of a lift's form that a sheet will try by itself; `certify` goes further. */
+/** Largest side of the form of a full lift that a sheet will try by itself; `certify` goes further. */
 export const SHEET_LIFT_SIDE = 260;
 
 /** Products of matrices with fewer multiplications than this stay out of WebAssembly, where copying would cost more. */
@@ -304,7 +304,7 @@ export const SCHUR_SHIFTS = [0, 0.1, 1, 10, 100, 1000] as const;
 export const SHEET_LIFT_UNKNOWNS = 250;
 
 /** Largest side of a form, and most real unknowns of its programme, that `certify` will try. */
-export const CERTIFY_LIFT_SIDE = 600;
+export const CERTIFY_LIFT_SIDE = 1000;
 export const CERTIFY_LIFT_UNKNOWNS = 1500;
 
 /** Off-diagonal entries of σ below this, relative to the diagonal ones, leave its given basis as the eigenbasis. */
@@ -387,3 +387,13 @@ export const GRADED_BELOW = 1e-2;
 
 /** A straight piece is cut when the action at one end is this much larger than at the other. */
 export const STEEP_PIECE = 2;
+
+/** ‖·‖₂ distance below which states that are to span a plane count as being on a line. */
+export const SLICE_COLLINEAR = 1e-9;
+
+/** Fewest and most states at which a relief is evaluated. */
+export const RELIEF_FEWEST = 100;
+export const RELIEF_MOST = 40_000;
+
+/** The lowest point of a relief is sought down to this part of a cell of its grid. */
+export const RELIEF_REFINEMENT = 1e-6;

@@ -36,11 +36,10 @@ export interface EntropyForms extends DivergenceForms {
 
 export function divergenceForms(model: EntropyModel, rho: LogState): DivergenceForms {
   const tau = model.reference(rho);
-  return {
-    entropy: relativeEntropyOfStates(rho, tau),
-    difference: toFrame(rho, addScaledInto(logarithmOf(rho), logarithmOf(tau), -1)),
-    mean: meanTable(rho),
-  };
+  const n = rho.logs.length;
+  const difference = scale(toFrame(rho, logarithmOf(tau)), -1);
+  for (let a = 0; a < n; a++) difference.re[a * n + a] += rho.logs[a];
+  return { entropy: relativeEntropyOfStates(rho, tau), difference, mean: meanTable(rho) };
 }
 
 /**

@@ -9,10 +9,16 @@ import { type SparseMatrix, sparseFromDense, sparseKronecker } from '../linalg/s
 import { fromFrame } from '../metric/state-frame.js';
 import type { ReferenceState } from '../structure/reference-state.js';
 import type { Structure } from '../structure/structure.js';
-import { ENTROPY_FLOOR, ENTROPY_FLOOR_PLAIN, EPSILON, MATRIX_ACTION_LIMIT } from '../tolerances.js';
+import {
+  AMPLIFIED_ACTION_LIMIT,
+  ENTROPY_FLOOR,
+  ENTROPY_FLOOR_PLAIN,
+  EPSILON,
+  MATRIX_ACTION_LIMIT,
+} from '../tolerances.js';
 import { amplifiedAlgebra, amplifyMap, amplifyOperator, ancillaTrace } from './amplify.js';
 import { type LogState, stateOfLogs } from './log-state.js';
-import { matrixAction } from './matrix-action.js';
+import { hermitianAction, matrixAction, matrixOfMap } from './matrix-action.js';
 
 /** What entropies of states of M ⊗ M_k under L ⊗ id_k need, prepared once. */
 export interface EntropyModel {
@@ -63,16 +69,14 @@ export function entropyModel(structure: Structure, amplification = 1): EntropyMo
     );
   }
   const k = amplification;
-  const n = base.size;
-  const { heisenberg, schroedinger } = actions(generator);
+  const algebra = amplifiedAlgebra(base, k);
   const model: EntropyModel = {
-    algebra: amplifiedAlgebra(base, k),
+    algebra,
     amplification: k,
     jumps: canonical ? pairedJumps(canonical.jumps, k) : null,
     logSigma: amplifyOperator(fromFrame({ lambda: state.values.map(Math.log), u: state.vectors }), k),
     entropyFloor: canonical ? ENTROPY_FLOOR : ENTROPY_FLOOR_PLAIN,
-    apply: (a) => amplifyMap(heisenberg, n, k, a),
-    applyAdjoint: (rho) => amplifyMap(schroedinger, n, k, rho),
+    ...actions(generator, algebra, k),
     reference: fixedPoints.primitive
       ? productReference(base, state, k)
       : conditionedReference(base, fixedPoints.expectation, k),
@@ -84,17 +88,29 @@ export function entropyModel(structure: Structure, amplification = 1): EntropyMo
 
 const models = new WeakMap<Structure, Map<number, EntropyModel>>();
 
-/** L and L† on N×N matrices: by the D×D matrix of L where it is small, which is quicker than many jumps. */
-function actions(generator: Generator): Record<'heisenberg' | 'schroedinger', (a: ComplexMatrix) => ComplexMatrix> {
+/** L ⊗ id and L† ⊗ id on Hermitian matrices: by a real matrix where it is small, which is quicker than many jumps. */
+function actions(
+  generator: Generator,
+  amplified: BlockAlgebra,
+  k: number,
+): Pick<EntropyModel, 'apply' | 'applyAdjoint'> {
   const { algebra } = generator;
+  const n = algebra.size;
   if (algebra.dimension > MATRIX_ACTION_LIMIT) {
     return {
-      heisenberg: (a) => applyGenerator(generator, a),
-      schroedinger: (rho) => applyGeneratorAdjoint(generator, rho),
+      apply: (a) => amplifyMap((x) => applyGenerator(generator, x), n, k, a),
+      applyAdjoint: (rho) => amplifyMap((x) => applyGeneratorAdjoint(generator, x), n, k, rho),
     };
   }
   const l = generatorMatrix(generator);
-  return { heisenberg: matrixAction(algebra, l, false), schroedinger: matrixAction(algebra, l, true) };
+  if (k === 1) return { apply: hermitianAction(algebra, l, false), applyAdjoint: hermitianAction(algebra, l, true) };
+  const heisenberg = matrixAction(algebra, l, false);
+  const schroedinger = matrixAction(algebra, l, true);
+  const apply = (a: ComplexMatrix): ComplexMatrix => amplifyMap(heisenberg, n, k, a);
+  if (amplified.dimension > AMPLIFIED_ACTION_LIMIT)
+    return { apply, applyAdjoint: (rho) => amplifyMap(schroedinger, n, k, rho) };
+  const whole = matrixOfMap(amplified, apply);
+  return { apply: hermitianAction(amplified, whole, false), applyAdjoint: hermitianAction(amplified, whole, true) };
 }
 
 function pairedJumps(

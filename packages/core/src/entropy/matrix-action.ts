@@ -1,4 +1,4 @@
-import { type BlockAlgebra, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
+import { type BlockAlgebra, basisElement, fromCoordinates, toCoordinates } from '../algebra/block-algebra.js';
 import { type ComplexMatrix, addScaledInto } from '../linalg/complex-matrix.js';
 
 /**
@@ -19,6 +19,27 @@ export function matrixAction(
     }
     return out;
   };
+}
+
+/** The same on Hermitian matrices alone. */
+export function hermitianAction(
+  algebra: BlockAlgebra,
+  m: Float64Array,
+  transposed: boolean,
+): (a: ComplexMatrix) => ComplexMatrix {
+  const times = transposed ? transposedTimes : plainTimes;
+  return (a) => fromCoordinates(algebra, times(m, toCoordinates(algebra, a)));
+}
+
+/** The real D×D matrix of a map of Hermitian elements, in the orthonormal Hermitian basis. */
+export function matrixOfMap(algebra: BlockAlgebra, map: (a: ComplexMatrix) => ComplexMatrix): Float64Array {
+  const d = algebra.dimension;
+  const out = new Float64Array(d * d);
+  for (let q = 0; q < d; q++) {
+    const column = toCoordinates(algebra, map(basisElement(algebra, q)));
+    for (let p = 0; p < d; p++) out[p * d + q] = column[p];
+  }
+  return out;
 }
 
 function plainTimes(m: Float64Array, x: Float64Array): Float64Array {
