@@ -66,7 +66,7 @@ export function makeCertificate(
   if (ceiling === -Infinity) return { ...none, note: 'cbe is −∞, so that no lift exists' };
   const found = climbLadder(canonical, {
     target: ceiling,
-    maxSide: CERTIFY_LIFT_SIDE,
+    maxSide: { diagonal: CERTIFY_LIFT_SIDE, full: CERTIFY_LIFT_SIDE },
     maxUnknowns: CERTIFY_LIFT_UNKNOWNS,
     ...options,
   });

@@ -7,12 +7,10 @@ import type { Programme } from '../programme/programme.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import { FORM_ROUNDING, LIFT_BACK_OFFS } from '../tolerances.js';
 import { solveIntertwining } from './lift-constraints.js';
-import { liftModel } from './lift-jumps.js';
-import { type LiftUnknown, liftUnknowns } from './lift-orbits.js';
+import type { LiftUnknown } from './lift-orbits.js';
 import { liftProgramme } from './lift-programme.js';
-import { candidateUnitaries, diagonalCharges, jumpSymmetries } from './lift-symmetries.js';
-import { type LiftAnsatz, type LiftTerm, liftTerms } from './lift-terms.js';
-import { inStateBasis } from './state-basis.js';
+import type { LiftAnsatz, LiftTerm } from './lift-terms.js';
+import { type PreparedLift, prepareLift } from './prepare-lift.js';
 
 /** A lift found by the semidefinite programme, before it is checked. */
 export interface FoundLift {
@@ -45,10 +43,14 @@ export interface LiftOptions {
  * has no lift at all, is too large, or its programme ends without an optimum.
  */
 export function findLift(canonical: CanonicalForm, ansatz: LiftAnsatz, options: LiftOptions): FoundLift | null {
-  const model = liftModel(inStateBasis(canonical));
-  const symmetries = jumpSymmetries(model, candidateUnitaries(model));
-  const terms = liftTerms(model, ansatz, diagonalCharges(model));
-  const unknowns = liftUnknowns(model, terms, symmetries);
+  return solveLift(prepareLift(canonical, ansatz), options);
+}
+
+/** The same for an ansatz that is laid out already. */
+export function solveLift(
+  { ansatz, model, unknowns, symmetries }: PreparedLift,
+  options: LiftOptions,
+): FoundLift | null {
   if (unknowns.length > options.maxUnknowns || options.stop?.()) return null;
   const solutions = solveIntertwining(model, unknowns);
   if (!solutions) return null;
@@ -70,7 +72,7 @@ export function findLift(canonical: CanonicalForm, ansatz: LiftAnsatz, options: 
     coefficients: coefficientsOf(unknowns, x),
     unknowns: free + 1,
     side: programme.blocks[0].size,
-    symmetries: symmetries.length,
+    symmetries,
     iterations: solution.iterations,
   };
 }

@@ -1,9 +1,10 @@
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import { LIFT_CLOSED } from '../tolerances.js';
-import { type FoundLift, type LiftOptions, findLift } from './find-lift.js';
+import { type FoundLift, type LiftOptions, solveLift } from './find-lift.js';
 import { type JumpBasis, inJumpBasis } from './jump-bases.js';
 import { liftModel } from './lift-jumps.js';
 import type { LiftAnsatz } from './lift-terms.js';
+import { type PreparedLift, prepareLift } from './prepare-lift.js';
 
 /** A rung of the ladder: which jumps, how rich a lift. */
 export interface LiftRung {
@@ -24,36 +25,50 @@ export interface LadderOptions extends LiftOptions {
   /** An upper bound on K at which to stop: `cbe`. */
   readonly target: number;
   /** Rungs whose form would be larger than this are left out. */
-  readonly maxSide: number;
+  readonly maxSide: Readonly<Record<LiftAnsatz, number>>;
   /** Only the rungs with this ansatz; all where left out. */
   readonly ansatz?: LiftAnsatz;
 }
 
 /** From cheap to rich. */
-const LIFT_LADDER: readonly LiftRung[] = [
-  { basis: 'given', ansatz: 'diagonal' },
-  { basis: 'pauli', ansatz: 'diagonal' },
-  { basis: 'weyl', ansatz: 'diagonal' },
-  { basis: 'given', ansatz: 'full' },
-  { basis: 'pauli', ansatz: 'full' },
-  { basis: 'weyl', ansatz: 'full' },
-];
+const ANSATZE: readonly LiftAnsatz[] = ['diagonal', 'full'];
+const BASES: readonly JumpBasis[] = ['given', 'pauli', 'weyl'];
 
-/** Climb the ladder of ansätze until the target is reached; null when no rung has a lift. */
+/**
+ * Climb the ladder of ansätze until the target is reached; null when no rung has a lift. Within an ansatz the choice of jumps with
+ * the fewest unknowns, the one that most symmetries permute, comes first. Mixing jumps of one frequency maps the full form
+ * onto itself: one choice of jumps is enough there.
+ */
 export function climbLadder(canonical: CanonicalForm, options: LadderOptions): LadderResult | null {
   let best: LadderResult | null = null;
-  for (const rung of LIFT_LADDER) {
-    if (options.ansatz && rung.ansatz !== options.ansatz) continue;
-    if (options.stop?.()) return best && { ...best, reason: 'stopped' };
-    const rebased = inJumpBasis(canonical, rung.basis);
-    if (!rebased || formSide(rebased, rung.ansatz) > options.maxSide) continue;
-    const lift = findLift(rebased, rung.ansatz, options);
-    if (!lift) continue;
-    if (!best || lift.optimum > best.lift.optimum) best = { lift, rung, canonical: rebased, reason: 'exhausted' };
-    if (lift.optimum >= options.target - LIFT_CLOSED * Math.max(1, Math.abs(options.target)))
-      return { ...best, reason: 'closed' };
+  for (const ansatz of ANSATZE) {
+    if (options.ansatz && ansatz !== options.ansatz) continue;
+    for (const { rung, rebased, prepared } of rungsOf(canonical, ansatz, options)) {
+      if (options.stop?.()) return best && { ...best, reason: 'stopped' };
+      const lift = solveLift(prepared, options);
+      if (!lift) continue;
+      if (!best || lift.optimum > best.lift.optimum) best = { lift, rung, canonical: rebased, reason: 'exhausted' };
+      if (lift.optimum >= options.target - LIFT_CLOSED * Math.max(1, Math.abs(options.target)))
+        return { ...best, reason: 'closed' };
+      if (ansatz === 'full') break;
+    }
   }
   return best;
+}
+
+interface PreparedRung {
+  readonly rung: LiftRung;
+  readonly rebased: CanonicalForm;
+  readonly prepared: PreparedLift;
+}
+
+/** The rungs of one ansatz that are not too large, fewest unknowns first. */
+function rungsOf(canonical: CanonicalForm, ansatz: LiftAnsatz, { maxSide }: LadderOptions): PreparedRung[] {
+  return BASES.flatMap((basis): PreparedRung[] => {
+    const rebased = inJumpBasis(canonical, basis);
+    if (!rebased || formSide(rebased, ansatz) > maxSide[ansatz]) return [];
+    return [{ rung: { basis, ansatz }, rebased, prepared: prepareLift(rebased, ansatz) }];
+  }).sort((a, b) => a.prepared.unknowns.length - b.prepared.unknowns.length);
 }
 
 /** Rows of the left form: components and pairs (m,j), as many as could occur. */

@@ -21,7 +21,7 @@ import { seededRandom } from '../random.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import type { FixedPoints } from '../structure/fixed-points.js';
 import type { Structure } from '../structure/structure.js';
-import { DENSE_LIMIT, SHEET_LIFT_SIDE, SHEET_LIFT_UNKNOWNS } from '../tolerances.js';
+import { CERTIFY_LIFT_SIDE, DENSE_LIMIT, SHEET_LIFT_SIDE, SHEET_LIFT_UNKNOWNS } from '../tolerances.js';
 import type { End } from './bracket.js';
 import type { SheetTask } from './sheet-plan.js';
 
@@ -91,7 +91,7 @@ function liftFinding(structure: Structure, target: number, stop?: () => boolean)
   const canonical = structure.canonical as CanonicalForm;
   const result = climbLadder(canonical, {
     target,
-    maxSide: SHEET_LIFT_SIDE,
+    maxSide: { diagonal: CERTIFY_LIFT_SIDE, full: SHEET_LIFT_SIDE },
     maxUnknowns: SHEET_LIFT_UNKNOWNS,
     ...(stop ? { stop } : {}),
   });

@@ -25,7 +25,7 @@ import { expectWithin } from '../helpers/bracket-of.js';
 function bestLift(g: Generator) {
   const target = completeBakryEmery(carreDuChamp(g)).value;
   const canonical = analyse(g).canonical as CanonicalForm;
-  const limits = { maxSide: 1000, maxUnknowns: 250 };
+  const limits = { maxSide: { diagonal: 1000, full: 1000 }, maxUnknowns: 250 };
   return { target, result: climbLadder(canonical, { target, ...limits }) };
 }
 
