@@ -17,6 +17,8 @@ export interface DistanceOptions {
   readonly stop?: () => boolean;
   /** Most pieces of a path. */
   readonly finest?: number;
+  /** Hears of the bracket after every refinement. */
+  readonly onRefined?: (bracket: { readonly pieces: number; readonly lower: number; readonly upper: number }) => void;
 }
 
 /** The transport distance of two states as a bracket, with a path of least action. */
@@ -39,7 +41,7 @@ export function transportDistance(
   model: TransportModel,
   rho0: ComplexMatrix,
   rho1: ComplexMatrix,
-  { relativeWidth, stop = () => false, finest = DISTANCE_FINEST }: DistanceOptions,
+  { relativeWidth, stop = () => false, finest = DISTANCE_FINEST, onRefined }: DistanceOptions,
 ): TransportDistance {
   const endpoints = endpointsOf(model, rho0, rho1);
   if (endpoints.relation !== 'apart') return trivialDistance(endpoints);
@@ -71,6 +73,7 @@ export function transportDistance(
       const by = `dual path of potentials of ${count} pieces, a subsolution of the Hamilton–Jacobi equation`;
       lower = { value: below, grade: 'certified', by, margin: dual.margin / below };
     }
+    onRefined?.({ pieces: count, lower: lower.value, upper: upper.value });
   }
   return { lower, upper, path, reached: !isWide(), endpoints };
 }
