@@ -7,13 +7,25 @@ import { sourceDigest } from './source-digest.mjs';
 
 const stampPath = join(root, 'apps/cli/dist/.sources');
 
-/** Builds apps/cli/dist when the sources changed since the last build. Throws with the bundler's messages on failure. */
+/** What is bundled: the scripts of the sandbox, which tests and bundlers use, and the command line, which brings its own copy. */
+const BUNDLES = [
+  {
+    what: 'The sandbox',
+    script: 'packages/sandbox/build.mjs',
+    output: 'packages/sandbox/dist/bundle/sandbox-process.js',
+  },
+  { what: 'The command line', script: 'apps/cli/build.mjs', output: 'apps/cli/dist/thalweg.js' },
+];
+
+/** Builds every bundle when the sources changed since the last build. Throws with the bundler's messages on failure. */
 export function ensureBundle() {
   return withLock(async () => {
     const digest = sourceDigest();
     if (isBuilt(digest)) return;
-    const { code, output } = await capture(process.execPath, [join(root, 'apps/cli/build.mjs')]);
-    if (code !== 0) throw new Error(`The command line could not be built:\n${output}`);
+    for (const { what, script } of BUNDLES) {
+      const { code, output } = await capture(process.execPath, [join(root, script)]);
+      if (code !== 0) throw new Error(`${what} could not be built:\n${output}`);
+    }
     writeFileSync(stampPath, `${digest}\n`);
   });
 }
@@ -28,7 +40,7 @@ export function checkTypes({ quiet = false } = {}) {
 
 function isBuilt(digest) {
   return (
-    existsSync(join(root, 'apps/cli/dist/thalweg.js')) &&
+    BUNDLES.every(({ output }) => existsSync(join(root, output))) &&
     existsSync(stampPath) &&
     readFileSync(stampPath, 'utf8').trim() === digest
   );

@@ -1,0 +1,72 @@
+import { mkdirSync, renameSync, writeFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+import { build } from 'esbuild';
+
+const folder = fileURLToPath(new URL('.', import.meta.url));
+const common = {
+  absWorkingDir: folder,
+  bundle: true,
+  write: false,
+  legalComments: 'none',
+  logLevel: 'error',
+  conditions: ['source'],
+};
+
+/** The script that the interpreter evaluates before a generator: its value is the function `generate`. */
+export async function bundleInside() {
+  const { outputFiles } = await build({
+    ...common,
+    entryPoints: ['src/inside/index.ts'],
+    format: 'iife',
+    globalName: 'sandbox',
+    target: 'es2023',
+    minify: true,
+    keepNames: false,
+    footer: { js: 'sandbox.generate' },
+  });
+  return outputFiles[0].text;
+}
+
+/** The script of the sandbox's process in Node.js, one file with everything inside; also names what went into it. */
+export async function bundleProcess() {
+  return bundleHost({
+    entryPoints: { 'sandbox-process': 'src/node/process.ts' },
+    platform: 'node',
+    target: 'node20.19',
+  });
+}
+
+async function bundleHost(options) {
+  return build({
+    ...common,
+    ...options,
+    outdir: 'dist/bundle',
+    format: 'esm',
+    minifySyntax: true,
+    minifyWhitespace: true,
+    loader: { '.wasm': 'binary' },
+    define: { SANDBOX_INSIDE: JSON.stringify(await bundleInside()) },
+    metafile: true,
+  });
+}
+
+async function main() {
+  mkdirSync(join(folder, 'dist/bundle'), { recursive: true });
+  for (const { outputFiles } of [await bundleProcess()]) {
+    for (const { path, contents } of outputFiles) {
+      const partial = `${path}.${process.pid}.partial`;
+      writeFileSync(partial, contents);
+      renameSync(partial, path);
+    }
+  }
+}
+
+if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {
+  try {
+    await main();
+  } catch (error) {
+    if (!Array.isArray(error.errors)) throw error;
+    process.exitCode = 1; // esbuild has already said why
+  }
+}

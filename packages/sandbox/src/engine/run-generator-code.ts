@@ -1,0 +1,106 @@
+import {
+  newQuickJSWASMModuleFromVariant,
+  newVariant,
+  type QuickJSContext,
+  type QuickJSHandle,
+  type QuickJSRuntime,
+  type QuickJSSyncVariant,
+} from 'quickjs-emscripten-core';
+import imported from '@jitl/quickjs-wasmfile-release-sync';
+import type { CompleteRun } from '../generator-run.js';
+import { DEPTH_LIMIT } from '../limits.js';
+import type { RunReply } from '../reply.js';
+import { memoryFault, readAnswer, timeFault } from './faults.js';
+
+/** What the interpreter is made of. */
+export interface Engine {
+  readonly wasm: WebAssembly.Module;
+  /** Script whose value is the function `generate` of `inside`. */
+  readonly inside: string;
+  /** Stack of the interpreter in bytes. */
+  readonly stackBytes: number;
+  /** Milliseconds on any clock that only goes forward. */
+  readonly now: () => number;
+}
+
+/**
+ * Language features inside: no Date. Eval is needed to load the generator at all; what it reaches is inside, too.
+ */
+const INTRINSICS = {
+  BaseObjects: true,
+  Date: false,
+  Eval: true,
+  StringNormalize: true,
+  RegExp: true,
+  RegExpCompiler: true,
+  JSON: true,
+  Proxy: true,
+  MapSet: true,
+  TypedArrays: true,
+  Promise: true,
+  BigInt: true,
+};
+
+/** The package's types speak of its CommonJS form, where the variant is one level deeper. */
+const variant: QuickJSSyncVariant = 'default' in imported ? imported.default : imported;
+
+const PAGES_A_MEGABYTE = 16;
+/** What the module itself asks for. */
+const FIRST_PAGES = 256;
+
+/**
+ * Runs one generator in an interpreter of its own: a fresh instance of the WebAssembly module with a memory that cannot grow
+ * beyond its limit. `QuickJSRuntime.setMemoryLimit` alone does not hold. Whatever the host itself throws poisons the thread.
+ */
+export async function runGeneratorCode(engine: Engine, run: CompleteRun): Promise<RunReply> {
+  const deadline = engine.now() + run.limits.milliseconds;
+  let late = false;
+  try {
+    const runtime = await freshRuntime(engine, run.limits.memoryMegabytes);
+    runtime.setInterruptHandler(() => (late ||= engine.now() > deadline));
+    const answer = evaluate(runtime, engine, run);
+    if (late) return { fault: timeFault(run.limits) };
+    return readAnswer(answer, run.limits);
+  } catch (error) {
+    return { fault: late ? timeFault(run.limits) : hostFault(error, run), poisoned: true };
+  }
+}
+
+async function freshRuntime(engine: Engine, megabytes: number): Promise<QuickJSRuntime> {
+  const maximum = megabytes * PAGES_A_MEGABYTE;
+  const wasmMemory = new WebAssembly.Memory({ initial: FIRST_PAGES, maximum });
+  const quickjs = await newQuickJSWASMModuleFromVariant(newVariant(variant, { wasmModule: engine.wasm, wasmMemory }));
+  const runtime = quickjs.newRuntime();
+  runtime.setMaxStackSize(engine.stackBytes);
+  runtime.setModuleLoader((name) => ({
+    error: new Error(`generate.js imports "${name}": a generator imports nothing, take what it needs from the kit`),
+  }));
+  return runtime;
+}
+
+/** The answer of `generate`; null when the interpreter was stopped or ran out of memory. The instance is dropped as a whole. */
+function evaluate(runtime: QuickJSRuntime, engine: Engine, run: CompleteRun): string | null {
+  const context = runtime.newContext({ intrinsics: INTRINSICS });
+  const prepared = context.evalCode(engine.inside, 'kit.js', { type: 'global' });
+  if (prepared.error) return null;
+  const generate = prepared.value;
+  const loaded = load(context, run.source);
+  const wanted = [run.want, run.parameters].map((text) => context.newString(text));
+  const answer = context.callFunction(generate, context.undefined, loaded, ...wanted, context.newNumber(DEPTH_LIMIT));
+  return answer.error ? null : context.getString(answer.value);
+}
+
+function load(context: QuickJSContext, source: string): QuickJSHandle {
+  const loaded = context.newObject();
+  const module = context.evalCode(source, 'generate.js', { type: 'module', strict: true });
+  if (module.error) context.setProp(loaded, 'thrown', module.error);
+  else context.setProp(loaded, 'module', module.value);
+  return loaded;
+}
+
+function hostFault(error: unknown, { limits }: CompleteRun) {
+  const text = String(error);
+  if (/memory|OOM|abort/i.test(text)) return memoryFault(limits);
+  const message = `expected generate.js to run, but it overran the interpreter (${text}); make it simpler: less nesting, less recursion`;
+  return { code: 'generator-failed', message } as const;
+}
