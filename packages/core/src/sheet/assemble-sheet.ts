@@ -7,11 +7,13 @@ import { lsiFromGap } from '../constants/lsi-lower.js';
 import { mixingLower, mixingUpper } from '../constants/mixing.js';
 import { entropyUpper } from '../constants/mlsi.js';
 import { transportEntropyLower, transportEntropyUpper } from '../constants/transport-entropy.js';
+import type { EnclosedEnds } from '../enclosure/enclose-bakry-emery.js';
 import type { MeanName } from '../metric/operator-mean.js';
 import type { Structure } from '../structure/structure.js';
 import type { Bracket, End } from './bracket.js';
 import { type SheetRow, closeBrackets, nameOf } from './close-brackets.js';
 import { hasGradientMetric } from './hypotheses.js';
+import { provedUpper } from './proved-end.js';
 import { type RowKey, betterLower, betterUpper, orderRelations } from './order-relations.js';
 import { missingEndNotes, rowNotes } from './row-notes.js';
 import type { SheetFinding } from './run-sheet-task.js';
@@ -81,8 +83,7 @@ function directBracket(structure: Structure, found: readonly SheetFinding[], { i
 function gapBracket(found: readonly SheetFinding[]): Bracket {
   const finding = found.find(({ kind }) => kind === 'gap');
   if (finding?.kind !== 'gap') return { lower: null, upper: null };
-  if (finding.dense)
-    return certifiedBracket(finding.dense.value, finding.dense.margin, 'eigenvalue problem on the algebra');
+  if (finding.dense) return eigenvalueBracket(finding.dense, finding.enclosed, 'eigenvalue problem on the algebra');
   if (!finding.lanczos) return { lower: null, upper: null };
   const { value, residual } = finding.lanczos;
   return {
@@ -96,38 +97,43 @@ function gapBracket(found: readonly SheetFinding[]): Bracket {
   };
 }
 
-function certifiedBracket(value: number, margin: number, by: string): Bracket {
-  const end = (shift: number): End => ({ value: value + shift, grade: 'certified', by, margin });
-  return { lower: end(-margin), upper: end(margin) };
+interface Eigenvalue {
+  readonly value: number;
+  readonly margin: number;
+}
+
+/** Both ends of an eigenvalue: enclosed where that was proved, else with the margin of its rounding. */
+function eigenvalueBracket({ value, margin }: Eigenvalue, enclosed: EnclosedEnds | null, by: string): Bracket {
+  const end = (proved: number | null, shift: number): End =>
+    proved === null
+      ? { value: value + shift, grade: 'certified', by, margin }
+      : { value: proved, grade: 'enclosed', by, margin: Math.abs(proved - value) };
+  return { lower: end(enclosed?.lower ?? null, -margin), upper: end(enclosed?.upper ?? null, margin) };
+}
+
+/** What is left of a bracket whose eigenvalue problem is not decided, or was not solved for all vectors. */
+function undecidedBracket({ lower, upper }: Bracket): Bracket {
+  return {
+    lower: lower?.grade === 'enclosed' ? lower : null,
+    upper: upper?.grade === 'enclosed' ? upper : upper && { ...upper, grade: 'observed' },
+  };
 }
 
 function bakryEmeryBracket(found: readonly SheetFinding[], id: 'be' | 'cbe'): Bracket {
   const finding = found.find(({ kind }) => kind === 'bakry-emery');
   if (finding?.kind !== 'bakry-emery') return { lower: null, upper: null };
-  const { complete, plain } = finding;
+  const { complete, plain, enclosed } = finding;
   if (id === 'cbe') {
-    const bracket = certifiedBracket(complete.value, complete.margin, 'eigenvalue problem for Γ₂ − KΓ with an ancilla');
-    return complete.decided
-      ? bracket
-      : { lower: null, upper: bracket.upper && { ...bracket.upper, grade: 'observed' } };
+    const by = 'eigenvalue problem for Γ₂ − KΓ with an ancilla';
+    const bracket = eigenvalueBracket(complete, enclosed?.complete ?? null, by);
+    return complete.decided ? bracket : undecidedBracket(bracket);
   }
   if (!plain) return { lower: null, upper: null };
-  if (plain.complete && plain.decided) {
-    return certifiedBracket(
-      plain.value,
-      plain.margin,
-      'eigenvalue problem for Γ₂ − KΓ at one vector, the others alike',
-    );
-  }
-  return {
-    lower: null,
-    upper: {
-      value: plain.value + plain.margin,
-      grade: 'observed',
-      by: 'search over pure states and observables',
-      margin: plain.margin,
-    },
-  };
+  const ends = enclosed?.plain ?? null;
+  if (!plain.complete)
+    return undecidedBracket(eigenvalueBracket(plain, ends, 'search over pure states and observables'));
+  const bracket = eigenvalueBracket(plain, ends, 'eigenvalue problem for Γ₂ − KΓ at one vector, the others alike');
+  return plain.decided ? bracket : undecidedBracket(bracket);
 }
 
 function gradientEstimateBracket(structure: Structure, found: readonly SheetFinding[], mean: MeanName): Bracket {
@@ -139,7 +145,8 @@ function gradientEstimateBracket(structure: Structure, found: readonly SheetFind
   }
   const rule = completeCurvatureLower(structure, found);
   const lower = mean === 'logarithmic' ? betterLower(rule, curvatureRule(structure)) : rule;
-  return { lower, upper: best && gradientEstimateEnd(best, mean) };
+  const gap = gapBracket(found).upper?.value ?? Infinity;
+  return { lower, upper: provedUpper(structure, best && gradientEstimateEnd(best, mean), gap) };
 }
 
 function gradientEstimateEnd(best: GradientEstimateResult, mean: MeanName): End {
@@ -173,8 +180,9 @@ function entropyBracket(structure: Structure, found: readonly SheetFinding[], id
   }
   const symmetric = hasGradientMetric(structure) || (id === 'lsi' && structure.symmetry.kind === 'KMS');
   const usesGap = symmetric && (id !== 'lsi' || (structure.fixedPoints?.primitive ?? false));
-  const gap = usesGap ? gapBracket(found).upper : null;
-  const upper = entropyUpper(gap && inheritedEnd(gap, `${id} ≤ gap; ${gap.by}`), results);
+  const { upper: gap } = gapBracket(found);
+  const inherited = usesGap && gap ? inheritedEnd(gap, `${id} ≤ gap; ${gap.by}`) : null;
+  const upper = provedUpper(structure, entropyUpper(inherited, results), gap?.value ?? Infinity);
   const comparison = found.find(({ kind }) => kind === 'comparison');
   return { lower: id === 'clsi' && comparison?.kind === 'comparison' ? comparison.end : null, upper };
 }

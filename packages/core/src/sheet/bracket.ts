@@ -42,7 +42,10 @@ export interface End {
   readonly grade: Grade;
   /** The rule, certificate, eigenvalue problem or search that gives it. */
   readonly by: string;
-  /** Bound on the floating-point error of `value`, same units, where the grade is `certified`. */
+  /**
+   * Same units. Where the grade is `certified`, a bound on the floating-point error of `value`; where it is `enclosed`, how far
+   * the end is from the value computed, or the width of its enclosure.
+   */
   readonly margin?: number;
   readonly evidence?: Witness;
 }

@@ -13,6 +13,9 @@ import { type LanczosGap, gapMatrixFree } from '../constants/gap-matrix-free.js'
 import { type GradientEstimateResult, runGradientEstimateStart } from '../constants/gradient-estimate.js';
 import { runLsiStart } from '../constants/lsi.js';
 import { runMlsiStart } from '../constants/mlsi.js';
+import { type EnclosedEnds, encloseBakryEmery, encloseCompleteBakryEmery } from '../enclosure/enclose-bakry-emery.js';
+import { encloseForms } from '../enclosure/enclosed-forms.js';
+import { encloseGap } from '../enclosure/enclose-gap.js';
 import type { JumpBasis } from '../lift/jump-bases.js';
 import { type LadderResult, climbLadder } from '../lift/lift-ladder.js';
 import { type MetricModel, metricModel } from '../metric/metric-model.js';
@@ -27,8 +30,18 @@ import type { SheetTask } from './sheet-plan.js';
 
 /** What one task found; plain data. */
 export type SheetFinding =
-  | { readonly kind: 'gap'; readonly dense: Gap | null; readonly lanczos: LanczosGap | null }
-  | { readonly kind: 'bakry-emery'; readonly complete: CompleteBakryEmery; readonly plain: BakryEmeryResult | null }
+  | {
+      readonly kind: 'gap';
+      readonly dense: Gap | null;
+      readonly lanczos: LanczosGap | null;
+      readonly enclosed: EnclosedEnds | null;
+    }
+  | {
+      readonly kind: 'bakry-emery';
+      readonly complete: CompleteBakryEmery;
+      readonly plain: BakryEmeryResult | null;
+      readonly enclosed: { readonly complete: EnclosedEnds; readonly plain: EnclosedEnds | null } | null;
+    }
   | { readonly kind: 'comparison'; readonly end: End | null }
   | { readonly kind: 'lift'; readonly end: End | null; readonly reason: LadderResult['reason'] | 'none' }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly result: GradientEstimateResult }
@@ -68,10 +81,11 @@ function gapFinding(structure: Structure): SheetFinding {
     const lanczos = usable
       ? gapMatrixFree(generator, symmetry.kind === 'tracial' ? null : state, seededRandom('gap'))
       : null;
-    return { kind: 'gap', dense: null, lanczos };
+    return { kind: 'gap', dense: null, lanczos, enclosed: null };
   }
   const dense = state?.faithful && fixedPoints ? gapDense(generator, state, fixedPoints) : null;
-  return { kind: 'gap', dense, lanczos: null };
+  const enclosure = dense && encloseGap(structure);
+  return { kind: 'gap', dense, lanczos: null, enclosed: enclosure && { lower: enclosure.lo, upper: enclosure.hi } };
 }
 
 function bakryEmeryFinding(
@@ -84,7 +98,12 @@ function bakryEmeryFinding(
   const complete = completeBakryEmery(forms);
   const random = seededRandom(`be ${seed}`);
   const plain = withPlain ? bakryEmery(structure.generator, forms, { random, ...(stop ? { stop } : {}) }) : null;
-  return { kind: 'bakry-emery', complete, plain };
+  const enclosing = encloseForms(structure);
+  const enclosed = enclosing && {
+    complete: encloseCompleteBakryEmery(enclosing, complete),
+    plain: plain && encloseBakryEmery(enclosing, plain),
+  };
+  return { kind: 'bakry-emery', complete, plain, enclosed };
 }
 
 function liftFinding(structure: Structure, target: number, stop?: () => boolean): SheetFinding {

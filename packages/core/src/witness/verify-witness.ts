@@ -10,6 +10,7 @@ import { hasGradientMetric } from '../sheet/hypotheses.js';
 import { metricOf } from '../sheet/run-sheet-task.js';
 import type { Structure } from '../structure/structure.js';
 import { WITNESS_TOLERANCE } from '../tolerances.js';
+import { encloseWitness } from './enclose-witness.js';
 
 /** What a witness gives when it is evaluated afresh. */
 export interface WitnessCheck {
@@ -19,18 +20,29 @@ export interface WitnessCheck {
   readonly margin: number;
   /** |value − stated value|. */
   readonly error: number;
-  /** The stated value is not below the quotient by more than the margin and a relative WITNESS_TOLERANCE. */
+  /** How the bound that the witness gives is known: `enclosed` when the stated value is above, or refuted below, an enclosure. */
+  readonly grade: 'enclosed' | 'certified';
+  /** The bound that it gives at this grade. */
+  readonly upper: number;
   readonly holds: boolean;
 }
 
 /**
- * Evaluate a witness from its state and observable alone. It proves `constant ≤ value` when the quotient is at most the
- * stated value. Throws `dimension-mismatch`, `state-not-positive`, `not-symmetric`, `usage`.
+ * Evaluate a witness from its state and observable alone. It proves `constant ≤ value` when the quotient is at most the stated
+ * value: at the grade enclosed when the upper end of its enclosure (see `encloseWitness`) is, certified when the value lies in the
+ * enclosure, or where there is none, is not below the quotient by more than the margin and a relative WITNESS_TOLERANCE. A
+ * value below the enclosure is refuted. Throws `dimension-mismatch`, `state-not-positive`, `not-symmetric`, `usage`.
  */
 export function verifyWitness(structure: Structure, witness: Witness): WitnessCheck {
   const { value, margin } = evaluate(structure, witness);
+  const found = { value, margin, error: Math.abs(value - witness.value) };
+  const enclosure = encloseWitness(structure, witness);
+  if (enclosure && !(enclosure.lo <= witness.value && witness.value < enclosure.hi)) {
+    return { ...found, grade: 'enclosed', upper: enclosure.hi, holds: witness.value >= enclosure.hi };
+  }
   const slack = margin + WITNESS_TOLERANCE * Math.max(Math.abs(value), Math.abs(witness.value));
-  return { value, margin, error: Math.abs(value - witness.value), holds: value <= witness.value + slack };
+  const holds = enclosure !== null || value <= witness.value + slack;
+  return { ...found, grade: 'certified', upper: value + margin, holds };
 }
 
 function evaluate(structure: Structure, witness: Witness): { value: number; margin: number } {

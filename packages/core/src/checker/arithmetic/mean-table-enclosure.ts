@@ -1,6 +1,6 @@
 import { exp } from './interval-exp.js';
 import { type EnclosedMeanName, enclosedMean } from './interval-mean.js';
-import { type Interval, mul, point } from './interval.js';
+import { type Interval, mul, neg, point } from './interval.js';
 
 /** F_ab = F(e^{ω/2}λ_a, e^{−ω/2}λ_b) and its divided differences for one frequency, enclosed when first asked for. */
 export interface MeanTableEnclosure {
@@ -13,20 +13,20 @@ export interface MeanTableEnclosure {
 }
 
 /**
- * Tables over eigenvalues λ > 0 and a frequency, both taken as exact. Every mean is homogeneous, so that the exponentials
+ * Tables over eigenvalues λ > 0 and a frequency. Every mean is homogeneous, so that the exponentials
  * stand outside or in a single argument: F_ab = e^{ω/2}F(λ_a, e^{−ω}λ_b) = e^{−ω/2}F(e^{ω}λ_a, λ_b).
  */
 export function meanTableEnclosure(
   name: EnclosedMeanName,
   lambda: readonly Interval[],
-  frequency: number,
+  frequency: Interval,
 ): MeanTableEnclosure {
   const mean = enclosedMean(name);
   const n = lambda.length;
-  const half = exp(point(frequency / 2));
-  const minusHalf = exp(point(-frequency / 2));
-  const raised = lambda.map((x) => mul(exp(point(frequency)), x));
-  const lowered = lambda.map((x) => mul(exp(point(-frequency)), x));
+  const half = exp(mul(HALF, frequency));
+  const minusHalf = exp(neg(mul(HALF, frequency)));
+  const raised = lambda.map((x) => mul(exp(frequency), x));
+  const lowered = lambda.map((x) => mul(exp(neg(frequency)), x));
   const values = new Map<number, Interval>();
   const lefts = new Map<number, Interval>();
   const rights = new Map<number, Interval>();
@@ -42,6 +42,8 @@ export function meanTableEnclosure(
       ),
   };
 }
+
+const HALF = point(0.5);
 
 function cached(store: Map<number, Interval>, key: number, make: () => Interval): Interval {
   const known = store.get(key);

@@ -1,6 +1,7 @@
 import { ThalwegError } from '../../errors.js';
 import type { ComplexMatrix } from '../../linalg/complex-matrix.js';
 import { requireBlockDiagonal } from './block-diagonal.js';
+import { widenCorners } from './widen-corners.js';
 import { rotated, unitaryFrame } from './unitary-frame.js';
 import { type RotatedJump, commutator, encloseDualAtDiagonal, encloseGenerator } from './canonical-enclosure.js';
 import { encloseFlowForm, encloseForm } from './form-enclosure.js';
@@ -16,6 +17,18 @@ export interface CanonicalModel {
   /** N×N matrices V_j with frequencies ω_j; the doubles are taken as exact numbers. */
   readonly jumps: readonly { readonly matrix: ComplexMatrix; readonly frequency: number }[];
   readonly mean: EnclosedMeanName;
+}
+
+/**
+ * Many such generators: each jump within `radius` of V_j in the Frobenius norm, in the corners (block × block) that V_j reaches, with
+ * any frequency of an interval.
+ */
+export interface CanonicalModels extends Pick<CanonicalModel, 'blocks' | 'mean'> {
+  readonly jumps: readonly {
+    readonly matrix: ComplexMatrix;
+    readonly frequency: number | Interval;
+    readonly radius?: number;
+  }[];
 }
 
 /** What is proved at one (ρ, A). */
@@ -37,7 +50,7 @@ export interface QuotientEnclosure {
  * nearly unitary.
  */
 export function encloseQuotient(
-  model: CanonicalModel,
+  model: CanonicalModels,
   frame: { readonly lambda: ArrayLike<number>; readonly u: ComplexMatrix | null },
   observable: ComplexMatrix,
 ): QuotientEnclosure {
@@ -47,20 +60,25 @@ export function encloseQuotient(
   if (frame.u) requireBlockDiagonal(blocks, frame.u, 'the frame of the state');
   const rotation = unitaryFrame(frame.u);
   const a = rotated(rotation, observable);
-  const jumps = model.jumps.map(({ matrix, frequency }): RotatedJump => {
+  const frequencies = model.jumps.map(({ frequency }) =>
+    typeof frequency === 'number' ? point(frequency) : frequency,
+  );
+  const jumps = model.jumps.map(({ matrix, radius = 0 }, j): RotatedJump => {
     if (matrix.rows !== lambda.length || matrix.cols !== lambda.length) throw wrongSide(lambda.length, matrix.rows);
-    return { matrix: rotated(rotation, matrix), weight: exp(point(-frequency / 2)) };
+    const inFrame = rotated(rotation, matrix);
+    const jump = radius > 0 ? widenCorners(inFrame, matrix, blocks, radius) : inFrame;
+    return { matrix: jump, weight: exp(mul(point(-0.5), frequencies[j])) };
   });
   const flow = encloseDualAtDiagonal(blocks, jumps, lambda);
   const image = encloseGenerator(blocks, jumps, a);
-  const tables = new Map<number, MeanTableEnclosure>();
+  const tables = new Map<string, MeanTableEnclosure>();
   let metric = ZERO;
   let transport = ZERO;
   let cross = ZERO;
   jumps.forEach(({ matrix: v }, j) => {
-    const { frequency } = model.jumps[j];
-    const table = tables.get(frequency) ?? meanTableEnclosure(model.mean, lambda, frequency);
-    tables.set(frequency, table);
+    const key = `${frequencies[j].lo} ${frequencies[j].hi}`;
+    const table = tables.get(key) ?? meanTableEnclosure(model.mean, lambda, frequencies[j]);
+    tables.set(key, table);
     const x = commutator(v, a);
     const y = commutator(v, image);
     metric = add(metric, encloseForm(table, x, x));
