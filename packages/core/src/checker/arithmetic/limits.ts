@@ -50,3 +50,6 @@ export const POLAR_STEPS = 12;
 
 /** ‖u*u − 1‖ above which a frame does not count as nearly unitary. */
 export const UNITARITY_LIMIT = 0.25;
+
+/** Terms of the series of a divided difference of exp over any number of arguments up to five, within 1 of each other. */
+export const EXP_DIFFERENCE_TERMS = 19;

@@ -1,0 +1,20 @@
+/** Distances below the best witness, in the rates at hand, at which branch and bound tries to prove `ge`, one after the other. */
+export const CELL_WIDTHS: readonly number[] = [1e-1, 1e-2, 1e-3, 1e-4, 1e-5, 1e-6, 1e-7, 5e-9];
+
+/** Cells of states examined at most for one lower end of `ge` on a sheet. */
+export const CELL_BUDGET = 6000;
+
+/** Points of a chain up to which its states are covered by cells. */
+export const CELL_CHAIN_POINTS = 3;
+
+/** Log-ratios of eigenvalues beyond which no cell is cut any more. */
+export const FARTHEST = 500;
+
+/** Relative width given to a rate that a jump holds as a square root: a few roundings of 2^-53. */
+export const RATE_ROOM = 2 ** -48;
+
+/** Relative room for the rounding of a canonical form. */
+export const AXIS_ROOM = 2 ** -44;
+
+/** Eigenvalues of a Kossakowski matrix within this of each other, relative to its trace, are taken together. */
+export const NEAR_AXES = 1e-7;
