@@ -397,3 +397,6 @@ export const RELIEF_MOST = 40_000;
 
 /** The lowest point of a relief is sought down to this part of a cell of its grid. */
 export const RELIEF_REFINEMENT = 1e-6;
+
+/** Coefficients of a lift below this, relative to the largest, are rounding when it is written over other jumps. */
+export const TRANSFER_DUST = 1e-12;

@@ -7,6 +7,7 @@ import type { LiftCertificate } from '../checker/lift-certificate.js';
 import { liftForm } from '../checker/lift-form.js';
 import { type RingModel, ringModel } from '../checker/ring-model.js';
 import { DOUBLES, RATIONALS } from '../checker/ring.js';
+import { rationalOf } from '../checker/scalar.js';
 import { type SparseOperator } from '../checker/sparse-operator.js';
 import { type RationalVector, rationalKernel } from './form-kernel.js';
 import { type LiftPart, liftParts } from './lift-parts.js';
@@ -16,17 +17,22 @@ import { RationalSystem } from './rational-system.js';
 /** Sizes beyond which no exact certificate is tried. */
 const MOST_PARTS = 150;
 const MOST_TERMS = 2000;
+/** The same where numbers are doubles, whose exact sums and quotients grow long. */
+const MOST_ENCLOSED_PARTS = 60;
 
 /** Denominators that the free coefficients are rounded to, one after the other. */
-const DENOMINATORS = [12n, 720n, 2n ** 40n];
+const FRACTIONS = [12n, 720n];
+const FINEST = 2n ** 40n;
 
-/** How far below the optimum K is put, relative to max(1, |K|), when no simple fraction is reached. */
-const BACK_OFF = 1e-7;
+/** How far below the optimum K is put in turn, relative to max(1, |K|), when no simple fraction is reached. */
+const BACK_OFFS = [1e-9, 1e-8, 1e-7] as const;
 
 export interface ExactRequest {
   readonly algebra: BlockAlgebra;
   /** State and jumps rational, the lift in doubles. */
   readonly draft: LiftCertificate;
+  /** `exact`: forms that an exact factorisation passes, at a simple fraction where possible; `enclosed`: at the K of the draft. */
+  readonly grade: 'exact' | 'enclosed';
   /** The optimum of the programme. */
   readonly optimum: number;
   /** Says whether a certificate passes. */
@@ -41,19 +47,35 @@ export interface ExactRequest {
  * reduction; Peyrl & Parrilo 2008 for the interior case). Otherwise K backs off into the interior.
  */
 export function exactCertificate(request: ExactRequest): LiftCertificate | null {
-  const { algebra, draft, optimum } = request;
+  const { algebra, optimum, grade } = request;
+  const draft = { ...request.draft, grade };
   const parts = liftParts(draft);
   if (parts.length > MOST_PARTS || draft.lift.length > MOST_TERMS) return null;
+  if (grade === 'enclosed') {
+    if (parts.length > MOST_ENCLOSED_PARTS) return null;
+    return solved(request, { ...draft, bound: rationalOf(draft.bound) }, parts, [], [FINEST]);
+  }
   const simple = guessRational(optimum, 1000, 1e-7 * Math.max(1, Math.abs(optimum)));
   if (simple) {
     const at = { ...draft, bound: simple };
     const kernel = rationalKernel(liftForm(ringModel(DOUBLES, algebra, at), 'left'));
-    const found = kernel && solved(request, at, parts, kernel);
+    // Where the solver stops too far from the face to show it, its coefficients may still stand for simple fractions.
+    const found = (kernel && solved(request, at, parts, kernel)) ?? solved(request, at, parts, [], FRACTIONS);
     if (found) return found;
   }
   const scale = Math.max(1, Math.abs(optimum));
-  const bound = rational(BigInt(Math.floor((optimum - BACK_OFF * scale) * 1e7)), 10_000_000n);
-  return solved(request, { ...draft, bound }, parts, []);
+  for (const backOff of BACK_OFFS) {
+    const bound = roundedDown(optimum - backOff * scale, backOff);
+    const found = solved(request, { ...draft, bound }, parts, [], [FINEST]);
+    if (found) return found;
+  }
+  return null;
+}
+
+/** The largest multiple of a unit, 1/unit being an integer, that is not above x. */
+function roundedDown(x: number, unit: number): Rational {
+  const denominator = Math.round(1 / unit);
+  return rational(BigInt(Math.floor(x * denominator)), BigInt(denominator));
 }
 
 function solved(
@@ -61,14 +83,15 @@ function solved(
   draft: LiftCertificate,
   parts: readonly LiftPart[],
   kernel: readonly RationalVector[],
+  denominators: readonly bigint[] = [...FRACTIONS, FINEST],
 ): LiftCertificate | null {
   const model = ringModel(RATIONALS, algebra, draft);
   const system = equations(model, parts, kernel, stop);
   if (!system) return null;
-  for (const limit of DENOMINATORS) {
+  for (const limit of denominators) {
     if (stop()) return null;
     const x = system.solve(parts.map(({ value }) => nearestRational(value, limit)));
-    const candidate: LiftCertificate = { ...draft, grade: 'exact', lift: liftAt(draft, parts, x) };
+    const candidate: LiftCertificate = { ...draft, lift: liftAt(draft, parts, x) };
     if (accepts(candidate)) return candidate;
   }
   return null;

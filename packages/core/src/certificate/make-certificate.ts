@@ -3,7 +3,7 @@ import type { CertifiedConstant, LiftCertificate } from '../checker/lift-certifi
 import { carreDuChamp } from '../constants/carre-du-champ.js';
 import { completeBakryEmery } from '../constants/bakry-emery.js';
 import { ThalwegError } from '../errors.js';
-import { type LiftAnsatz, type LadderResult, climbLadder } from '../lift/index.js';
+import { type LiftAnsatz, type LadderResult, climbLadder, transferLift } from '../lift/index.js';
 import type { ProgrammeIterate } from '../programme/programme-options.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
@@ -96,7 +96,7 @@ export function makeCertificate(
  */
 export function certificateOf(
   generator: Generator,
-  { canonical, lift }: Pick<LadderResult, 'canonical' | 'lift'>,
+  found: Pick<LadderResult, 'canonical' | 'given' | 'lift'>,
   constant: CertifiedConstant,
   options: Pick<CertifyOptions, 'stop'> & { readonly prefer?: 'exact' | 'largest' } = {},
 ): CheckedCertificate {
@@ -104,14 +104,15 @@ export function certificateOf(
     certificate,
     verdict: checkCertificate(generator, certificate),
   });
+  const { canonical, lift } = found;
   const draft = { ...draftCertificate(canonical, lift), constant };
-  const rational = exactOrNull(generator, draft, lift.optimum, options);
+  const rational = rationalCertificate(generator, draftsOf(found, constant), lift.optimum, options);
   if (!rational) return checked(draft);
-  const exact = checked(rational);
-  if (options.prefer !== 'largest' || exact.verdict.bound >= lift.curvature) return exact;
+  const best = checked(rational);
+  if (options.prefer !== 'largest' || best.verdict.bound >= lift.curvature) return best;
   const rounded = checked(draft);
-  const gain = rounded.verdict.bound - exact.verdict.bound;
-  return rounded.verdict.holds && gain > CLOSED_TOLERANCE ? rounded : exact;
+  const gain = rounded.verdict.bound - best.verdict.bound;
+  return rounded.verdict.holds && gain > CLOSED_TOLERANCE ? rounded : best;
 }
 
 interface CheckedCertificate {
@@ -119,20 +120,41 @@ interface CheckedCertificate {
   readonly verdict: CertificateVerdict;
 }
 
-/** The same lift over the rationals, when the model is rational and it passes. */
-function exactOrNull(
+/** The lift over the jumps it was found with, and over those given, which may be rational where the others are not. */
+function draftsOf(
+  { canonical, given, lift }: Pick<LadderResult, 'canonical' | 'given' | 'lift'>,
+  constant: CertifiedConstant,
+): LiftCertificate[] {
+  const found = { ...draftCertificate(canonical, lift), constant };
+  if (canonical === given) return [found];
+  const coefficients = transferLift(lift.coefficients, canonical, given);
+  return [found, { ...draftCertificate(given, { ...lift, coefficients }), constant }];
+}
+
+/** Over the rationals, when the model is rational and the lift passes; else over the doubles as rational numbers; else null. */
+function rationalCertificate(
   generator: Generator,
-  draft: LiftCertificate,
+  drafts: readonly LiftCertificate[],
   optimum: number,
   options: Pick<CertifyOptions, 'stop'>,
 ): LiftCertificate | null {
-  const rationalised = rationalDraft(draft);
-  if (!rationalised) return null;
-  return exactCertificate({
-    algebra: generator.algebra,
-    draft: rationalised,
-    optimum,
-    accepts: (candidate) => checkCertificate(generator, candidate).holds,
-    stop: options.stop ?? (() => false),
-  });
+  for (const [grade, fallback] of [
+    ['exact', 'none'],
+    ['enclosed', 'double'],
+  ] as const) {
+    for (const each of drafts) {
+      const draft = rationalDraft(each, fallback);
+      if (!draft) continue;
+      const found = exactCertificate({
+        algebra: generator.algebra,
+        draft,
+        grade,
+        optimum,
+        accepts: (candidate) => checkCertificate(generator, candidate).holds,
+        stop: options.stop ?? (() => false),
+      });
+      if (found) return found;
+    }
+  }
+  return null;
 }

@@ -37,6 +37,11 @@ export class RationalSystem {
     return true;
   }
 
+  /** True when the equations give this unknown in terms of others. */
+  determines(unknown: number): boolean {
+    return this.#rows.has(unknown);
+  }
+
   /** The solution with the free unknowns as given; those that equations determine are ignored. */
   solve(free: readonly Rational[]): Rational[] {
     return free.map((value, k) => {

@@ -1,6 +1,7 @@
 import { ThalwegError } from '../errors.js';
 import type { Generator } from '../generator/generator.js';
 import type { Rational } from './arithmetic/rational.js';
+import { subDown } from './arithmetic/rounding.js';
 import {
   exactFormCondition,
   exactLiftCondition,
@@ -8,7 +9,7 @@ import {
   exactPartnerCondition,
   exactStateCondition,
 } from './exact-conditions.js';
-import type { Condition, LiftCertificate } from './lift-certificate.js';
+import type { CertificateGrade, Condition, LiftCertificate } from './lift-certificate.js';
 import { ringModel } from './ring-model.js';
 import { DOUBLES, INTERVALS, RATIONALS } from './ring.js';
 import {
@@ -28,7 +29,7 @@ import { MODEL_ROUNDING, RESIDUAL_LIMIT, RESIDUAL_WEIGHT } from './tolerances.js
 export interface CertificateVerdict {
   readonly holds: boolean;
   /** The grade reached; null when a condition fails. */
-  readonly grade: 'exact' | 'certified' | null;
+  readonly grade: CertificateGrade | null;
   /** The bound that is proved: K, or K less the allowance. */
   readonly bound: number;
   /** K as a rational number, at the grade exact. */
@@ -42,17 +43,18 @@ export interface CertificateVerdict {
  * Check a certificate from the generator and the certificate alone: σ and the jumps are the canonical form of L, L̂ intertwines
  * the derivations, and both forms of §6 are positive. Which model the certificate names is the caller's to compare.
  *
- * Grade `exact`: all of it in rational arithmetic for the generator of the certificate's rational jumps; that the model's doubles
- * are the rounding of that generator is checked to MODEL_ROUNDING. Grade `certified`: no residual above RESIDUAL_LIMIT, and
- * the bound is K less RESIDUAL_WEIGHT·(largest residual)·‖L‖ and less the loss that makes up for rounding in the forms (see
- * rounded-form.ts, rigorous). For `clsi` and `mlsi` the bound must be positive (§4). A certificate that claims `exact` and
- * reaches only less fails.
+ * Grade `exact`: all of it in rational arithmetic for the generator of the certificate's numbers (a double is a rational number
+ * too); that the model's doubles are the rounding of that generator is checked to MODEL_ROUNDING. Grade `enclosed`: the same,
+ * save that the forms are bounded with intervals and the bound is K less the loss that makes up for their rounding (see
+ * rounded-form.ts, rigorous). Grade `certified`: no residual above RESIDUAL_LIMIT, and the bound is K less that loss and less
+ * RESIDUAL_WEIGHT·(largest residual)·‖L‖. For `clsi` and `mlsi` the bound must be positive (§4). A certificate that claims a
+ * grade and reaches only less fails.
  */
 export function checkCertificate(g: Generator, certificate: LiftCertificate): CertificateVerdict {
   const shape = shapeCondition(g.algebra, certificate);
   if (!shape.holds) return refused([shape]);
   try {
-    const verdict = certificate.grade === 'exact' ? exactVerdict(g, certificate) : certifiedVerdict(g, certificate);
+    const verdict = VERDICTS[certificate.grade](g, certificate);
     return { ...verdict, conditions: [shape, ...verdict.conditions] };
   } catch (error) {
     if (!(error instanceof ThalwegError)) throw error;
@@ -61,23 +63,56 @@ export function checkCertificate(g: Generator, certificate: LiftCertificate): Ce
   }
 }
 
+type Judge = (g: Generator, certificate: LiftCertificate) => CertificateVerdict;
+
+const VERDICTS: Record<CertificateGrade, Judge> = {
+  exact: exactVerdict,
+  enclosed: enclosedVerdict,
+  certified: certifiedVerdict,
+};
+
 function exactVerdict(g: Generator, certificate: LiftCertificate): CertificateVerdict {
+  const { model, conditions } = exactLift(g, certificate);
+  // The forms are worth their cost only for a lift.
+  if (!conditions.every(({ holds }) => holds)) return refused(conditions);
+  conditions.push(exactFormCondition(model, 'left'), exactFormCondition(model, 'right'));
+  return concluded(certificate, {
+    grade: 'exact',
+    bound: doubleOf(certificate.bound),
+    exactBound: rationalOf(certificate.bound),
+    allowance: 0,
+    conditions,
+  });
+}
+
+function enclosedVerdict(g: Generator, certificate: LiftCertificate): CertificateVerdict {
+  const { conditions, norm } = exactLift(g, certificate);
+  if (!conditions.every(({ holds }) => holds)) return refused(conditions);
+  const forms = roundedForms(g, certificate, norm);
+  conditions.push(...forms.conditions);
+  const bound = subDown(doubleOf(certificate.bound), forms.loss);
+  return concluded(certificate, { grade: 'enclosed', bound, exactBound: null, allowance: forms.loss, conditions });
+}
+
+/** Everything but the forms, in rational arithmetic; with max ‖L(e)‖_F over matrix units. */
+function exactLift(g: Generator, certificate: LiftCertificate) {
   const model = ringModel(RATIONALS, g.algebra, certificate);
-  const { value } = assemblyResidual(g, ringModel(DOUBLES, g.algebra, certificate));
+  const { value, norm } = assemblyResidual(g, ringModel(DOUBLES, g.algebra, certificate));
   const conditions = [
     exactStateCondition(model),
     exactModularCondition(model),
     exactPartnerCondition(model),
     residual('L from the jumps, against the doubles of the model', value, MODEL_ROUNDING),
   ];
-  const exactBound = rationalOf(certificate.bound);
-  // The forms are worth their cost only for a lift.
   if (conditions.every(({ holds }) => holds)) conditions.push(exactLiftCondition(model));
-  if (conditions.every(({ holds }) => holds)) {
-    conditions.push(exactFormCondition(model, 'left'), exactFormCondition(model, 'right'));
-  }
-  const bound = doubleOf(certificate.bound);
-  return concluded(certificate, 'exact', bound, exactBound, 0, conditions);
+  return { model, conditions, norm };
+}
+
+function roundedForms(g: Generator, certificate: LiftCertificate, norm: number) {
+  const enclosed = ringModel(INTERVALS, g.algebra, certificate);
+  const left = roundedFormCondition(enclosed, 'left', norm);
+  const right = roundedFormCondition(enclosed, 'right', norm);
+  return { conditions: [left.condition, right.condition], loss: Math.max(left.loss, right.loss) };
 }
 
 function certifiedVerdict(g: Generator, certificate: LiftCertificate): CertificateVerdict {
@@ -94,29 +129,22 @@ function certifiedVerdict(g: Generator, certificate: LiftCertificate): Certifica
   const bound = doubleOf(certificate.bound);
   if (!conditions.every(({ holds }) => holds)) return refused(conditions);
   const residuals = conditions.filter(({ kind }) => kind === 'residual').map(({ value }) => value);
-  const enclosed = ringModel(INTERVALS, g.algebra, certificate);
-  const left = roundedFormCondition(enclosed, 'left', assembly.norm);
-  const right = roundedFormCondition(enclosed, 'right', assembly.norm);
-  const loss = Math.max(left.loss, right.loss);
+  const { conditions: forms, loss } = roundedForms(g, certificate, assembly.norm);
   const allowance = RESIDUAL_WEIGHT * Math.max(...residuals) * assembly.norm + loss;
-  conditions.push(left.condition, right.condition);
-  return concluded(certificate, 'certified', bound - allowance, null, allowance, conditions);
+  conditions.push(...forms);
+  const reached = { grade: 'certified', bound: bound - allowance, exactBound: null, allowance, conditions } as const;
+  return concluded(certificate, reached);
 }
 
 function concluded(
   { constant }: LiftCertificate,
-  grade: 'exact' | 'certified',
-  bound: number,
-  exactBound: Rational | null,
-  allowance: number,
-  conditions: Condition[],
+  { conditions, ...reached }: Omit<CertificateVerdict, 'holds' | 'conditions'> & { readonly conditions: Condition[] },
 ): CertificateVerdict {
   if (constant === 'clsi' || constant === 'mlsi') {
     const name = `bound positive, as cge ≤ ${constant} needs`;
-    conditions.push({ name, kind: 'margin', value: bound, limit: 0, holds: bound > 0 });
+    conditions.push({ name, kind: 'margin', value: reached.bound, limit: 0, holds: reached.bound > 0 });
   }
-  if (!conditions.every(({ holds }) => holds)) return refused(conditions);
-  return { holds: true, grade, bound, exactBound, allowance, conditions };
+  return conditions.every(({ holds }) => holds) ? { holds: true, ...reached, conditions } : refused(conditions);
 }
 
 function refused(conditions: readonly Condition[]): CertificateVerdict {

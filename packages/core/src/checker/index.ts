@@ -1,5 +1,7 @@
 export {
+  CERTIFICATE_GRADES,
   CERTIFIED_CONSTANTS,
+  type CertificateGrade,
   type CertificateJump,
   type CertificateTerm,
   type CertifiedConstant,

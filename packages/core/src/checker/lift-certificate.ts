@@ -5,6 +5,11 @@ export const CERTIFIED_CONSTANTS = ['cge', 'ge', 'clsi', 'mlsi'] as const;
 
 export type CertifiedConstant = (typeof CERTIFIED_CONSTANTS)[number];
 
+/** What a certificate can claim of itself, strongest first. */
+export const CERTIFICATE_GRADES = ['exact', 'enclosed', 'certified'] as const;
+
+export type CertificateGrade = (typeof CERTIFICATE_GRADES)[number];
+
 /** An entry of a matrix: row, column, real and imaginary part. */
 export type MatrixEntry = readonly [number, number, Scalar, Scalar];
 
@@ -35,8 +40,11 @@ export interface CertificateTerm {
  */
 export interface LiftCertificate {
   readonly constant: CertifiedConstant;
-  /** `exact` claims that every condition holds in rational arithmetic, `certified` that it holds up to rounding. */
-  readonly grade: 'exact' | 'certified';
+  /**
+   * `exact` claims that every condition holds in rational arithmetic; `enclosed` that all but the positivity of the forms do,
+   * which is proved with intervals; `certified` that they hold up to rounding.
+   */
+  readonly grade: CertificateGrade;
   readonly bound: Scalar;
   readonly blocks: readonly number[];
   readonly state: readonly MatrixEntry[];

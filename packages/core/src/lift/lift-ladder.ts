@@ -17,6 +17,8 @@ export interface LadderResult {
   readonly lift: FoundLift;
   readonly rung: LiftRung;
   readonly canonical: CanonicalForm;
+  /** The canonical form that the ladder started from. */
+  readonly given: CanonicalForm;
   /** `closed`: K reached the target; `exhausted`: every rung was tried; `stopped`: the time ended. */
   readonly reason: 'closed' | 'exhausted' | 'stopped';
 }
@@ -47,7 +49,8 @@ export function climbLadder(canonical: CanonicalForm, options: LadderOptions): L
       if (options.stop?.()) return best && { ...best, reason: 'stopped' };
       const lift = solveLift(prepared, options);
       if (!lift) continue;
-      if (!best || lift.optimum > best.lift.optimum) best = { lift, rung, canonical: rebased, reason: 'exhausted' };
+      if (!best || lift.optimum > best.lift.optimum)
+        best = { lift, rung, canonical: rebased, given: canonical, reason: 'exhausted' };
       if (lift.optimum >= options.target - LIFT_CLOSED * Math.max(1, Math.abs(options.target)))
         return { ...best, reason: 'closed' };
       if (ansatz === 'full') break;

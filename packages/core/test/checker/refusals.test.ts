@@ -3,13 +3,9 @@ import { addRational, rational, rationalFromDouble } from '../../src/checker/ari
 import { checkCertificate } from '../../src/checker/check-certificate.js';
 import type { CertificateTerm, LiftCertificate } from '../../src/checker/lift-certificate.js';
 import { type Scalar, doubleOf, rationalOf } from '../../src/checker/scalar.js';
-import { draftCertificate } from '../../src/certificate/draft-certificate.js';
 import { depolarising, thermalQubit } from '../../src/families/index.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
-import { findLift } from '../../src/lift/index.js';
-import type { CanonicalForm } from '../../src/structure/canonical-form.js';
-import { analyse } from '../../src/structure/structure.js';
-import { madeCertificate } from '../helpers/made-certificate.js';
+import { madeCertificate, roundedCertificate } from '../helpers/made-certificate.js';
 
 const QUBIT = thermalQubit({ beta: 1 });
 const POINTS = ratesGenerator([
@@ -17,10 +13,12 @@ const POINTS = ratesGenerator([
   [2, 0],
 ]);
 let rounded: LiftCertificate;
+let enclosed: LiftCertificate;
 let exact: LiftCertificate;
 
 beforeAll(() => {
-  rounded = madeCertificate(QUBIT).certificate;
+  rounded = roundedCertificate(QUBIT);
+  enclosed = madeCertificate(QUBIT).certificate;
   exact = madeCertificate(POINTS).certificate;
 });
 
@@ -129,13 +127,48 @@ it('clsi and mlsi need a positive bound', () => {
 
 it('a residual lowers the bound by what the rule says', () => {
   const g = depolarising(2);
-  const canonical = analyse(g).canonical as CanonicalForm;
-  const lift = findLift(canonical, 'diagonal', { maxUnknowns: 100 });
-  const draft = draftCertificate(canonical, lift as NonNullable<typeof lift>);
-  const moved = withTerms({ ...draft, bound: 0.7 }, (term, t) => (t === 0 ? { ...term, re: doubleOf(term.re) * (1 + 1e-10) } : term)); // prettier-ignore
+  const moved = withTerms({ ...roundedCertificate(g), bound: 0.7 }, (term, t) => (t === 0 ? { ...term, re: doubleOf(term.re) * (1 + 1e-10) } : term)); // prettier-ignore
   const { holds, bound, allowance } = checkCertificate(g, moved);
   expect(holds).toBe(true);
   expect(allowance).toBeGreaterThan(1e-11);
   expect(allowance).toBeLessThan(1e-8);
   expect(bound).toBe(0.7 - allowance);
+});
+
+describe('an enclosed certificate', () => {
+  const plus = (x: Scalar, y: number): Scalar => addRational(rationalOf(x), rationalFromDouble(y));
+
+  it('is accepted as it is, and proves at most its K', () => {
+    const verdict = checkCertificate(QUBIT, enclosed);
+    expect(verdict).toMatchObject({ holds: true, grade: 'enclosed', exactBound: null });
+    expect(verdict.bound).toBeLessThanOrEqual(doubleOf(enclosed.bound));
+    expect(doubleOf(enclosed.bound) - verdict.bound).toBeLessThan(1e-11);
+  });
+
+  it.each([1e-9, 1e-6])('proves nothing for K above the truth by %f', (step) => {
+    expect(failing({ ...enclosed, bound: 2 * Math.cosh(0.5) + step })).toBe('left form');
+  });
+
+  it('claims no grade that it does not reach', () => {
+    expect(failing({ ...enclosed, grade: 'exact', bound: 2 * Math.cosh(0.5) + 1e-15 })).toBe('left form');
+    expect(failing({ ...rounded, grade: 'enclosed' })).toBe('σWσ⁻¹ = W/ratio for every jump');
+  });
+
+  it.each([0, 1, 2, 3, 4, 5])('is refused with coefficient %i off by 2^-100', (t) => {
+    const edited = withTerms(enclosed, (term, u) => (u === t ? { ...term, re: plus(term.re, 2 ** -100) } : term));
+    expect(failing(edited)).toBe('∂L = L̂∂ on every matrix unit');
+  });
+
+  it('is refused with a ratio or a rate off by 2^-100', () => {
+    expect(failing(withJump(enclosed, { ratio: plus(enclosed.jumps[0].ratio, 2 ** -100) }))).toBe('σWσ⁻¹ = W/ratio for every jump'); // prettier-ignore
+    expect(failing(withJump(enclosed, { rate: plus(enclosed.jumps[0].rate, 2 ** -100) }))).toBe(
+      'partners are adjoints',
+    );
+  });
+
+  it('is refused when the model differs by 1e-12', () => {
+    expect(failing(enclosed, thermalQubit({ beta: 1 + 1e-12 }))).toBe(
+      'L from the jumps, against the doubles of the model',
+    );
+  });
 });

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { CERTIFIED_CONSTANTS } from '@thalweg/core';
+import { CERTIFICATE_GRADES, CERTIFIED_CONSTANTS } from '@thalweg/core';
 import { CERTIFICATE_LIMITS } from '../limits.js';
 import { blocksSchema } from './generator-forms.js';
 import { digest, finite, list, oneOf, strict, text, whole } from './fields.js';
@@ -38,7 +38,7 @@ export const certificateSchema = strict({
   model: digest,
   constant: z.enum(CERTIFIED_CONSTANTS),
   bound: scalar,
-  grade: z.enum(['exact', 'certified']),
+  grade: z.enum(CERTIFICATE_GRADES),
   algebra: blocksSchema,
   state: matrixEntries,
   jumps: list(jumpSchema, 1),
