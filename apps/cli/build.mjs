@@ -2,18 +2,31 @@ import { copyFileSync, mkdirSync, readFileSync, readdirSync, renameSync, unlinkS
 import { basename, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
+import { bundleProcess } from '../../packages/sandbox/build.mjs';
 
 const folder = fileURLToPath(new URL('.', import.meta.url));
 const dist = join(folder, 'dist');
+const sandboxFolder = join(folder, '../../packages/sandbox');
 
 /** Commander is CommonJS and asks for Node's own modules through require. */
 const BANNER =
   "import { createRequire as thalwegRequire } from 'node:module'; const require = thalwegRequire(import.meta.url);";
 
+/** Lists of names that come without a licence text. */
+const NO_FILE = {
+  'spdx-exceptions': 'Licensed under https://creativecommons.org/licenses/by/3.0/ by The Linux Foundation.',
+  'spdx-license-ids': 'Dedicated to the public domain: https://creativecommons.org/publicdomain/zero/1.0/',
+};
+
 try {
-  const { outputFiles, metafile } = await bundle();
-  write(outputFiles);
-  writeFileSync(join(dist, 'THIRD-PARTY-LICENSES.txt'), licences(Object.keys(metafile.inputs)));
+  const command = await bundle();
+  const sandbox = await bundleProcess();
+  const beside = sandbox.outputFiles.map(({ path, contents }) => ({ path: join(dist, basename(path)), contents }));
+  write([...command.outputFiles, ...beside]);
+  writeFileSync(
+    join(dist, 'THIRD-PARTY-LICENSES.txt'),
+    licences([...inputs(command), ...inputs(sandbox, sandboxFolder)]),
+  );
 } catch (error) {
   if (!Array.isArray(error.errors)) throw error;
   process.exitCode = 1; // esbuild has already said why
@@ -61,18 +74,24 @@ function write(files) {
   copyFileSync(join(folder, '../../LICENSE'), join(folder, 'LICENSE'));
 }
 
+/** What a bundle was made of, as whole paths. */
+function inputs({ metafile }, base = folder) {
+  return Object.keys(metafile.inputs).map((path) => join(base, path));
+}
+
 /** Licence texts of the packages that ended up inside, as their licences ask for. */
-function licences(inputs) {
-  const folders = new Set(inputs.map((path) => /^.*node_modules\/(?:@[^/]+\/)?[^/]+/.exec(path)?.[0]));
+function licences(paths) {
+  const folders = new Set(paths.map((path) => /^.*node_modules\/(?:@[^/]+\/)?[^/]+/.exec(path)?.[0]));
   folders.delete(undefined);
   return [...folders]
     .sort()
     .map((path) => {
-      const packageFolder = join(folder, path);
+      const packageFolder = path;
       const { name, version, license } = JSON.parse(readFileSync(join(packageFolder, 'package.json'), 'utf8'));
       const file = readdirSync(packageFolder).find((entry) => /^licen[cs]e/i.test(entry));
-      if (file === undefined) throw new Error(`${name} has no licence file: add its text here`);
-      return `${name} ${version} (${license})\n\n${readFileSync(join(packageFolder, file), 'utf8').trim()}\n`;
+      const text = file === undefined ? NO_FILE[name] : readFileSync(join(packageFolder, file), 'utf8').trim();
+      if (text === undefined) throw new Error(`${name} has no licence file: add its text here`);
+      return `${name} ${version} (${license})\n\n${text}\n`;
     })
     .join(`\n${'-'.repeat(72)}\n\n`);
 }

@@ -1,14 +1,22 @@
-import { CERTIFIED_CONSTANTS, CONSTANT_IDS, CONVENTION_NAMES, MEAN_NAMES } from '@thalweg/core';
+import { CERTIFIED_CONSTANTS, CONVENTION_NAMES } from '@thalweg/core';
 import { Argument, Command, Option } from 'commander';
 import { SHELLS } from './completion/shells.js';
-import type { VerbName } from './verbs/load-verb.js';
-import type { RawOptions } from './verbs/verb.js';
+import { addExampleVerbs } from './program-examples.js';
+import {
+  addVerb,
+  collect,
+  CONSTANT_WORDS,
+  examples,
+  meanOption,
+  modelArgument,
+  onlyOption,
+  setOption,
+  withDefault,
+  withWords,
+  type RunVerb,
+} from './program-parts.js';
+import { addTransportVerbs } from './program-transport.js';
 import { VERSION } from './version.js';
-
-/** Called with the verb that was asked for, its arguments and all its options. */
-export type RunVerb = (name: VerbName, raw: RawOptions) => Promise<void>;
-
-const CONSTANT_WORDS = [...CONSTANT_IDS, ...MEAN_NAMES.map((mean) => `ge:${mean}`)];
 
 const EXIT_CODES = `
 Exit codes:
@@ -38,11 +46,13 @@ export function createProgram(runVerb: RunVerb): Command {
 
   addVerb(program, runVerb, 'inspect', 'tell what a model is: symmetry, state, fixed points, canonical form, spectrum')
     .addArgument(modelArgument())
+    .addOption(setOption())
     .addHelpText('after', examples(['thalweg inspect qubit.json', 'thalweg inspect --json - < qubit.json']));
 
   addVerb(program, runVerb, 'constants', 'print the sheet: every constant with its lower and upper bound')
     .addArgument(modelArgument())
-    .addOption(withWords(new Option('--only <constants>', 'only these, separated by commas'), CONSTANT_WORDS))
+    .addOption(setOption())
+    .addOption(onlyOption('only these, separated by commas'))
     .addOption(meanOption())
     .addHelpText('after', examples(['thalweg constants qubit.json', 'thalweg constants qubit.json --only gap,ge,cge']));
 
@@ -53,12 +63,17 @@ export function createProgram(runVerb: RunVerb): Command {
     'decide claims about constants: exit code 0 all hold, 1 one is refuted, 2 undecided',
   )
     .addArgument(modelArgument())
+    .addOption(setOption())
     .addOption(new Option('--at-least <constant=value>', 'claim a lower bound (repeatable)').argParser(collect))
     .addOption(new Option('--at-most <constant=value>', 'claim an upper bound (repeatable)').argParser(collect))
     .addOption(meanOption())
     .addHelpText('after', examples(['thalweg check qubit.json --at-least cge=1/2 --at-most mlsi=1']));
 
   addEvidenceVerbs(program, runVerb);
+  addPictureVerbs(program, runVerb);
+  addTransportVerbs(program, runVerb);
+
+  addExampleVerbs(program, runVerb);
 
   addVerb(program, runVerb, 'completion', 'print a completion script for a shell')
     .addArgument(withWords(new Argument('<shell>', 'which shell'), SHELLS))
@@ -71,6 +86,7 @@ export function createProgram(runVerb: RunVerb): Command {
 function addEvidenceVerbs(program: Command, runVerb: RunVerb): void {
   addVerb(program, runVerb, 'witness', 'find the best upper bound of a constant, or its value at a given state')
     .addArgument(modelArgument())
+    .addOption(setOption())
     .addArgument(withWords(new Argument('<constant>', 'which constant'), CONSTANT_WORDS))
     .option('--at <state>', 'evaluate at this state instead of searching (JSON file)')
     .addOption(meanOption())
@@ -82,6 +98,7 @@ function addEvidenceVerbs(program: Command, runVerb: RunVerb): void {
 
   addVerb(program, runVerb, 'certify', 'find a proof of a lower bound that others can check: a lift of the derivations')
     .addArgument(modelArgument())
+    .addOption(setOption())
     .addArgument(withWords(new Argument('<constant>', 'which constant'), CERTIFIED_CONSTANTS))
     .option('-o, --output <file>', 'write the certificate here')
     .option('--verbose', 'tell every iteration of the solver')
@@ -92,21 +109,32 @@ function addEvidenceVerbs(program: Command, runVerb: RunVerb): void {
 
   addVerb(program, runVerb, 'verify', 'check evidence against its model, independently of how it was found')
     .addArgument(new Argument('<evidence>', 'witness or certificate (JSON file, - for standard input)'))
-    .option('--model <model>', 'the model it speaks about (JSON file)')
+    .option('--model <model>', 'the model it speaks about (JSON file), or an example')
+    .addOption(setOption())
     .addHelpText('after', examples(['thalweg verify w.json --model qubit.json']));
 }
 
-function addVerb(program: Command, runVerb: RunVerb, name: VerbName, summary: string): Command {
-  return program
-    .command(name)
-    .description(`${summary[0]?.toUpperCase()}${summary.slice(1)}.`)
-    .summary(summary)
-    .helpOption('-h, --help', 'print this help')
-    .action(async (...parameters: unknown[]) => {
-      const command = parameters.at(-1) as Command;
-      const values = command.registeredArguments.map((argument, k) => [argument.name(), command.args[k]]);
-      await runVerb(name, { ...command.optsWithGlobals(), ...Object.fromEntries(values) });
-    });
+/** What shows a model over its states: along the flow. */
+function addPictureVerbs(program: Command, runVerb: RunVerb): void {
+  addVerb(program, runVerb, 'flow', 'follow a state: relative entropy against what the proved constants promise')
+    .addArgument(modelArgument())
+    .addOption(setOption())
+    .option('--from <state>', 'the state at time 0 (JSON, .npy or .mtx file, - for standard input)')
+    .addOption(withDefault(new Option('--until <time>', 'last time'), 'where entropies have fallen by about 10^4'))
+    .addOption(withDefault(new Option('--points <number>', 'times, evenly spaced from 0'), '101'))
+    .option('--csv', 'print comma-separated values')
+    .addOption(svgOption('the descent'))
+    .addHelpText(
+      'after',
+      examples([
+        'thalweg flow qubit.json --from rho.json',
+        'thalweg flow qubit.json --from rho.json --until 5 --csv --svg descent.svg',
+      ]),
+    );
+}
+
+function svgOption(what: string): Option {
+  return new Option('--svg <file>', `also write a picture of ${what} here`);
 }
 
 function globalOptions(): Option[] {
@@ -124,41 +152,13 @@ function globalOptions(): Option[] {
   ];
 }
 
-function modelArgument(): Argument {
-  return new Argument('<model>', 'model document (JSON file, - for standard input)');
-}
-
-function meanOption(): Option {
-  return withDefault(withWords(new Option('--mean <name>', 'operator mean of ge'), MEAN_NAMES), MEAN_NAMES[0]);
-}
-
-/** Names the words that help and completion show; the verb's plan checks them. */
-function withWords<Target extends Argument | Option>(target: Target, words: readonly string[]): Target {
-  target.argChoices = [...words];
-  return target;
-}
-
-/** Says what an option is when it is left out; the verb's plan puts it there. */
-function withDefault(option: Option, text: string | undefined): Option {
-  option.defaultValueDescription = text;
-  return option;
-}
-
 function describe(target: Argument | Option): string {
   const words = target.argChoices === undefined ? '' : `, one of ${target.argChoices.join(', ')}`;
   const fallback = target.defaultValueDescription === undefined ? '' : ` (default: ${target.defaultValueDescription})`;
   return `${target.description}${words}${fallback}`;
 }
 
-function collect(value: string, previous: string[] | undefined): string[] {
-  return [...(previous ?? []), value];
-}
-
 function commandUsage(command: Command): string {
   const names = command.parent === null ? command.name() : `${command.parent.name()} ${command.name()}`;
   return `${names} ${command.usage()}`;
-}
-
-function examples(lines: readonly string[]): string {
-  return `\nExamples:\n${lines.map((line) => `  ${line}`).join('\n')}`;
 }

@@ -30,8 +30,8 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
     const verb = await loadVerb(asked.name);
     const plan = verb.plan(asked.raw, { processors: availableParallelism() });
     const options = { ...style, quiet: asked.raw.quiet === true };
-    const effect = verb.effect(plan, createSession(terminal, options, interruption.signal));
-    const status = await orInterrupted(effect, interruption.signal);
+    const session = createSession(terminal, options, interruption.signal);
+    const status = await orInterrupted(verb.effect(plan, session), interruption.signal, session.kept);
     await streams.flush();
     return status;
   } catch (error) {
@@ -44,9 +44,13 @@ export async function runCli(argv: readonly string[], terminal: Terminal): Promi
 }
 
 /** Stops waiting as soon as the signal is aborted, whatever the effect waits for. */
-async function orInterrupted<Result>(effect: Promise<Result>, signal: AbortSignal): Promise<Result> {
+async function orInterrupted<Result>(
+  effect: Promise<Result>,
+  signal: AbortSignal,
+  kept: () => string | null,
+): Promise<Result> {
   return new Promise((resolve, reject) => {
-    signal.addEventListener('abort', () => reject(interruptedError()), { once: true });
+    signal.addEventListener('abort', () => reject(interruptedError(kept())), { once: true });
     effect.then(resolve, reject);
   });
 }

@@ -8,7 +8,7 @@ export interface OutputStream extends Writable {
 
 /** What the command line needs of its surroundings; `process` is one, tests pass their own. */
 export interface Terminal {
-  readonly stdin: Readable;
+  readonly stdin: Readable & { readonly isTTY?: boolean };
   readonly stdout: OutputStream;
   readonly stderr: OutputStream;
   readonly env: Readonly<Record<string, string | undefined>>;

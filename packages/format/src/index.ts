@@ -17,7 +17,9 @@ export {
   type ParameterValue,
 } from './example/parameter-point.js';
 export { type Parameter } from './example/parameter-schema.js';
+export { type ReproductionDocument } from './example/reproduction-schema.js';
 export { type ShowcaseDocument } from './example/showcase-schema.js';
+export { type PointDocument, type SweepDocument } from './example/sweep-schema.js';
 export { canonicalJson } from './json/canonical-json.js';
 export { jsonPointer, type PathSegment } from './json/json-pointer.js';
 export { type JsonValue } from './json/json-value.js';
@@ -52,6 +54,8 @@ export { readMtx } from './mtx/read-mtx.js';
 export { readNpy } from './npy/read-npy.js';
 export * from './schema/parse-document.js';
 export { certificateSchema, type CertificateDocument } from './schema/certificate-schema.js';
+export { comparisonSchema, type ComparisonDocument } from './schema/comparison-schema.js';
+export { distanceSchema, type DistanceDocument } from './schema/distance-schema.js';
 export { flowSchema, type FlowDocument } from './schema/flow-schema.js';
 export { matrixSchema } from './schema/matrix-schema.js';
 export { modelSchema } from './schema/model-schema.js';

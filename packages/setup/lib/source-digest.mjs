@@ -7,7 +7,7 @@ import { root } from './paths.mjs';
 export function sourceDigest(folder = root) {
   const packages = readdirSync(join(folder, 'packages')).map((name) => `packages/${name}`);
   const parts = [...packages.sort(), 'apps/cli'].flatMap((path) => [`${path}/package.json`, `${path}/src`]);
-  const sources = ['package-lock.json', 'apps/cli/build.mjs', ...parts].filter((path) =>
+  const sources = ['package-lock.json', 'apps/cli/build.mjs', 'packages/sandbox/build.mjs', ...parts].filter((path) =>
     existsSync(join(folder, path)),
   );
   const hash = createHash('sha256');

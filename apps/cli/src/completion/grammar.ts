@@ -27,7 +27,7 @@ export interface Grammar {
 }
 
 /** Names of placeholders that stand for a file. */
-const FILE_PLACEHOLDERS = ['model', 'evidence', 'state', 'file'];
+const FILE_PLACEHOLDERS = ['model', 'example', 'evidence', 'state', 'file', 'folder'];
 
 /** Reads verbs, arguments and options off the parser, so that completion knows exactly what parsing accepts. */
 export function describeGrammar(program: Command): Grammar {

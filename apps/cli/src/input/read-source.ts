@@ -9,8 +9,8 @@ export interface DocumentSource {
   /** The name for messages: the path as typed, or `standard input`. */
   readonly name: string;
   readonly bytes: Uint8Array;
-  /** Folder in which the files that the document names are looked for. */
-  readonly folder: string;
+  /** Folder in which the files that the document names are looked for; null where it may name none. */
+  readonly folder: string | null;
 }
 
 /** Reads a file, or standard input for `-`, which can be read once. Throws `not-found`, `bad-file`, `too-large` and `usage`. */

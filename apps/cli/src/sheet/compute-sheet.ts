@@ -35,10 +35,15 @@ export function unfinishedNote(unfinished: Unfinished, more: string): string {
 /** ε of `mixing` on a sheet, trace norm. */
 const MIXING_EPSILON = 0.01;
 
+/** What a sheet asks for, the same wherever it is computed. */
+export function sheetRequest(rows: readonly RowKey[], seed: number): SheetRequest {
+  return { rows, seed, randomStarts: null, epsilon: MIXING_EPSILON };
+}
+
 /** Computes a sheet on the pool: eigenvalue problems first, then the searches still needed, spread over the threads. */
 export async function computeSheet(job: SheetJob, session: Session): Promise<ComputedSheet> {
   const { source, rows, seed, convention, limits } = job;
-  const request: SheetRequest = { rows, seed, randomStarts: null, epsilon: MIXING_EPSILON };
+  const request = sheetRequest(rows, seed);
   const started = Date.now();
   return session.compute(limits, async (pool) => {
     session.output.progress('eigenvalue problems and lifts');

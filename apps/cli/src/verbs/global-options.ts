@@ -1,6 +1,6 @@
 import * as z from 'zod';
 import { CONVENTION_NAMES } from '@thalweg/core';
-import { readDuration, readName, readWholeNumber } from './option-values.js';
+import { readDuration, readName, readSetting, readWholeNumber } from './option-values.js';
 import { textOption } from './parse-options.js';
 import type { Machine } from './verb.js';
 
@@ -21,5 +21,13 @@ export function globalOptions(machine: Machine) {
       .nullable()
       .default(null),
     convention: textOption((text) => readName('--convention', text, CONVENTION_NAMES)).default(DEFAULT_CONVENTION),
+  };
+}
+
+/** The options of every verb that takes a model, or an example with values for its parameters. */
+export function modelOptions() {
+  return {
+    model: z.string(),
+    set: z.array(textOption((text) => readSetting('--set', text))).default([]),
   };
 }

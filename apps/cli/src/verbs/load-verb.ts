@@ -8,6 +8,14 @@ const VERBS = {
   witness: async () => (await import('./witness/witness-verb.js')).verb as Verb<unknown>,
   certify: async () => (await import('./certify/certify-verb.js')).verb as Verb<unknown>,
   verify: async () => (await import('./verify/verify-verb.js')).verb as Verb<unknown>,
+  compare: async () => (await import('./compare/compare-verb.js')).verb as Verb<unknown>,
+  distance: async () => (await import('./distance/distance-verb.js')).verb as Verb<unknown>,
+  flow: async () => (await import('./flow/flow-verb.js')).verb as Verb<unknown>,
+  draft: async () => (await import('./draft/draft-verb.js')).verb as Verb<unknown>,
+  model: async () => (await import('./model/model-verb.js')).verb as Verb<unknown>,
+  sweep: async () => (await import('./sweep/sweep-verb.js')).verb as Verb<unknown>,
+  seal: async () => (await import('./seal/seal-verb.js')).verb as Verb<unknown>,
+  reproduce: async () => (await import('./reproduce/reproduce-verb.js')).verb as Verb<unknown>,
   completion: async () => (await import('./completion/completion-verb.js')).verb as Verb<unknown>,
 };
 

@@ -18,6 +18,12 @@ export interface Claim {
   readonly bound: number;
 }
 
+/** A parameter of an example and the text that gives it a value. */
+export interface Setting {
+  readonly name: string;
+  readonly text: string;
+}
+
 /** Whole number from `least` to `most`. */
 export function readWholeNumber(option: string, text: string, least: number, most: number): number {
   const value = /^\d+$/.test(text) ? Number(text) : Number.NaN;
@@ -69,6 +75,20 @@ export function readClaim(relation: Claim['relation'], text: string): Claim {
   if (equals < 1) throw usage(`${option}: expected a constant and a value such as cge=0.5, got "${text}"`);
   const constant = readConstant(option, text.slice(0, equals));
   return { constant, relation, bound: readNumber(option, text.slice(equals + 1).trim()) };
+}
+
+/** Finite number above 0. */
+export function readPositive(option: string, text: string): number {
+  const value = readNumber(option, text);
+  if (value > 0) return value;
+  throw usage(`${option}: expected a number above 0, got "${text}"`);
+}
+
+/** `n=3`: a value for a parameter, not yet read since only the example knows its type. */
+export function readSetting(option: string, text: string): Setting {
+  const equals = text.indexOf('=');
+  if (equals >= 1) return { name: text.slice(0, equals).trim(), text: text.slice(equals + 1).trim() };
+  throw usage(`${option}: expected a parameter and its value such as n=3, got "${text}"`);
 }
 
 function readNumber(option: string, text: string): number {

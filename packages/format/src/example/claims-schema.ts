@@ -7,23 +7,23 @@ import { finite, list, strict, text, withoutFault } from '../schema/fields.js';
 /** How a claim relates a constant to its value; `tends-to` is a limit, which no single point decides. */
 export const CLAIM_RELATIONS = ['at-least', 'at-most', 'equals', 'tends-to'] as const;
 
+/** The fields of a claim. */
+export const claimFields = {
+  constant: constantIdSchema,
+  /** The operator mean of `ge`; the logarithmic one where left out. */
+  mean: meanSchema.optional(),
+  relation: z.enum(CLAIM_RELATIONS),
+  value: finite,
+  /** Where the statement stands: author, year, journal, theorem; or how it follows. */
+  source: text.min(1),
+  /** The convention of `value`; two-alpha where left out. */
+  convention: z.enum(CONVENTION_NAMES).optional(),
+  /** The integer parameter that grows, for `tends-to`. */
+  along: text.optional(),
+};
+
 /** What an author says about a constant at given parameters, and who showed it. */
-export const claimSchema = withoutFault(
-  strict({
-    constant: constantIdSchema,
-    /** The operator mean of `ge`; the logarithmic one where left out. */
-    mean: meanSchema.optional(),
-    relation: z.enum(CLAIM_RELATIONS),
-    value: finite,
-    /** Where the statement stands: author, year, journal, theorem; or how it follows. */
-    source: text.min(1),
-    /** The convention of `value`; two-alpha where left out. */
-    convention: z.enum(CONVENTION_NAMES).optional(),
-    /** The integer parameter that grows, for `tends-to`. */
-    along: text.optional(),
-  }),
-  findClaimFault,
-);
+const claimSchema = withoutFault(strict(claimFields), findClaimFault);
 
 export const claimsSchema = list(claimSchema);
 

@@ -6,11 +6,15 @@ import { requireDepth } from '../json/require-depth.js';
 import { valueAt } from '../json/value-at.js';
 import { claimsSchema, type ClaimDocument } from '../example/claims-schema.js';
 import { exampleSchema, type ExampleDocument } from '../example/example-schema.js';
+import { reproductionSchema, type ReproductionDocument } from '../example/reproduction-schema.js';
 import { showcaseSchema, type ShowcaseDocument } from '../example/showcase-schema.js';
+import { pointSchema, sweepSchema, type PointDocument, type SweepDocument } from '../example/sweep-schema.js';
 import type { MatrixDocument } from '../matrix/matrix-document.js';
 import type { ModelDocument } from '../model/model-document.js';
 import { certificateSchema, type CertificateDocument } from './certificate-schema.js';
 import { checkDocument } from './check-document.js';
+import { comparisonSchema, type ComparisonDocument } from './comparison-schema.js';
+import { distanceSchema, type DistanceDocument } from './distance-schema.js';
 import { flowSchema, type FlowDocument } from './flow-schema.js';
 import { matrixSchema } from './matrix-schema.js';
 import { modelSchema } from './model-schema.js';
@@ -31,10 +35,15 @@ export type AnyDocument =
   | WitnessDocument
   | CertificateDocument
   | VerdictDocument
+  | ComparisonDocument
+  | DistanceDocument
   | FlowDocument
   | StateDocument
   | ExampleDocument
-  | ShowcaseDocument;
+  | ShowcaseDocument
+  | SweepDocument
+  | PointDocument
+  | ReproductionDocument;
 
 const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.model/1': modelSchema,
@@ -43,10 +52,15 @@ const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.witness/1': witnessSchema,
   'thalweg.certificate/1': certificateSchema,
   'thalweg.verdict/1': verdictSchema,
+  'thalweg.comparison/1': comparisonSchema,
+  'thalweg.distance/1': distanceSchema,
   'thalweg.flow/1': flowSchema,
   'thalweg.state/1': stateSchema,
   'thalweg.example/1': exampleSchema,
   'thalweg.showcase/1': showcaseSchema,
+  'thalweg.sweep/1': sweepSchema,
+  'thalweg.point/1': pointSchema,
+  'thalweg.reproduction/1': reproductionSchema,
 };
 
 /** Reads a document of any schema. All `parse…` functions throw the errors of `parseJson` and of `checkDocument`. */
@@ -82,6 +96,14 @@ export function parseExample(source: Source): ExampleDocument {
 
 export function parseShowcase(source: Source): ShowcaseDocument {
   return checkDocument(showcaseSchema, parseJson(source));
+}
+
+export function parseSweep(source: Source): SweepDocument {
+  return checkDocument(sweepSchema, parseJson(source));
+}
+
+export function parsePoint(source: Source): PointDocument {
+  return checkDocument(pointSchema, parseJson(source));
 }
 
 /** A state: a `thalweg.state/1` document or a bare matrix. */

@@ -1,6 +1,7 @@
 import { analyse, isMarkov, ThalwegError, type Structure } from '@thalweg/core';
 import { loadModel, type LoadedModel, type ModelDocument } from '@thalweg/format';
-import { createNodeSha256, filesInFolder } from '@thalweg/format/node';
+import { createNodeSha256 } from '@thalweg/format/node';
+import { filesBesideSource } from '../../input/files-beside.js';
 import { inDocument } from '../../input/in-document.js';
 import type { DocumentSource } from '../../input/read-source.js';
 import { requireMemory } from './require-memory.js';
@@ -32,7 +33,7 @@ export function analysedModel(source: DocumentSource): AnalysedModel {
 export function readModel(source: DocumentSource): LoadedModel {
   return inDocument(source.name, () => {
     refuseOtherFiles(source);
-    return loadModel(source.bytes, { readFile: filesInFolder(source.folder), createHash: createNodeSha256 });
+    return loadModel(source.bytes, { ...filesBesideSource(source), createHash: createNodeSha256 });
   });
 }
 

@@ -1,6 +1,6 @@
 import { densityMatrix, ThalwegError, type ComplexMatrix, type Structure } from '@thalweg/core';
 import { decodeMatrix, parseState, readMtx, readNpy, toDense } from '@thalweg/format';
-import { filesInFolder } from '@thalweg/format/node';
+import { filesBesideSource } from '../../input/files-beside.js';
 import { inDocument } from '../../input/in-document.js';
 import type { DocumentSource } from '../../input/read-source.js';
 
@@ -9,13 +9,14 @@ export function readState(structure: Structure, source: DocumentSource): Complex
   return inDocument(source.name, () => densityMatrix(structure.algebra, matrixOf(structure, source), ''));
 }
 
-function matrixOf(structure: Structure, { bytes, name, folder }: DocumentSource): ComplexMatrix {
+function matrixOf(structure: Structure, source: DocumentSource): ComplexMatrix {
+  const { bytes, name } = source;
   const { size } = structure.algebra;
   const matrix = /\.npy$/i.test(name)
     ? toDense(readNpy(bytes))
     : /\.mtx$/i.test(name)
       ? toDense(readMtx(bytes))
-      : toDense(decodeMatrix(parseState(bytes), { readFile: filesInFolder(folder) }));
+      : toDense(decodeMatrix(parseState(bytes), filesBesideSource(source)));
   if (matrix.rows !== size || matrix.cols !== size) {
     throw new ThalwegError(
       'dimension-mismatch',

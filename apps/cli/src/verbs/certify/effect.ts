@@ -2,7 +2,8 @@ import { writeJson } from '@thalweg/format';
 import { only } from '../../compute/only.js';
 import type { CertifyOutcome } from '../../compute/tasks/certificate-tasks.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
-import { type DocumentSource, readSource } from '../../input/read-source.js';
+import { readModel } from '../../input/read-model.js';
+import type { DocumentSource } from '../../input/read-source.js';
 import type { Output } from '../../output/output.js';
 import { requireTarget } from '../../output/require-target.js';
 import { writeFileAtomically } from '../../output/write-file-atomically.js';
@@ -14,7 +15,7 @@ import type { CertifyPlan } from './plan.js';
 export async function certifyEffect(plan: CertifyPlan, session: Session): Promise<ExitStatus> {
   const { model, constant, verbose, output: file } = plan;
   if (file !== null) await requireTarget(file);
-  const source = await readSource(model, session.terminal.stdin);
+  const source = await readModel(plan, session);
   const { output } = session;
   const found = await climb(source, plan, session);
   if (verbose) for (const line of found.iterates) output.note(line);

@@ -1,6 +1,6 @@
 import { CERTIFIED_CONSTANTS } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions } from '../global-options.js';
+import { globalOptions, modelOptions } from '../global-options.js';
 import { readName } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
@@ -11,7 +11,7 @@ export type CertifyPlan = ReturnType<typeof planCertify>;
 export function planCertify(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
-    model: z.string(),
+    ...modelOptions(),
     constant: textOption((text) => readName('constant', text, CERTIFIED_CONSTANTS)),
     output: z.string().nullable().default(null),
     verbose: z.boolean().default(false),

@@ -1,7 +1,7 @@
 import type { RowKey } from '@thalweg/core';
 import type { ConstantDocument, VerdictDocument } from '@thalweg/format';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
-import { readSource } from '../../input/read-source.js';
+import { readModel } from '../../input/read-model.js';
 import { renderVerdict } from '../../render/render-verdict.js';
 import type { Session } from '../../session.js';
 import { computeSheet, unfinishedNote } from '../../sheet/compute-sheet.js';
@@ -13,7 +13,7 @@ const CLAIM_SLACK = 1e-9;
 
 /** Decides claims about a model: all hold, one is refuted, or undecided. */
 export async function checkEffect(plan: CheckPlan, session: Session): Promise<ExitStatus> {
-  const source = await readSource(plan.model, session.terminal.stdin);
+  const source = await readModel(plan, session);
   const { seed, convention, threads, timeLimit, claims, mean } = plan;
   const keys = claims.map(({ constant }): RowKey =>
     constant.id === 'ge' ? { id: 'ge', mean: constant.mean ?? mean } : { id: constant.id },

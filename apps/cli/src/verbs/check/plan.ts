@@ -1,6 +1,6 @@
 import { MEAN_NAMES, ThalwegError } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions } from '../global-options.js';
+import { globalOptions, modelOptions } from '../global-options.js';
 import { readClaim, readName } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
@@ -11,7 +11,7 @@ export type CheckPlan = ReturnType<typeof planCheck>;
 export function planCheck(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
-    model: z.string(),
+    ...modelOptions(),
     atLeast: z.array(textOption((text) => readClaim('at-least', text))).default([]),
     atMost: z.array(textOption((text) => readClaim('at-most', text))).default([]),
     mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),

@@ -1,6 +1,6 @@
 import { MEAN_NAMES } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions } from '../global-options.js';
+import { globalOptions, modelOptions } from '../global-options.js';
 import { readConstantList, readName } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
@@ -11,7 +11,7 @@ export type ConstantsPlan = ReturnType<typeof planConstants>;
 export function planConstants(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
-    model: z.string(),
+    ...modelOptions(),
     only: textOption((text) => readConstantList('--only', text))
       .nullable()
       .default(null),

@@ -1,5 +1,5 @@
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
-import { readSource } from '../../input/read-source.js';
+import { readModel } from '../../input/read-model.js';
 import { only } from '../../compute/only.js';
 import { renderReport } from '../../render/render-report.js';
 import type { Session } from '../../session.js';
@@ -7,7 +7,7 @@ import type { InspectPlan } from './plan.js';
 
 /** Tells what a model is. Ends with `no` when it is no Markov semigroup. */
 export async function inspectEffect(plan: InspectPlan, session: Session): Promise<ExitStatus> {
-  const source = await readSource(plan.model, session.terminal.stdin);
+  const source = await readModel(plan, session);
   const report = await session.compute(plan, async (pool) => only(await pool.run('report', [{ source }])));
   const { output } = session;
   if (output.json) output.document(report);

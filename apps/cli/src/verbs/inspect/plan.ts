@@ -1,11 +1,11 @@
 import * as z from 'zod';
-import { globalOptions } from '../global-options.js';
+import { globalOptions, modelOptions } from '../global-options.js';
 import { parseOptions } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
 
 export type InspectPlan = ReturnType<typeof planInspect>;
 
-/** `inspect M`. */
+/** `inspect M [--set n=3]`. */
 export function planInspect(raw: RawOptions, machine: Machine) {
-  return parseOptions(z.object({ ...globalOptions(machine), model: z.string() }), raw);
+  return parseOptions(z.object({ ...globalOptions(machine), ...modelOptions() }), raw);
 }

@@ -3,6 +3,7 @@ import { parseEvidence } from '@thalweg/format';
 import { only } from '../../compute/only.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { inDocument } from '../../input/in-document.js';
+import { readModel } from '../../input/read-model.js';
 import { readSource } from '../../input/read-source.js';
 import { renderCertificateVerdict } from '../../render/render-certificate-verdict.js';
 import { renderVerdict } from '../../render/render-verdict.js';
@@ -20,7 +21,7 @@ export async function verifyEffect(plan: VerifyPlan, session: Session): Promise<
       `expected --model with the file of the model whose digest is ${document.model}, got none; evidence names its model by digest only`,
     );
   }
-  const source = await readSource(plan.model, stdin);
+  const source = await readModel({ model: plan.model, set: plan.set }, session);
   const isCertificate = document.schema === 'thalweg.certificate/1';
   const verdict = await session.compute(plan, async (pool) =>
     only(

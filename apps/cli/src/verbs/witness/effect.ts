@@ -1,7 +1,8 @@
 import { bestWitness, ThalwegError } from '@thalweg/core';
-import { encodeWitness, writeJson, type WitnessDocument } from '@thalweg/format';
+import { writeJson, type WitnessDocument } from '@thalweg/format';
 import { only } from '../../compute/only.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
+import { readModel } from '../../input/read-model.js';
 import { readSource } from '../../input/read-source.js';
 import { requireTarget } from '../../output/require-target.js';
 import { writeFileAtomically } from '../../output/write-file-atomically.js';
@@ -25,7 +26,7 @@ export async function witnessEffect(plan: WitnessPlan, session: Session): Promis
 
 async function witnessAt(plan: WitnessPlan, at: string, session: Session): Promise<WitnessDocument> {
   const { stdin } = session.terminal;
-  const source = await readSource(plan.model, stdin);
+  const source = await readModel(plan, session);
   const state = await readSource(at, stdin);
   const { constant, mean } = plan;
   return session.compute(plan, async (pool) => only(await pool.run('witness-at', [{ source, state, constant, mean }])));
@@ -33,12 +34,14 @@ async function witnessAt(plan: WitnessPlan, at: string, session: Session): Promi
 
 async function searchedWitness(plan: WitnessPlan, session: Session): Promise<WitnessDocument> {
   const { constant, mean, seed, convention, threads, timeLimit } = plan;
-  const source = await readSource(plan.model, session.terminal.stdin);
+  const source = await readModel(plan, session);
   const rows = [constant === 'ge' ? { id: constant, mean } : { id: constant }];
   const job = { source, rows, seed, convention, limits: { threads, timeLimit }, searchClosed: true };
   const { sheet, findings } = await computeSheet(job, session);
   const found = bestWitness(findings, constant, mean);
-  if (found !== null) return encodeWitness(found, sheet.model.digest, sheet.tool);
+  if (found !== null) {
+    return session.compute(plan, async (pool) => only(await pool.run('witness-found', [{ source, witness: found }])));
+  }
   const [row] = sheet.constants;
   const why = row?.note ?? (row?.upper ? `its upper end comes from: ${row.upper.by}` : 'nothing bounds it from above');
   throw new ThalwegError(

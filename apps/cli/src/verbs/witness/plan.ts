@@ -1,6 +1,6 @@
 import { MEAN_NAMES, ThalwegError, type ConstantId } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions } from '../global-options.js';
+import { globalOptions, modelOptions } from '../global-options.js';
 import { readConstant, readName } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
@@ -13,7 +13,7 @@ const WITNESSED: readonly ConstantId[] = ['ge', 'mlsi', 'clsi', 'lsi'];
 export function planWitness(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
-    model: z.string(),
+    ...modelOptions(),
     constant: textOption((text) => readConstant('constant', text)),
     at: z.string().nullable().default(null),
     mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),
