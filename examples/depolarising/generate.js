@@ -7,7 +7,7 @@ export default ({ n, rate }) => ({
 });
 
 /** Every constant is a rate, so it is γ times its value at γ = 1. */
-export const claims = ({ n, rate }) => [
+export const claims = ({ n, rate }, kit) => [
   { constant: 'gap', relation: 'equals', value: rate, source: 'E − id is −1 on the traceless matrices' },
   {
     constant: 'cge',
@@ -26,5 +26,12 @@ export const claims = ({ n, rate }) => [
     relation: 'equals',
     value: rate * (1 / 2 + 1 / (n + 1)),
     source: 'NOTES.md, from A*A ≤ n E(A*A) with equality for A of rank one',
+  },
+  {
+    constant: 'lsi',
+    relation: 'equals',
+    value: rate * (n === 2 ? 1 : (2 * (1 - 2 / n)) / kit.log(n - 1)),
+    source:
+      'Diaconis & Saloff-Coste, Ann. Appl. Probab. 6 (1996) for the complete graph; Müller-Hermes, Stilck França & Wolf, J. Math. Phys. 57 (2016)',
   },
 ];

@@ -7,6 +7,10 @@ import { plainEnvironment } from '../../apps/cli/test/helpers/thalweg.js';
 import { ensureBundle } from '../../packages/setup/lib/build.mjs';
 import { root } from './helpers/repository.js';
 
+const SHOWN = [
+  ...['certify', 'check', 'constants', 'inspect', 'verify', 'witness'],
+  ...['draft', 'model', 'reproduce', 'seal', 'sweep'],
+];
 const COMMAND = 'npx thalweg ';
 const commands = shellLines(readFileSync(join(root, 'README.md'), 'utf8'));
 /** A copy of what a reader has: the examples. */
@@ -24,7 +28,7 @@ afterAll(() => {
 
 test('the README shows every verb that computes', () => {
   const verbs = new Set(commands.map((line) => line.slice(COMMAND.length).split(' ')[0]));
-  expect([...verbs].sort()).toEqual(['certify', 'check', 'constants', 'inspect', 'verify', 'witness']);
+  for (const verb of SHOWN) expect(verbs, verb).toContain(verb);
 });
 
 test.each(commands)('%s', async (line) => {

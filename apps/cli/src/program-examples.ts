@@ -35,9 +35,9 @@ export function addExampleVerbs(program: Command, runVerb: RunVerb): void {
     .addHelpText(
       'after',
       `
-Exit codes: 0 all as recorded and no claim refuted, 1 a model or bracket
-contradicts the record or a claim is refuted, 2 something else differs, nothing
-is recorded, or a claim is open.
+Exit codes: 0 models as recorded, brackets too or better, no claim refuted; 1 a
+model or bracket contradicts the record or a claim is refuted; 2 a bracket is
+weaker, nothing is recorded, or a claim is open.
 ${examples(['thalweg reproduce depolarising', 'thalweg reproduce depolarising --record --only gap,ge,cge'])}`,
     );
 }

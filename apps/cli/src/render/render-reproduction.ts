@@ -21,9 +21,10 @@ export function renderReproduction({ example, points, verdict }: ReproductionDoc
 }
 
 const ENDINGS: Record<ReproductionDocument['verdict'], string> = {
-  same: 'Reproduced: models and brackets are as recorded, and no claim is refuted.',
+  same: 'Reproduced: models are as recorded, brackets too or better, and no claim is refuted.',
   differs: 'Not reproduced: a model or bracket contradicts the record, or a claim is refuted.',
-  undecided: 'Undecided: nothing is contradicted, but not everything is as recorded or decided.',
+  undecided:
+    'Undecided: nothing is contradicted, but a bracket is weaker than recorded, or not recorded, or a claim is open.',
 };
 
 function pointLines({ parameters, model, recordedModel, differences, claims }: Point, layout: Layout): string[] {
@@ -50,7 +51,7 @@ function bracketLines(recorded: string | null, differences: readonly Difference[
     const { constant, mean, end, change, recorded: before, found } = difference;
     const name = constantName({ id: constant, mean });
     const text = `${name}, ${end} end: ${CHANGES[change]}: ${endText(constant, found)}, recorded ${endText(constant, before)}`;
-    return labelled(change === 'contradicts' ? 'differs' : 'changed', text, layout);
+    return labelled(LABELS[change], text, layout);
   });
 }
 
@@ -60,6 +61,14 @@ const CHANGES: Record<Difference['change'], string> = {
   looser: 'looser',
   'weaker-grade': 'a weaker grade',
   'stronger-grade': 'a stronger grade',
+};
+
+const LABELS: Record<Difference['change'], string> = {
+  contradicts: 'differs',
+  tighter: 'better',
+  looser: 'weaker',
+  'weaker-grade': 'weaker',
+  'stronger-grade': 'better',
 };
 
 function endText(constant: Difference['constant'], end: EndDocument | null): string {

@@ -84,6 +84,9 @@ function reproductionOf(
   };
 }
 
+/** What a better program may find: it confirms the record. */
+const BETTER: ReadonlySet<string> = new Set(['tighter', 'stronger-grade']);
+
 function verdictOf(points: ReproductionDocument['points']): ReproductionDocument['verdict'] {
   const contradicted = points.some(
     ({ model, recordedModel, differences, claims }) =>
@@ -94,7 +97,9 @@ function verdictOf(points: ReproductionDocument['points']): ReproductionDocument
   if (contradicted) return 'differs';
   const undecided = points.some(
     ({ recordedModel, differences, claims }) =>
-      recordedModel === null || differences.length > 0 || claims.some(({ state }) => state === 'open'),
+      recordedModel === null ||
+      differences.some(({ change }) => !BETTER.has(change)) ||
+      claims.some(({ state }) => state === 'open'),
   );
   return undecided ? 'undecided' : 'same';
 }
