@@ -18,4 +18,16 @@ export function addTransportVerbs(program: Command, runVerb: RunVerb): void {
         'thalweg distance qubit.json rho.json sigma.json --width 1e-6 -o distance.json',
       ]),
     );
+
+  addVerb(
+    program,
+    runVerb,
+    'compare',
+    'put the notions of curvature side by side: gradient estimate, EVI, geodesic convexity',
+  )
+    .addArgument(modelArgument())
+    .addOption(setOption())
+    .addOption(withDefault(new Option('--pairs <number>', 'random pairs of states'), '8'))
+    .option('-o, --output <file>', 'write the comparison here as JSON')
+    .addHelpText('after', examples(['thalweg compare qubit.json', 'thalweg compare qubit.json --pairs 20 --seed 7']));
 }

@@ -14,7 +14,7 @@ export interface MinimisedPath extends DiscretePath {
 
 /**
  * Minimise the midpoint action over the inner nodes of a path by Newton's method with block tridiagonal Hessians (the action is
- * jointly convex: Carlen & Maas 2017, §9; the discretisation of Benamou & Brenier, Numer. Math. 84 (2000)). Null when the path
+ * jointly convex: Carlen & Maas, J. Stat. Phys. 178 (2020); the discretisation of Benamou & Brenier, Numer. Math. 84 (2000)). Null when the path
  * that it starts from passes through states that are not faithful.
  */
 export function minimiseAction(

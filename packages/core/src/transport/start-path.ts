@@ -7,14 +7,15 @@ import type { Endpoints } from './transport-states.js';
 /**
  * A first path with `count` pieces: the straight one between faithful states; bent towards the faithful state `centre` otherwise,
  * with nodes
- * closer together at an end near the boundary, where a geodesic is not smooth in time.
+ * closer together at an end near the boundary, where a geodesic is not smooth in time, unless the mesh is to be even.
  */
 export function startPath(
   kernel: MetricKernel,
   { from, to, centre, onBoundary }: Endpoints,
   count: number,
+  isEven = false,
 ): DiscretePath {
-  const isGraded = ([from, to] as const).map((x) => !((kernel.at(x)?.smallest ?? 0) > GRADED_BELOW));
+  const isGraded = [from, to].map((x) => !isEven && !((kernel.at(x)?.smallest ?? 0) > GRADED_BELOW));
   const times = Float64Array.from({ length: count + 1 }, (_, k) => gradedTime(k / count, isGraded[0], isGraded[1]));
   const bend = onBoundary[0] || onBoundary[1] ? BENT_PATH : 0;
   const states = Array.from(times, (t, k) => {

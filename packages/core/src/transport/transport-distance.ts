@@ -33,7 +33,7 @@ export interface TransportDistance {
 }
 
 /**
- * W(ρ₀,ρ₁), W² = min ∫ Tr ρ̇ 𝒟_ρ⁻¹ ρ̇ dt over curves of states (Carlen & Maas 2017, §9), a length (√time): above by the polygon
+ * W(ρ₀,ρ₁), W² = min ∫ Tr ρ̇ 𝒟_ρ⁻¹ ρ̇ dt over curves of states (Carlen & Maas 2017), a length (√time): above by the polygon
  * through a path of least action, below by a path of potentials; both certified in floating point, refined by halving the step
  * until they agree to `relativeWidth`. Errors as `endpointsOf`.
  */

@@ -17,7 +17,7 @@ function expectEnclosed(actual: ReturnType<typeof distance>, expected: number, w
 }
 
 describe('the transport distance of two points', () => {
-  // Maas, J. Funct. Anal. 261 (2011), §2. With rate p each way |v|² = p/2, ‖f‖²_ρ = pΛ(ρ₁,ρ₂)(f₂ − f₁)² and, for ρ = (1 ± r)/2,
+  // Maas, J. Funct. Anal. 261 (2011). With rate p each way |v|² = p/2, ‖f‖²_ρ = pΛ(ρ₁,ρ₂)(f₂ − f₁)² and, for ρ = (1 ± r)/2,
   // Λ = r/(2 artanh r): the action is ṙ² artanh r/(2pr), so W = (2p)^{−1/2} ∫ √(artanh r/r) dr.
   it.each([
     [1, -0.8, 0.6],
