@@ -8,8 +8,8 @@ const source = (path: string) => `${root}${path}`;
 export default defineConfig({
   resolve: {
     alias: [
-      { find: /^@thalweg\/(core|format|sandbox)$/, replacement: source('packages/$1/src/index.ts') },
-      { find: /^@thalweg\/(core|format|sandbox)\/(\w+)$/, replacement: source('packages/$1/src/$2/index.ts') },
+      { find: /^@thalweg\/(core|format)$/, replacement: source('packages/$1/src/index.ts') },
+      { find: /^@thalweg\/(core|format)\/(\w+)$/, replacement: source('packages/$1/src/$2/index.ts') },
     ],
   },
   test: {

@@ -47,6 +47,7 @@ export { fixedPoints, type FixedPoints } from './structure/fixed-points.js';
 export { canonicalForm, type CanonicalForm, type CanonicalJump } from './structure/canonical-form.js';
 export * from './families/index.js';
 export * from './constants/index.js';
+export { provedWitness } from './witness/enclose-witness.js';
 export { verifyWitness, type WitnessCheck } from './witness/verify-witness.js';
 export * from './lift/index.js';
 export * from './programme/index.js';

@@ -34,13 +34,14 @@ function claimLines(claims: readonly ClaimVerdict[], layout: Layout): string[] {
 
 /** What a witness was found to show. */
 function witnessLines({ claims, checks = [] }: VerdictDocument, layout: Layout): string[] {
-  return claims.map(({ constant: id, mean, value, verdict, note }) => {
+  return claims.map(({ constant: id, mean, value, verdict, note, bracket }) => {
     const [check] = checks;
     const size =
       check?.value === undefined
         ? ''
         : `, off by ${shortNumber(check.value)}, error bound ${shortNumber(check.bound ?? 0)}`;
-    const found = note ?? `evaluated afresh${size}`;
+    const how = bracket.upper?.grade === 'enclosed' ? ' in interval arithmetic' : size;
+    const found = note ?? `evaluated afresh${how}`;
     const name = constantName({ id, mean });
     const line = `${verdict.padEnd(ANSWER)}${name} ≤ ${minus(value.toPrecision(10))}: ${found}`;
     return painted(line, verdict, layout);

@@ -5,6 +5,7 @@ import {
   lsiAt,
   metricOf,
   mlsiAt,
+  provedWitness,
   ThalwegError,
   verifyWitness,
   type ComplexMatrix,
@@ -33,7 +34,20 @@ export function witnessAtState({
   readonly mean: MeanName;
 }): WitnessDocument {
   const { structure, digest } = markovModel(source);
-  return encodeWitness(witnessOf(structure, readState(structure, state), constant, mean), digest, TOOL);
+  const witness = witnessOf(structure, readState(structure, state), constant, mean);
+  return encodeWitness(provedWitness(structure, witness), digest, TOOL);
+}
+
+/** The document of a witness that a search found, stating what can be proved of it. */
+export function witnessDocument({
+  source,
+  witness,
+}: {
+  readonly source: DocumentSource;
+  readonly witness: Witness;
+}): WitnessDocument {
+  const { structure, digest } = markovModel(source);
+  return encodeWitness(provedWitness(structure, witness), digest, TOOL);
 }
 
 function witnessOf(structure: Structure, rho: ComplexMatrix, constant: ConstantId, mean: MeanName): Witness {
@@ -80,7 +94,9 @@ export function checkWitness({
       { pointer: '/model', details: { document: name } },
     );
   }
-  const { holds, value, margin, error } = inDocument(name, () => verifyWitness(structure, decodeWitness(document)));
+  const { holds, value, margin, error, grade, upper } = inDocument(name, () =>
+    verifyWitness(structure, decodeWitness(document)),
+  );
   const { constant, mean } = document;
   return {
     schema: 'thalweg.verdict/1',
@@ -95,12 +111,16 @@ export function checkWitness({
         verdict: holds ? 'holds' : 'refuted',
         bracket: {
           lower: null,
-          upper: { value: value + margin, grade: 'certified', by: 'witness evaluated afresh', margin },
+          upper: { value: upper, grade, by: 'witness evaluated afresh', margin: Math.abs(upper - value) },
         },
         ...(holds ? {} : { note: `the witness gives ${value}, not ${document.value}` }),
       },
     ],
-    checks: [{ name: 'value of the witness', holds, value: error, bound: margin }],
+    checks: [
+      grade === 'enclosed'
+        ? { name: 'upper end of the enclosure', holds, value: upper, bound: document.value }
+        : { name: 'value of the witness', holds, value: error, bound: margin },
+    ],
     tool: TOOL,
   };
 }
