@@ -13,17 +13,14 @@ const common = {
   conditions: ['source'],
 };
 
-/** The script that the interpreter evaluates before a generator: its value is the function `generate`. */
+/** The module that the interpreter loads before a generator; it exports the function `generate`. */
 export async function bundleInside() {
   const { outputFiles } = await build({
     ...common,
     entryPoints: ['src/inside/index.ts'],
-    format: 'iife',
-    globalName: 'sandbox',
+    format: 'esm',
     target: 'es2023',
     minify: true,
-    keepNames: false,
-    footer: { js: 'sandbox.generate' },
   });
   return outputFiles[0].text;
 }

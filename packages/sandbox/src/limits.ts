@@ -28,8 +28,8 @@ export const DEPTH_LIMIT = 64;
 /** UTF-16 units of a message that comes from inside. */
 export const MESSAGE_LIMIT = 1_000;
 
-/** Stack of the interpreter in bytes; beyond it the host's own stack, which must never run out first. */
-export const STACK_BYTES = { node: 128 * 1024, browser: 64 * 1024 } as const;
+/** Stack of the interpreter in bytes, small enough that the host's own never runs out first; the same everywhere, since a generator can measure it. */
+export const STACK_BYTES = 64 * 1024;
 
 /** Stack of the thread that holds the interpreter, in MB. */
 export const THREAD_STACK_MEGABYTES = 16;

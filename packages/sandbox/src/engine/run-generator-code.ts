@@ -8,17 +8,15 @@ import {
 } from 'quickjs-emscripten-core';
 import imported from '@jitl/quickjs-wasmfile-release-sync';
 import type { CompleteRun } from '../generator-run.js';
-import { DEPTH_LIMIT } from '../limits.js';
+import { DEPTH_LIMIT, STACK_BYTES } from '../limits.js';
 import type { RunReply } from '../reply.js';
 import { memoryFault, readAnswer, timeFault } from './faults.js';
 
 /** What the interpreter is made of. */
 export interface Engine {
   readonly wasm: WebAssembly.Module;
-  /** Script whose value is the function `generate` of `inside`. */
+  /** Module that exports the function `generate` of `inside`. */
   readonly inside: string;
-  /** Stack of the interpreter in bytes. */
-  readonly stackBytes: number;
   /** Milliseconds on any clock that only goes forward. */
   readonly now: () => number;
 }
@@ -71,7 +69,7 @@ async function freshRuntime(engine: Engine, megabytes: number): Promise<QuickJSR
   const wasmMemory = new WebAssembly.Memory({ initial: FIRST_PAGES, maximum });
   const quickjs = await newQuickJSWASMModuleFromVariant(newVariant(variant, { wasmModule: engine.wasm, wasmMemory }));
   const runtime = quickjs.newRuntime();
-  runtime.setMaxStackSize(engine.stackBytes);
+  runtime.setMaxStackSize(STACK_BYTES);
   runtime.setModuleLoader((name) => ({
     error: new Error(`generate.js imports "${name}": a generator imports nothing, take what it needs from the kit`),
   }));
@@ -81,9 +79,9 @@ async function freshRuntime(engine: Engine, megabytes: number): Promise<QuickJSR
 /** The answer of `generate`; null when the interpreter was stopped or ran out of memory. The instance is dropped as a whole. */
 function evaluate(runtime: QuickJSRuntime, engine: Engine, run: CompleteRun): string | null {
   const context = runtime.newContext({ intrinsics: INTRINSICS });
-  const prepared = context.evalCode(engine.inside, 'kit.js', { type: 'global' });
+  const prepared = context.evalCode(engine.inside, 'kit.js', { type: 'module', strict: true });
   if (prepared.error) return null;
-  const generate = prepared.value;
+  const generate = context.getProp(prepared.value, 'generate');
   const loaded = load(context, run.source);
   const wanted = [run.want, run.parameters].map((text) => context.newString(text));
   const answer = context.callFunction(generate, context.undefined, loaded, ...wanted, context.newNumber(DEPTH_LIMIT));

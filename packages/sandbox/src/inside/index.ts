@@ -1,1 +1,2 @@
 export { generate } from './generate.js';
+export { hardened } from './harden.js';
