@@ -400,3 +400,24 @@ export const RELIEF_REFINEMENT = 1e-6;
 
 /** Coefficients of a lift below this, relative to the largest, are rounding when it is written over other jumps. */
 export const TRANSFER_DUST = 1e-12;
+
+/** Estimated errors, in units of the gap, at which the mesh of a comparison is fine enough, and its most pieces. */
+export const COMPARISON_ACCURACY = { random: 1e-3, short: 1e-5 } as const;
+export const COMPARISON_FINEST = 128;
+
+/** Times of a trajectory at which the evolution variational inequality is looked at, in units of 1/gap. */
+export const COMPARISON_TIMES = [0, 0.5, 1.5] as const;
+
+/** Standard deviation of the coordinates of log ρ for the random states of a comparison. */
+export const COMPARISON_SPREAD = 1;
+
+/** Share of the way to the boundary that a short geodesic through a witness goes on each side. */
+export const WITNESS_REACH = 0.1;
+
+/** Time of the contraction inequality in units of 1/gap; relative width of the distances in inequalities; their rounding. */
+export const CONTRACTION_TIME = 0.5;
+export const INEQUALITY_WIDTH = 1e-3;
+export const INEQUALITY_ROUNDING = 1e-12;
+
+/** Witnesses of ge within this of the lowest, relative to the larger of 1 and it, are tied for the start of a comparison. */
+export const WITNESS_TIE = 1e-9;

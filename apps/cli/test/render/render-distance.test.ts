@@ -63,6 +63,8 @@ test('a lower end that is not known is zero', () => {
 });
 
 test('ends out of order are no document', () => {
-  const [lower, upper] = [3, 2].map((value) => ({ value, grade: 'certified', by: 'x' }) as const);
-  expect(() => document({ distance: { lower, upper } })).toThrow(/expected a lower end below the upper one 2, got 3/);
+  const end = (value: number) => ({ value, grade: 'certified', by: 'x' }) as const;
+  expect(() => document({ distance: { lower: end(3), upper: end(2) } })).toThrow(
+    /expected a lower end below the upper one 2, got 3/,
+  );
 });
