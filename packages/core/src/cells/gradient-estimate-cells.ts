@@ -3,7 +3,15 @@ import { proveOverCells } from './branch-and-bound.js';
 import type { CellForms } from './cell-forms.js';
 import { type ChainRates, chainForms } from './chain-forms.js';
 import { chainRates } from './chain-rates.js';
-import { CELL_BUDGET, CELL_CHAIN_POINTS, CELL_WIDTHS } from './limits.js';
+import {
+  CELL_BUDGET,
+  CELL_CHAIN_POINTS,
+  CLOSING_SHARE,
+  CLOSING_WIDTH,
+  COARSE_WIDTHS,
+  FIRST_WIDTH,
+  NEXT_WIDTHS,
+} from './limits.js';
 import { qubitAxes } from './qubit-axes.js';
 import { tracialQubitForms } from './tracial-qubit-forms.js';
 
@@ -37,16 +45,35 @@ export interface CellTarget {
  */
 export function gradientEstimateByCells(structure: Structure, target: CellTarget): CellBound | null {
   const charts = cellCharts(structure);
-  if (!charts) return null;
+  return charts && boundOnCharts(charts, target);
+}
+
+function boundOnCharts(charts: readonly CellForms[], target: CellTarget): CellBound | null {
   let left = target.maxCells ?? CELL_BUDGET;
-  let best: CellBound | null = null;
-  for (const width of CELL_WIDTHS) {
-    const k = target.upper - width * target.scale;
-    if (!(k > target.lower)) continue;
-    const { proved, cells } = proveOnCharts(charts, k, left, target.shouldStop);
+  const attempt = (width: number, share = 1): CellBound | 'useless' | 'failed' => {
+    const value = target.upper - width * target.scale;
+    if (!(value > target.lower)) return 'useless';
+    const { proved, cells } = proveOnCharts(charts, value, Math.floor(share * left), target.shouldStop);
     left -= cells;
-    if (!proved) break;
-    best = { value: k, cells };
+    return proved ? { value, cells } : 'failed';
+  };
+  const first = attempt(FIRST_WIDTH);
+  if (first === 'failed') return bestOf(COARSE_WIDTHS, attempt);
+  const closing = attempt(CLOSING_WIDTH, CLOSING_SHARE);
+  if (typeof closing === 'object') return closing;
+  return bestOf(NEXT_WIDTHS, attempt) ?? (first === 'useless' ? null : first);
+}
+
+/** The last success among distances tried until one fails. */
+function bestOf(
+  widths: readonly number[],
+  attempt: (width: number) => CellBound | 'useless' | 'failed',
+): CellBound | null {
+  let best: CellBound | null = null;
+  for (const width of widths) {
+    const result = attempt(width);
+    if (result === 'failed') break;
+    if (result !== 'useless') best = result;
   }
   return best;
 }

@@ -1,8 +1,16 @@
-/** Distances below the best witness, in the rates at hand, at which branch and bound tries to prove `ge`, one after the other. */
-export const CELL_WIDTHS: readonly number[] = [1e-1, 1e-2, 1e-3, 1e-4, 1e-5, 1e-6, 1e-7, 5e-9];
+/** Distance below the best witness, in the rates at hand, at which a proof of `ge` is tried first. */
+export const FIRST_WIDTH = 1e-2;
 
-/** Cells of states examined at most for one lower end of `ge` on a sheet. */
-export const CELL_BUDGET = 6000;
+/** The distance that closes a bracket and stands for a value of weaker grade: tried next, with CLOSING_SHARE of the cells. */
+export const CLOSING_WIDTH = 2e-9;
+export const CLOSING_SHARE = 0.4;
+
+/** Distances tried one after the other when that fails, and when the first fails. */
+export const NEXT_WIDTHS: readonly number[] = [1e-3, 1e-4, 1e-5, 1e-6];
+export const COARSE_WIDTHS: readonly number[] = [1e-1];
+
+/** Cells of states examined at most for one lower end of `ge`. */
+export const CELL_BUDGET = 5000;
 
 /** Points of a chain up to which its states are covered by cells. */
 export const CELL_CHAIN_POINTS = 3;

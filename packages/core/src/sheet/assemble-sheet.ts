@@ -144,9 +144,15 @@ function gradientEstimateBracket(structure: Structure, found: readonly SheetFind
     if (!best || finding.result.value + finding.result.error < best.value + best.error) best = finding.result;
   }
   const rule = completeCurvatureLower(structure, found);
-  const lower = mean === 'logarithmic' ? betterLower(rule, curvatureRule(structure)) : rule;
+  const lower =
+    mean === 'logarithmic' ? betterLower(betterLower(rule, curvatureRule(structure)), cellLower(found)) : rule;
   const gap = gapBracket(found).upper?.value ?? Infinity;
   return { lower, upper: provedUpper(structure, best && gradientEstimateEnd(best, mean), gap) };
+}
+
+function cellLower(found: readonly SheetFinding[]): End | null {
+  const finding = found.find(({ kind }) => kind === 'cells');
+  return finding?.kind === 'cells' ? finding.end : null;
 }
 
 function gradientEstimateEnd(best: GradientEstimateResult, mean: MeanName): End {

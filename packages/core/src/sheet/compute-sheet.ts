@@ -1,5 +1,6 @@
 import type { Structure } from '../structure/structure.js';
 import { allRows, assembleSheet } from './assemble-sheet.js';
+import { planCells } from './cell-plan.js';
 import { type SheetRow, nameOf } from './close-brackets.js';
 import { type SheetFinding, runSheetTask } from './run-sheet-task.js';
 import { type SheetRequest, type SheetTask, planEigenproblems, planLifts, planSearches } from './sheet-plan.js';
@@ -22,8 +23,13 @@ export function proveSheet(
   const run = (task: SheetTask): SheetFinding => runSheetTask(structure, task, stop);
   const findings = planEigenproblems(structure, request).map(run);
   if (!searchClosed) findings.push(...planLifts(structure, request, allRows(structure, request, findings)).map(run));
-  const closed = searchClosed ? [] : allRows(structure, request, findings).filter((row) => row.closed);
-  return { findings, searches: planSearches(structure, request, new Set(closed.map((row) => nameOf(row.key)))) };
+  if (searchClosed) return { findings, searches: planSearches(structure, request, new Set()) };
+  const rows = allRows(structure, request, findings);
+  const closed = new Set(rows.filter((row) => row.closed).map((row) => nameOf(row.key)));
+  return {
+    findings,
+    searches: [...planSearches(structure, request, closed), ...planCells(structure, request, rows)],
+  };
 }
 
 /** Prove, search and assemble a sheet on this thread. */

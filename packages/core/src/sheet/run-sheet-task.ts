@@ -26,6 +26,7 @@ import type { FixedPoints } from '../structure/fixed-points.js';
 import type { Structure } from '../structure/structure.js';
 import { CERTIFY_LIFT_SIDE, DENSE_LIMIT, SHEET_LIFT_SIDE, SHEET_LIFT_UNKNOWNS } from '../tolerances.js';
 import type { End } from './bracket.js';
+import { cellEnd } from './cell-finding.js';
 import type { SheetTask } from './sheet-plan.js';
 
 /** What one task found; plain data. */
@@ -45,6 +46,7 @@ export type SheetFinding =
   | { readonly kind: 'comparison'; readonly end: End | null }
   | { readonly kind: 'lift'; readonly end: End | null; readonly reason: LadderResult['reason'] | 'none' }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly result: GradientEstimateResult }
+  | { readonly kind: 'cells'; readonly end: End | null }
   | { readonly kind: 'entropy'; readonly result: EntropyResult | null };
 
 /** Run one task of `planSheet`; `stop` ends a search early at the best it has. */
@@ -61,6 +63,10 @@ export function runSheetTask(structure: Structure, task: SheetTask, stop?: () =>
     case 'ge': {
       const problem = { model: metricOf(structure), mean: task.mean, covariant: task.covariant };
       return { kind: 'ge', mean: task.mean, result: runGradientEstimateStart(problem, task.start, stop) };
+    }
+    case 'cells': {
+      const problem = { model: metricOf(structure), mean: 'logarithmic', covariant: task.covariant } as const;
+      return { kind: 'cells', end: cellEnd(structure, problem, task, stop) };
     }
     case 'entropy': {
       const run = task.start.constant === 'lsi' ? runLsiStart : runMlsiStart;

@@ -10,6 +10,7 @@ import { seededRandom } from '../random.js';
 import type { Structure } from '../structure/structure.js';
 import { DENSE_LIMIT, FORM_LIMIT, SEARCH_LIMIT } from '../tolerances.js';
 import type { ConstantId } from './bracket.js';
+import type { CellTask } from './cell-finding.js';
 import { type SheetRow, nameOf } from './close-brackets.js';
 import type { RowKey } from './order-relations.js';
 import { hasGradientMetric } from './hypotheses.js';
@@ -32,6 +33,7 @@ export type SheetTask =
   | { readonly kind: 'comparison' }
   | { readonly kind: 'lift'; readonly target: number }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly covariant: boolean; readonly start: SearchStart }
+  | CellTask
   | { readonly kind: 'entropy'; readonly start: EntropyStart };
 
 /** The rows of a full sheet, in the order they are shown. */
