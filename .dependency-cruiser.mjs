@@ -12,7 +12,21 @@ export default {
       name: 'format-imports-only-core',
       severity: 'error',
       from: { path: '^packages/format/src' },
-      to: { path: ['^packages/', '^apps/', '^tests/'], pathNot: ['^packages/(core|format)/src'] },
+      to: { path: ['^packages/', '^apps/', '^tests/'], pathNot: ['^packages/(core|format)/src', '/node_modules/'] },
+    },
+    {
+      name: 'pictures-import-only-core',
+      severity: 'error',
+      comment: 'Data to SVG text, in Node.js and in a browser alike.',
+      from: { path: '^packages/pictures/src' },
+      to: { path: ['^packages/', '^apps/', '^tests/'], pathNot: ['^packages/(core|pictures)/src'] },
+    },
+    {
+      name: 'sandbox-imports-only-core',
+      severity: 'error',
+      comment: 'Nothing of the program is near an untrusted generator.',
+      from: { path: '^packages/sandbox/src' },
+      to: { path: ['^packages/', '^apps/', '^tests/'], pathNot: ['^packages/(core|sandbox)/src'] },
     },
     {
       name: 'apps-never-import-each-other',
@@ -30,9 +44,9 @@ export default {
       name: 'other-packages-through-their-index',
       severity: 'error',
       comment:
-        'What a package offers is what its manifest exports: src/index.ts, and src/node/index.ts for Node.js only.',
+        'What a package offers is what its manifest exports: src/index.ts, and src/node or src/browser/index.ts for one of them only.',
       from: { path: '^(packages|apps)/([^/]+)/' },
-      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/(node/)?index\\.ts$', '^$1/$2/'] },
+      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/((node|browser)/)?index\\.ts$', '^$1/$2/'] },
     },
     {
       name: 'no-cycles',

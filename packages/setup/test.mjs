@@ -6,6 +6,7 @@ import { runChecks } from './lib/checks.mjs';
 import { ensureInstalled } from './lib/install.mjs';
 import { main } from './lib/main.mjs';
 import { root } from './lib/paths.mjs';
+import { ensurePostgres } from './lib/postgres.mjs';
 import { ensurePython } from './lib/python.mjs';
 import { run } from './lib/run.mjs';
 import { countTests } from './lib/test-count.mjs';
@@ -13,6 +14,7 @@ import { countTests } from './lib/test-count.mjs';
 /** Sets up, checks and tests everything; with arguments, hands them to vitest and leaves the static checks out. */
 await main(async (args) => {
   await ensurePython();
+  if (process.env.DATABASE_URL === undefined) await ensurePostgres();
   await ensureInstalled();
   await ensureBundle();
   const failedChecks = args.length === 0 ? await runAllChecks() : [];

@@ -8,7 +8,7 @@ export { EXAMPLE_FILES, SHOWCASE_FILE, readExample, type ExamplePackage } from '
 export { type ExampleDocument } from './example/example-schema.js';
 export { isLicence } from './example/licence.js';
 export { isOrcid } from './example/orcid.js';
-export { isVersion } from './example/version.js';
+export { isVersion, versionParts } from './example/version.js';
 export {
   completePoint,
   readParameterValue,
@@ -59,6 +59,7 @@ export { distanceSchema, type DistanceDocument } from './schema/distance-schema.
 export { flowSchema, type FlowDocument } from './schema/flow-schema.js';
 export { matrixSchema } from './schema/matrix-schema.js';
 export { modelSchema } from './schema/model-schema.js';
+export { reliefSchema, type ReliefDocument } from './schema/relief-schema.js';
 export { reportSchema, type ReportDocument } from './schema/report-schema.js';
 export { sheetSchema, type ConstantDocument, type SheetDocument } from './schema/sheet-schema.js';
 export { stateSchema, type StateDocument } from './schema/state-schema.js';

@@ -15,6 +15,7 @@ const BUNDLES = [
     output: 'packages/sandbox/dist/bundle/sandbox-process.js',
   },
   { what: 'The command line', script: 'apps/cli/build.mjs', output: 'apps/cli/dist/thalweg.js' },
+  { what: 'The registry', script: 'apps/registry/build.mjs', output: 'apps/registry/dist/registry.js' },
 ];
 
 /** Builds every bundle when the sources changed since the last build. Throws with the bundler's messages on failure. */

@@ -3,11 +3,16 @@ import { existsSync, readFileSync, readdirSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { root } from './paths.mjs';
 
-/** Digest of everything that the command-line bundle is made of; equal digests mean that nothing needs building. */
+const BUILD_SCRIPTS = ['apps/cli/build.mjs', 'apps/registry/build.mjs', 'packages/sandbox/build.mjs'];
+
+/** Digest of everything that the bundles are made of; equal digests mean that nothing needs building. */
 export function sourceDigest(folder = root) {
   const packages = readdirSync(join(folder, 'packages')).map((name) => `packages/${name}`);
-  const parts = [...packages.sort(), 'apps/cli'].flatMap((path) => [`${path}/package.json`, `${path}/src`]);
-  const sources = ['package-lock.json', 'apps/cli/build.mjs', 'packages/sandbox/build.mjs', ...parts].filter((path) =>
+  const parts = [...packages.sort(), 'apps/cli', 'apps/registry'].flatMap((path) => [
+    `${path}/package.json`,
+    `${path}/src`,
+  ]);
+  const sources = ['package-lock.json', ...BUILD_SCRIPTS, 'migrations', ...parts].filter((path) =>
     existsSync(join(folder, path)),
   );
   const hash = createHash('sha256');
