@@ -65,8 +65,8 @@ describe('constants', () => {
     expect(stdout).toMatch(
       /^ {2}Qubit in contact with a thermal bath, inverse temperature 1\n {2}blocks \[2\] · dimension 4 · GNS/,
     );
-    expect(stdout).toMatch(/^ {2}gap +0\.500000000 {2}certified +0\.500000000 {2}certified +closed$/m);
-    expect(stdout).toMatch(/^ {2}lsi +— +0\.4898\d\d +observed$/m);
+    expect(stdout).toMatch(/^ {2}gap +0\.500000000 {2}enclosed +0\.500000000 {2}enclosed +closed$/m);
+    expect(stdout).toMatch(/^ {2}lsi +— +0\.4898\d\d +enclosed$/m);
     expect(stdout).not.toContain('\u001b');
     for (const line of stdout.split('\n')) expect(line.length, line).toBeLessThanOrEqual(80);
   });
