@@ -8,7 +8,10 @@ async function run(args: readonly string[], options: FakeTerminalOptions = {}) {
   return { status, out: terminal.out(), err: terminal.err() };
 }
 
-const VERBS = ['inspect', 'constants', 'check', 'witness', 'certify', 'verify', 'completion'];
+const VERBS = [
+  ...['inspect', 'constants', 'check', 'witness', 'certify', 'verify', 'completion'],
+  ...['draft', 'model', 'sweep', 'seal', 'reproduce'],
+];
 
 test('help of the command', async () => {
   const { status, out, err } = await run(['--help']);

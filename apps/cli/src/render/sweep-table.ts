@@ -109,13 +109,13 @@ function tableLines(columns: readonly Column[], { colours }: Layout): string[] {
 }
 
 function notes({ sweep, points, convention, along }: SweepResult, layout: Layout): string[] {
-  const rows = points.flatMap(({ sheet }) => sheet?.constants ?? []);
+  const rows = points.flatMap((point) => sweep.constants.map((constant) => rowOf(point, constant)));
   const failed = points.filter(({ error }) => error !== undefined);
   const texts = [
     ...(sweep.constants.some(({ id }) => ENTROPY.has(id))
       ? [`convention ${convention}: ${conventionOf(convention).summary}`]
       : []),
-    ...(rows.some(({ upper }) => upper?.grade === 'observed')
+    ...(rows.some((row) => row?.upper?.grade === 'observed')
       ? [`${OBSERVED} observed: the lowest value a search met, an upper end only.`]
       : []),
     ...(along === null

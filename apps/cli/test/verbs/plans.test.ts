@@ -2,8 +2,13 @@ import { expect, test } from 'vitest';
 import { planCheck } from '../../src/verbs/check/plan.js';
 import { planCompletion } from '../../src/verbs/completion/plan.js';
 import { planConstants } from '../../src/verbs/constants/plan.js';
+import { planDraft } from '../../src/verbs/draft/plan.js';
 import { planInspect } from '../../src/verbs/inspect/plan.js';
 import { planCertify } from '../../src/verbs/certify/plan.js';
+import { planModel } from '../../src/verbs/model/plan.js';
+import { planReproduce } from '../../src/verbs/reproduce/plan.js';
+import { planSeal } from '../../src/verbs/seal/plan.js';
+import { planSweep } from '../../src/verbs/sweep/plan.js';
 import { planVerify } from '../../src/verbs/verify/plan.js';
 import { planWitness } from '../../src/verbs/witness/plan.js';
 
@@ -19,14 +24,20 @@ const defaults = {
 };
 
 test('a plan is fully defaulted', () => {
-  expect(planInspect({ model: 'm.json' }, machine)).toEqual({ ...defaults, model: 'm.json' });
+  expect(planInspect({ model: 'm.json' }, machine)).toEqual({ ...defaults, model: 'm.json', set: [], svg: null });
   expect(planConstants({ model: 'm.json' }, machine)).toEqual({
     ...defaults,
     model: 'm.json',
+    set: [],
     only: null,
     mean: 'logarithmic',
   });
-  expect(planVerify({ evidence: 'w.json' }, machine)).toEqual({ ...defaults, evidence: 'w.json', model: null });
+  expect(planVerify({ evidence: 'w.json' }, machine)).toEqual({
+    ...defaults,
+    evidence: 'w.json',
+    set: [],
+    model: null,
+  });
 });
 
 test('global options are read', () => {
@@ -42,6 +53,8 @@ test('global options are read', () => {
   expect(planInspect(raw, machine)).toEqual({
     ...defaults,
     model: '-',
+    set: [],
+    svg: null,
     json: true,
     color: false,
     seed: 7,
@@ -91,4 +104,50 @@ test('certify takes the constants that a lift bounds', () => {
 test('completion knows three shells', () => {
   expect(planCompletion({ shell: 'zsh' })).toEqual({ shell: 'zsh' });
   expect(() => planCompletion({ shell: 'tcsh' })).toThrow('shell: expected one of bash, zsh, fish, got "tcsh"');
+});
+
+test('an example may be given values for its parameters', () => {
+  const plan = planModel({ example: 'ex', set: ['n=3', ' g = 0.5 '] }, machine);
+  expect(plan).toEqual({
+    ...defaults,
+    example: 'ex',
+    set: [
+      { name: 'n', text: '3' },
+      { name: 'g', text: '0.5' },
+    ],
+    output: null,
+  });
+  expect(() => planModel({ example: 'ex', set: ['n'] }, machine)).toThrow(
+    '--set: expected a parameter and its value such as n=3, got "n"',
+  );
+});
+
+test('a sweep needs ranges, and one way to print', () => {
+  expect(planSweep({ example: 'ex', over: ['n=2:6'] }, machine)).toMatchObject({
+    over: [{ name: 'n', text: '2:6' }],
+    only: [{ id: 'gap', mean: null }],
+    differences: null,
+    csv: false,
+  });
+  const refused: [Record<string, unknown>, string][] = [
+    [{}, 'expected ranges of parameters, got none'],
+    [{ over: ['n=2'], csv: true, json: true }, 'expected one of --csv and --json, got both'],
+    [{ over: ['n=2'], differences: 'm' }, '--differences: expected a parameter of --over, got "m"'],
+    [{ over: ['n=2'], differences: 'n', json: true }, 'expected no --differences beside --json'],
+  ];
+  for (const [raw, says] of refused) expect(() => planSweep({ example: 'ex', ...raw }, machine)).toThrow(says);
+});
+
+test('what reproduce compares, the record decides', () => {
+  expect(planReproduce({ example: 'ex' }, machine)).toMatchObject({ record: false, only: null });
+  expect(() => planReproduce({ example: 'ex', only: 'gap' }, machine)).toThrow('--only: expected --record beside it');
+});
+
+test('an archive goes into the current folder unless told otherwise', () => {
+  expect(planSeal({ example: 'ex' }, machine).output).toBe('.');
+  expect(planDraft({ folder: 'd', licence: 'MIT' }, machine)).toMatchObject({
+    folder: 'd',
+    licence: 'MIT',
+    title: null,
+  });
 });
