@@ -15,6 +15,7 @@ import {
   withWords,
   type RunVerb,
 } from './program-parts.js';
+import { addPictureVerbs, svgOption } from './program-pictures.js';
 import { addTransportVerbs } from './program-transport.js';
 import { VERSION } from './version.js';
 
@@ -47,6 +48,7 @@ export function createProgram(runVerb: RunVerb): Command {
   addVerb(program, runVerb, 'inspect', 'tell what a model is: symmetry, state, fixed points, canonical form, spectrum')
     .addArgument(modelArgument())
     .addOption(setOption())
+    .addOption(svgOption('the spectrum'))
     .addHelpText('after', examples(['thalweg inspect qubit.json', 'thalweg inspect --json - < qubit.json']));
 
   addVerb(program, runVerb, 'constants', 'print the sheet: every constant with its lower and upper bound')
@@ -54,6 +56,7 @@ export function createProgram(runVerb: RunVerb): Command {
     .addOption(setOption())
     .addOption(onlyOption('only these, separated by commas'))
     .addOption(meanOption())
+    .addOption(svgOption('the brackets'))
     .addHelpText('after', examples(['thalweg constants qubit.json', 'thalweg constants qubit.json --only gap,ge,cge']));
 
   addVerb(
@@ -112,29 +115,6 @@ function addEvidenceVerbs(program: Command, runVerb: RunVerb): void {
     .option('--model <model>', 'the model it speaks about (JSON file), or an example')
     .addOption(setOption())
     .addHelpText('after', examples(['thalweg verify w.json --model qubit.json']));
-}
-
-/** What shows a model over its states: along the flow. */
-function addPictureVerbs(program: Command, runVerb: RunVerb): void {
-  addVerb(program, runVerb, 'flow', 'follow a state: relative entropy against what the proved constants promise')
-    .addArgument(modelArgument())
-    .addOption(setOption())
-    .option('--from <state>', 'the state at time 0 (JSON, .npy or .mtx file, - for standard input)')
-    .addOption(withDefault(new Option('--until <time>', 'last time'), 'where entropies have fallen by about 10^4'))
-    .addOption(withDefault(new Option('--points <number>', 'times, evenly spaced from 0'), '101'))
-    .option('--csv', 'print comma-separated values')
-    .addOption(svgOption('the descent'))
-    .addHelpText(
-      'after',
-      examples([
-        'thalweg flow qubit.json --from rho.json',
-        'thalweg flow qubit.json --from rho.json --until 5 --csv --svg descent.svg',
-      ]),
-    );
-}
-
-function svgOption(what: string): Option {
-  return new Option('--svg <file>', `also write a picture of ${what} here`);
 }
 
 function globalOptions(): Option[] {

@@ -53,5 +53,6 @@ export * from './lift/index.js';
 export * from './programme/index.js';
 export * from './checker/index.js';
 export * from './certificate/index.js';
-export * from './flow/index.js';
 export * from './transport/index.js';
+export * from './flow/index.js';
+export * from './relief/index.js';

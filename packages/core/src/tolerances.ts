@@ -421,3 +421,6 @@ export const INEQUALITY_ROUNDING = 1e-12;
 
 /** Witnesses of ge within this of the lowest, relative to the larger of 1 and it, are tied for the start of a comparison. */
 export const WITNESS_TIE = 1e-9;
+
+/** Values of κ within this, relative, are the same where the lowest is sought. */
+export const RELIEF_ROUNDING = 1e-12;

@@ -3,6 +3,7 @@ import { comparedPair, comparisonDocument, pairsToCompare } from './tasks/compar
 import { distanceDocument } from './tasks/distance-task.js';
 import { flowDocument } from './tasks/flow-task.js';
 import { pointSheet } from './tasks/point-task.js';
+import { reliefDocument, reliefRings, reliefSlice } from './tasks/relief-tasks.js';
 import { reportDocument } from './tasks/report-task.js';
 import { sheetDocument, sheetProofs, sheetSearch } from './tasks/sheet-tasks.js';
 import { checkWitness, witnessAtState, witnessDocument } from './tasks/witness-tasks.js';
@@ -23,5 +24,8 @@ export const TASKS = {
   'compare-document': comparisonDocument,
   distance: distanceDocument,
   flow: flowDocument,
+  'relief-slice': reliefSlice,
+  'relief-rings': reliefRings,
+  'relief-document': reliefDocument,
   'certificate-check': checkCertificateDocument,
 };

@@ -11,6 +11,9 @@ const SYMMETRY_WORDS: Record<ModelSummary['symmetry'], string> = {
   none: 'not symmetric',
 };
 
+/** The name of a model that has none. */
+export const UNTITLED = 'Untitled model';
+
 const BLOCKS_SHOWN = 4;
 
 /** The head of a result: title, then blocks, dimension, symmetry and whether it is primitive. */
@@ -19,7 +22,7 @@ export function modelHead(model: ModelSummary, layout: Layout, { structure = tru
   const pieces = [`blocks ${blockList(blocks)}`, `dimension ${dimension}`];
   if (structure) pieces.push(SYMMETRY_WORDS[symmetry], primitive === true ? 'primitive' : 'not primitive');
   return [
-    ...wrap(title ?? 'Untitled model', proseWidth(layout), 2).map((line) => layout.colours.bold(line)),
+    ...wrap(title ?? UNTITLED, proseWidth(layout), 2).map((line) => layout.colours.bold(line)),
     ...wrapPieces(pieces, ' · ', proseWidth(layout), 2),
   ];
 }

@@ -24,6 +24,11 @@ export function globalOptions(machine: Machine) {
   };
 }
 
+/** A file to write; null where not given. */
+export function fileOption() {
+  return z.string().nullable().default(null);
+}
+
 /** The options of every verb that takes a model, or an example with values for its parameters. */
 export function modelOptions() {
   return {

@@ -10,6 +10,7 @@ const VERBS = {
   verify: async () => (await import('./verify/verify-verb.js')).verb as Verb<unknown>,
   compare: async () => (await import('./compare/compare-verb.js')).verb as Verb<unknown>,
   distance: async () => (await import('./distance/distance-verb.js')).verb as Verb<unknown>,
+  relief: async () => (await import('./relief/relief-verb.js')).verb as Verb<unknown>,
   flow: async () => (await import('./flow/flow-verb.js')).verb as Verb<unknown>,
   draft: async () => (await import('./draft/draft-verb.js')).verb as Verb<unknown>,
   model: async () => (await import('./model/model-verb.js')).verb as Verb<unknown>,

@@ -18,6 +18,7 @@ import { distanceSchema, type DistanceDocument } from './distance-schema.js';
 import { flowSchema, type FlowDocument } from './flow-schema.js';
 import { matrixSchema } from './matrix-schema.js';
 import { modelSchema } from './model-schema.js';
+import { reliefSchema, type ReliefDocument } from './relief-schema.js';
 import { reportSchema, type ReportDocument } from './report-schema.js';
 import { sheetSchema, type SheetDocument } from './sheet-schema.js';
 import { stateSchema, type StateDocument } from './state-schema.js';
@@ -38,6 +39,7 @@ export type AnyDocument =
   | ComparisonDocument
   | DistanceDocument
   | FlowDocument
+  | ReliefDocument
   | StateDocument
   | ExampleDocument
   | ShowcaseDocument
@@ -55,6 +57,7 @@ const SCHEMAS: Record<AnyDocument['schema'], z.ZodType<AnyDocument>> = {
   'thalweg.comparison/1': comparisonSchema,
   'thalweg.distance/1': distanceSchema,
   'thalweg.flow/1': flowSchema,
+  'thalweg.relief/1': reliefSchema,
   'thalweg.state/1': stateSchema,
   'thalweg.example/1': exampleSchema,
   'thalweg.showcase/1': showcaseSchema,

@@ -1,5 +1,8 @@
+import type { SheetDocument } from '@thalweg/format';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readModel } from '../../input/read-model.js';
+import { requireTarget } from '../../output/require-target.js';
+import { writePicture } from '../../output/write-picture.js';
 import { renderSheet } from '../../render/render-sheet.js';
 import type { Session } from '../../session.js';
 import { computeSheet, unfinishedNote } from '../../sheet/compute-sheet.js';
@@ -8,6 +11,7 @@ import type { ConstantsPlan } from './plan.js';
 
 /** Computes the sheet of a model and prints it. */
 export async function constantsEffect(plan: ConstantsPlan, session: Session): Promise<ExitStatus> {
+  if (plan.svg !== null) await requireTarget(plan.svg);
   const source = await readModel(plan, session);
   const { seed, convention, threads, timeLimit } = plan;
   const job = { source, rows: rowKeys(plan), seed, convention, limits: { threads, timeLimit } };
@@ -15,6 +19,13 @@ export async function constantsEffect(plan: ConstantsPlan, session: Session): Pr
   const { output } = session;
   if (output.json) output.document(sheet);
   else output.result(renderSheet(sheet, output));
+  if (plan.svg !== null) await writePicture(plan.svg, await pictureOf(sheet), output);
   if (unfinished !== null) output.note(unfinishedNote(unfinished, 'observed ends may be lower with more time'));
   return EXIT_STATUS.yes;
+}
+
+/** Pictures are loaded where they are asked for. */
+async function pictureOf(sheet: SheetDocument): Promise<string> {
+  const { sheetPicture } = await import('../../render/sheet-picture.js');
+  return sheetPicture(sheet);
 }

@@ -1,13 +1,13 @@
 import { MEAN_NAMES } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions, modelOptions } from '../global-options.js';
+import { fileOption, globalOptions, modelOptions } from '../global-options.js';
 import { readConstantList, readName } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
 
 export type ConstantsPlan = ReturnType<typeof planConstants>;
 
-/** `constants M [--only gap,ge:left] [--mean left]`. `only` is null for the whole sheet. */
+/** `constants M [--only gap,ge:left] [--mean left] [--svg FILE]`. `only` is null for the whole sheet, `svg` where not given. */
 export function planConstants(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
@@ -16,6 +16,7 @@ export function planConstants(raw: RawOptions, machine: Machine) {
       .nullable()
       .default(null),
     mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),
+    svg: fileOption(),
   });
   return parseOptions(schema, raw);
 }

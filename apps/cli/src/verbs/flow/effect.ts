@@ -5,6 +5,7 @@ import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readModel } from '../../input/read-model.js';
 import { readSource } from '../../input/read-source.js';
 import { requireTarget } from '../../output/require-target.js';
+import { writePicture } from '../../output/write-picture.js';
 import { flowCsv } from '../../render/flow-csv.js';
 import { renderFlow } from '../../render/render-flow.js';
 import type { Session } from '../../session.js';
@@ -20,6 +21,7 @@ export async function flowEffect(plan: FlowPlan, session: Session): Promise<Exit
   if (output.json) output.document(flow);
   else if (plan.csv) output.result(flowCsv(flow));
   else output.result(renderFlow(flow, output, { whole: plan.points !== null }));
+  if (plan.svg !== null) await writePicture(plan.svg, await pictureOf(flow), output);
   return EXIT_STATUS.yes;
 }
 
@@ -43,4 +45,10 @@ async function computeFlow(plan: FlowPlan, session: Session): Promise<FlowDocume
     const points = plan.points ?? USUAL_POINTS;
     return only(await pool.run('flow', [{ source, from, until: plan.until, points, request, findings }]));
   });
+}
+
+/** Pictures are loaded where they are asked for. */
+async function pictureOf(flow: FlowDocument): Promise<string> {
+  const { flowPicture } = await import('../../render/flow-picture.js');
+  return flowPicture(flow);
 }

@@ -1,6 +1,6 @@
 import { ThalwegError } from '@thalweg/core';
 import * as z from 'zod';
-import { globalOptions, modelOptions } from '../global-options.js';
+import { fileOption, globalOptions, modelOptions } from '../global-options.js';
 import { readPositive, readWholeNumber } from '../option-values.js';
 import { parseOptions, textOption } from '../parse-options.js';
 import type { Machine, RawOptions } from '../verb.js';
@@ -22,7 +22,7 @@ export function planFlow(raw: RawOptions, machine: Machine) {
       .nullable()
       .default(null),
     csv: z.boolean().default(false),
-    svg: z.string().nullable().default(null),
+    svg: fileOption(),
   });
   const plan = parseOptions(schema, raw);
   if (plan.csv && plan.json) {
