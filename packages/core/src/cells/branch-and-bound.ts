@@ -40,7 +40,9 @@ function cutOf(forms: CellForms, cell: Cell, k: number): number | 'none' | 'neve
   if (!factor) return exact || isFarthest(cell) ? 'never' : largest(cell.map(extent));
   const { entries, influence, spread } = meanValueMatrix(jets, forms.side, factor, displacements(cell));
   if (isPositiveDefinite(entries, forms.side)) return 'none';
-  return isFarthest(cell) ? 'never' : largest(cell.map((range, l) => (isBounded(range) ? influence[l] : spread)));
+  return isFarthest(cell)
+    ? 'never'
+    : largest(cell.map((range, l) => (isBounded(range) ? influence[l] : spread / (1 + range.lo))));
 }
 
 function isFarthest(cell: Cell): boolean {

@@ -1,5 +1,5 @@
-import { log } from '../checker/arithmetic/interval-log.js';
-import { type Interval, ONE, ZERO, add, div, mul, neg, point, sub } from '../checker/arithmetic/interval.js';
+import { type Interval, ONE, ZERO, add, mul, neg, point, sub } from '../checker/arithmetic/interval.js';
+import { type ChainEdge, chainEdges } from './chain-edges.js';
 import { type Cell, coordinateJets, isBounded } from './cell.js';
 import type { CellForms, FormsOnCell } from './cell-forms.js';
 import {
@@ -14,12 +14,13 @@ import {
   scaleJet,
   subJet,
 } from './jet.js';
+import { isPathCorner, pathCorner } from './path-corner.js';
 
 /** Rates x→y of a chain in the order of a chart, row x, column y, each enclosed; the diagonal is not read. */
 export type ChainRates = readonly (readonly Interval[])[];
 
 /**
- * The form over the measures with ρ_1 ≥ … ≥ ρ_n, log(ρ_i/ρ_{i+1}) = y_i ∈ [0,∞], in the differences a_{i+1} − a_i. With
+ * The form over the measures with ρ_1 ≥ … ≥ ρ_n, log(ρ_i/ρ_{i+1}) = y_i ∈ [0,∞] in the coordinates of `chainEdges`. With
  * s = r_xyρ_x, t = r_yxρ_y, the metric is Σ Λ(s,t)(a_y − a_x)² over pairs x < y (Maas 2011), and Λ = sΛ₁ + tΛ₂, so that
  *     q − K‖·‖² = Σ ½(r_xyΛ₁ in_x + r_yxΛ₂ in_y) dd* + sΛ₁(B − ½out_x dd*) + tΛ₂(B − ½out_y dd*),
  * d a = a_y − a_x, B = −½(d (dL)* + (dL)d*) − K dd*, in_x = Σ_v r_vxρ_v, out_x = Σ_v r_xv. The first coefficient is positive,
@@ -29,53 +30,21 @@ export function chainForms(rates: ChainRates): CellForms {
   const n = rates.length;
   const side = n - 1;
   const out = rates.map((row, x) => row.reduce((sum, r, y) => (y === x ? sum : add(sum, r)), ZERO));
-  const edges = edgesOf(rates);
+  const edges = chainEdges(rates);
   return {
     side,
     root: new Array<Interval>(side).fill({ lo: 0, hi: Infinity }),
-    at: (cell, k) => evaluate(rates, out, edges, cell, k),
+    at: (cell, k) => {
+      const forms = evaluate(rates, out, edges, cell, k);
+      return isPathCorner(rates, cell) ? { ...forms, below: pathCorner(rates, cell, k) } : forms;
+    },
   };
-}
-
-interface Edge {
-  readonly x: number;
-  readonly y: number;
-  /** log(r_xy/r_yx). */
-  readonly bias: Interval;
-  /** dL in the differences. */
-  readonly flow: readonly Interval[];
-}
-
-function edgesOf(rates: ChainRates): Edge[] {
-  const n = rates.length;
-  const rows = rates.map((row, x) => generatorRow(row, x));
-  const edges: Edge[] = [];
-  for (let x = 0; x < n; x++) {
-    for (let y = x + 1; y < n; y++) {
-      if (rates[x][y].hi === 0 && rates[y][x].hi === 0) continue;
-      const flow = rows[y].map((value, k) => sub(value, rows[x][k]));
-      edges.push({ x, y, bias: log(div(rates[x][y], rates[y][x])), flow });
-    }
-  }
-  return edges;
-}
-
-/** (La)_x = Σ_v r_xv(a_v − a_x) in the differences. */
-function generatorRow(row: readonly Interval[], x: number): Interval[] {
-  return Array.from({ length: row.length - 1 }, (_, k) => {
-    let sum = ZERO;
-    row.forEach((r, v) => {
-      if (x <= k && k < v) sum = add(sum, r);
-      if (v <= k && k < x) sum = sub(sum, r);
-    });
-    return sum;
-  });
 }
 
 function evaluate(
   rates: ChainRates,
   out: readonly Interval[],
-  edges: readonly Edge[],
+  edges: readonly ChainEdge[],
   cell: Cell,
   k: number,
 ): FormsOnCell {
@@ -103,10 +72,9 @@ function evaluate(
     exact &&= lowered.exact;
     for (let i = 0; i < side; i++) {
       for (let j = i; j < side; j++) {
-        const [di, dj] = [inside(edge, i), inside(edge, j)];
-        if (!di && !dj) continue;
-        const dd = di && dj ? ONE : ZERO;
-        const cross = add(di ? edge.flow[j] : ZERO, dj ? edge.flow[i] : ZERO);
+        const [di, dj] = [point(edge.difference[i]), point(edge.difference[j])];
+        const dd = mul(di, dj);
+        const cross = add(mul(di, edge.flow[j]), mul(dj, edge.flow[i]));
         const b = sub(neg(mul(half, cross)), mul(point(k), dd));
         const withFirst = sub(b, mul(half, mul(out[edge.x], dd)));
         const withSecond = sub(b, mul(half, mul(out[edge.y], dd)));
@@ -114,10 +82,8 @@ function evaluate(
         const at = i * side + j;
         below[at] = add(below[at], rest.range);
         jets[at] = addJet(jets[at], rest);
-        if (di && dj) {
-          below[at] = add(below[at], mul(half, point(growth.range.lo)));
-          jets[at] = addJet(jets[at], scaleJet(lowered.jet, half));
-        }
+        below[at] = add(below[at], mul(half, mul(dd, point(growth.range.lo))));
+        jets[at] = addJet(jets[at], scaleJet(lowered.jet, mul(half, dd)));
       }
     }
   }
@@ -126,7 +92,7 @@ function evaluate(
 
 /** r_xyΛ₁ in_x + r_yxΛ₂ in_y, sΛ₁ and tΛ₂ of one edge. */
 function coefficients(
-  { x, y, bias }: Edge,
+  { x, y, bias }: ChainEdge,
   rates: ChainRates,
   rho: readonly Jet[],
   steps: readonly Jet[],
@@ -143,8 +109,4 @@ function coefficients(
     scaleJet(mulJet(expDifferenceJet(2, 1, u), inflow[y]), rates[y][x]),
   );
   return { growth, first: mulJet(s, alpha), second: mulJet(s, expDifferenceJet(1, 2, minus)) };
-}
-
-function inside({ x, y }: Edge, k: number): boolean {
-  return x <= k && k < y;
 }

@@ -13,6 +13,9 @@ import {
 import type { Generator } from '../../src/generator/generator.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
 import { minimiseScalar } from '../../src/search/brent.js';
+import { seededRandom } from '../../src/random.js';
+import { runSheetTask } from '../../src/sheet/run-sheet-task.js';
+import { planSearches } from '../../src/sheet/sheet-plan.js';
 import { analyse } from '../../src/structure/structure.js';
 import { expectWithin } from '../helpers/bracket-of.js';
 
@@ -47,7 +50,7 @@ function boundOf(g: Generator, upper: number): CellBound {
 }
 
 describe('two points', () => {
-  const rates = [0.01, 0.1, 0.35, 1, 2.2, 7, 40, 1000];
+  const rates = [0.01, 0.35, 1, 7, 1000];
   const pairs = rates.flatMap((p, k) => rates.slice(k).map((q) => [p, q] as const));
 
   it.each(pairs)('rates %f and %f: proved 1e-6 below the closed form, refused 1e-6 above it, relative', (p, q) => {
@@ -69,12 +72,37 @@ describe('two points', () => {
 describe('three points', () => {
   it('the complete graph with rates 1/3: within 1e-8 of 0.96271099, refused above', () => {
     expectWithin(boundOf(completeGraph(3), 0.962710989954).value, 0.962710989954, 1e-8, 'ge');
-    expect(isProved(completeGraph(3), 0.962710989954 + 1e-6, 3000)).toBe(false);
+    expect(isProved(completeGraph(3), 0.962710989954 + 1e-6, 1500)).toBe(false);
   });
 
   it('the cycle with rates 1: proved at 2.888, refused at 2.8882', () => {
     expect(isProved(cycle(3), 2.888)).toBe(true);
-    expect(isProved(cycle(3), 2.8882)).toBe(false);
+    expect(isProved(cycle(3), 2.8882, 1500)).toBe(false);
+  });
+});
+
+/** The best of a few starts of the search over states, which shares no code with the cells. */
+function observed(g: Generator): number {
+  const key = { id: 'ge', mean: 'logarithmic' } as const;
+  const request = { rows: [key], seed: 3, randomStarts: null, epsilon: 0.01 };
+  const findings = planSearches(analyse(g), request, new Set()).map((task) => runSheetTask(analyse(g), task));
+  return Math.min(...findings.map((finding) => (finding.kind === 'ge' ? finding.result.value : Infinity)));
+}
+
+describe('chains of three points against the search', () => {
+  const random = seededRandom('three points');
+  const chains = Array.from({ length: 5 }, (_, k) => {
+    const pi = [0, 1, 2].map(() => 0.1 + random.uniform());
+    const c = [0.1 + random.uniform(), k % 2 === 0 ? 0 : random.uniform(), 0.1 + random.uniform()];
+    return [0, 1, 2].map((x) => [0, 1, 2].map((y) => (x === y ? 0 : c[x + y - 1] / pi[x])));
+  });
+
+  it.each(chains)('rates %j, %j, %j: proved 1e-3 below the observed minimum, not 1e-3 above it', (...rates) => {
+    const g = ratesGenerator(rates);
+    const upper = observed(g);
+    const unit = Math.max(1, Math.abs(upper));
+    expect(isProved(g, upper - 1e-3 * unit)).toBe(true);
+    expect(isProved(g, upper + 1e-3 * unit, 500)).toBe(false);
   });
 });
 
