@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { checkTypes, ensureBundle } from './lib/build.mjs';
 import { runChecks } from './lib/checks.mjs';
+import { ensureChromium } from './lib/chromium.mjs';
 import { ensureInstalled } from './lib/install.mjs';
 import { main } from './lib/main.mjs';
 import { root } from './lib/paths.mjs';
@@ -14,6 +15,7 @@ import { countTests } from './lib/test-count.mjs';
 /** Sets up, checks and tests everything; with arguments, hands them to vitest and leaves the static checks out. */
 await main(async (args) => {
   await ensurePython();
+  await ensureChromium();
   if (process.env.DATABASE_URL === undefined) await ensurePostgres();
   await ensureInstalled();
   await ensureBundle();

@@ -6,3 +6,6 @@ export function startCluster(
   folder: string,
   options?: { readonly port?: number; readonly disposable?: boolean },
 ): Promise<{ readonly url: string; readonly port: number; readonly stop: () => Promise<void> }>;
+
+/** Makes a database on a cluster unless it is there. */
+export function ensureDatabase(cluster: { readonly port: number }, name: string): Promise<void>;

@@ -47,6 +47,14 @@ export async function startCluster(folder, { port = 0, disposable = false } = {}
   return { url: `postgres://postgres@127.0.0.1:${chosen}`, port: chosen, stop };
 }
 
+/** Makes a database on a cluster unless it is there. */
+export async function ensureDatabase({ port }, name) {
+  const where = ['-h', '127.0.0.1', '-p', String(port), '-U', 'postgres'];
+  const { code, output } = await capture(join(binaries(), 'createdb'), [...where, name]);
+  if (code !== 0 && !output.includes('already exists'))
+    throw new Error(`The database ${name} cannot be made:\n${output}`);
+}
+
 /** Folder of the newest installed server, or null. */
 function binaries() {
   if (!existsSync(INSTALLED)) return null;
