@@ -1,8 +1,8 @@
 /** Dimension of the algebra up to which ends are enclosed; above it eigenvalues stay certified and searches observed. */
 export const ENCLOSURE_DIMENSION = 36;
 
-/** Side N·k of a state with an ancilla up to which its quotient is enclosed. */
-export const ENCLOSURE_SIDE = 12;
+/** Side N·k of a state with an ancilla up to which its quotient is enclosed; a diagonal one may have ENCLOSURE_DIMENSION. */
+export const ENCLOSURE_SIDE = 16;
 
 /**
  * Radius of the box, relative to ‖V_j‖, to 1 + |ω_j|, to the eigenvalues of σ and to the jumps as given; the same residual, relative

@@ -76,6 +76,30 @@ function bigDivergence(
   return total;
 }
 
+/**
+ * I(ρ)/(2D(ρ‖diag ρ)) in 700 bits for jumps that are diagonal matrices, whose fixed points are the diagonal ones: D is the entropy of
+ * the diagonal less that of ρ.
+ */
+export function bigDephasingQuotient(model: Pick<BigModel, 'jumps'>, state: BigState): BigFloat {
+  const n = state.lambda.length;
+  const { mlsi } = bigEntropyQuotients({ ...model, sigma: Array.from({ length: n }, () => 1), frame: null }, state);
+  const u = bigPolar(bigMatrix(state.u));
+  const trace = sum(Array.from(state.lambda, big));
+  const lambda = Array.from(state.lambda, (x) => over(big(x), trace));
+  const diagonal = lambda.map((_, i) =>
+    sum(
+      lambda.map((x, a) => {
+        const k = i * n + a;
+        return times(x, plus(times(u.re[k], u.re[k]), times(u.im[k], u.im[k])));
+      }),
+    ),
+  );
+  const negentropy = (list: readonly BigFloat[]) => sum(list.map((x) => times(x, bigLog(x))));
+  const toMixed = plus(negentropy(lambda), bigLog(big(n)));
+  const toDiagonal = minus(negentropy(lambda), negentropy(diagonal));
+  return over(times(mlsi, toMixed), toDiagonal);
+}
+
 function sum(values: readonly BigFloat[]): BigFloat {
   return values.reduce(plus, big(0));
 }

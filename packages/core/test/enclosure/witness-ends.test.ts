@@ -6,6 +6,7 @@ import { lsiAt } from '../../src/constants/lsi-quotient.js';
 import { encloseEntropyQuotient } from '../../src/enclosure/enclose-entropy.js';
 import { encloseGradientEstimate } from '../../src/enclosure/enclose-gradient-estimate.js';
 import { modelBox } from '../../src/enclosure/model-box.js';
+import { dephasing } from '../../src/families/dephasing.js';
 import { depolarising } from '../../src/families/depolarising.js';
 import { thermalQubit } from '../../src/families/thermal-qubit.js';
 import { completeGraph } from '../../src/families/complete-graph.js';
@@ -25,7 +26,7 @@ import { over } from '../checker/arithmetic/big-float.js';
 import { expectEnclosed, relativeWidth } from '../checker/arithmetic/enclosure-checks.js';
 import { graded, randomMatrix, randomUnitary } from '../checker/arithmetic/witness-models.js';
 import { randomBalancedGenerator } from '../helpers/random-balanced-generator.js';
-import { bigEntropyQuotients } from './big-entropy.js';
+import { bigDephasingQuotient, bigEntropyQuotients } from './big-entropy.js';
 
 const WELL_CONDITIONED = 1e-10;
 
@@ -141,5 +142,23 @@ test('clsi at an entangled state agrees with the plain evaluation', () => {
     expect(value).toBeGreaterThan(found.lo - margin);
     expect(value).toBeLessThan(found.hi + margin);
     expect((found.hi - found.lo) / value).toBeLessThan(WELL_CONDITIONED);
+  }
+});
+
+test.each([2, 3])('mlsi of dephasing on %d levels, where the projection of a state is its diagonal', (n) => {
+  const random = seededRandom(`dephasing ${n}`);
+  const structure = analyse(dephasing(n));
+  for (const smallest of [0.1, 1e-3]) {
+    const rho = randomState(random, structure, smallest);
+    const { values, vectors } = blockEigen(structure.algebra, rho);
+    const found = encloseEntropyQuotient(structure, 'mlsi', rho, 1);
+    if (!found) throw new Error('expected an enclosure');
+    const jumps = structure.canonical?.jumps ?? [];
+    const exact = bigDephasingQuotient({ jumps }, { lambda: values, u: vectors, k: 1 });
+    expectEnclosed(found, exact, 'mlsi');
+    expect(relativeWidth(found, exact)).toBeLessThan(WELL_CONDITIONED);
+    const ancilla = fromFrame({ lambda: Float64Array.of(0.6, 0.4), u: randomUnitary(random, 2) });
+    const product = encloseEntropyQuotient(structure, 'clsi', kronecker(rho, ancilla), 2);
+    expectEnclosed(product ?? { lo: NaN, hi: NaN }, exact, 'clsi');
   }
 });
