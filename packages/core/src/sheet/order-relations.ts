@@ -1,5 +1,6 @@
 import type { ConstantId, End, Grade } from './bracket.js';
 import type { MeanName } from '../metric/operator-mean.js';
+import { CLOSED_TOLERANCE } from '../tolerances.js';
 
 /** A row's name: the constant, and for `ge` its mean. */
 export interface RowKey {
@@ -66,5 +67,5 @@ function prefer(a: End | null, b: End | null, beats: (x: number, y: number) => b
   return beats(b.value, a.value) && !close ? b : a;
 }
 
-/** Relative difference below which two ends count as equal when grades decide. */
-const SAME_VALUE = 1e-12;
+/** Relative difference below which two ends count as equal when grades decide: a share of CLOSED_TOLERANCE, so that no digit shown changes. */
+const SAME_VALUE = CLOSED_TOLERANCE / 4;

@@ -59,7 +59,7 @@ export function runSheetTask(structure: Structure, task: SheetTask, stop?: () =>
     case 'comparison':
       return { kind: 'comparison', end: clsiByComparison(structure) };
     case 'lift':
-      return liftFinding(structure, task.target, stop);
+      return liftFinding(structure, task, stop);
     case 'ge': {
       const problem = { model: metricOf(structure), mean: task.mean, covariant: task.covariant };
       return { kind: 'ge', mean: task.mean, result: runGradientEstimateStart(problem, task.start, stop) };
@@ -112,12 +112,15 @@ function bakryEmeryFinding(
   return { kind: 'bakry-emery', complete, plain, enclosed };
 }
 
-function liftFinding(structure: Structure, target: number, stop?: () => boolean): SheetFinding {
+type LiftTask = Extract<SheetTask, { readonly kind: 'lift' }>;
+
+function liftFinding(structure: Structure, { target, ansatz }: LiftTask, stop?: () => boolean): SheetFinding {
   const canonical = structure.canonical as CanonicalForm;
   const result = climbLadder(canonical, {
     target,
     maxSide: { diagonal: CERTIFY_LIFT_SIDE, full: SHEET_LIFT_SIDE },
     maxUnknowns: SHEET_LIFT_UNKNOWNS,
+    ...(ansatz ? { ansatz } : {}),
     ...(stop ? { stop } : {}),
   });
   if (!result) return { kind: 'lift', end: null, reason: 'none' };

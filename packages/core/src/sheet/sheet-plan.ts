@@ -5,6 +5,7 @@ import { lsiTasks } from '../constants/lsi.js';
 import { mlsiTasks } from '../constants/mlsi.js';
 import { type SearchStart, searchStarts } from '../constants/search-starts.js';
 import { isCommutative } from '../algebra/block-algebra.js';
+import type { LiftAnsatz } from '../lift/lift-terms.js';
 import type { MeanName } from '../metric/operator-mean.js';
 import { seededRandom } from '../random.js';
 import type { Structure } from '../structure/structure.js';
@@ -31,7 +32,7 @@ export type SheetTask =
   | { readonly kind: 'gap' }
   | { readonly kind: 'bakry-emery'; readonly seed: number | string; readonly withPlain: boolean }
   | { readonly kind: 'comparison' }
-  | { readonly kind: 'lift'; readonly target: number }
+  | { readonly kind: 'lift'; readonly target: number; readonly ansatz: LiftAnsatz | null }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly covariant: boolean; readonly start: SearchStart }
   | CellTask
   | { readonly kind: 'entropy'; readonly start: EntropyStart };
@@ -64,14 +65,18 @@ export function planEigenproblems(structure: Structure, request: SheetRequest): 
   return tasks;
 }
 
-/** The lift that bounds cge, and with it most constants, from below: worth its programme only where cge is still open. */
+/**
+ * The lift that bounds cge, and with it most constants, from below: worth its programme where cge is still open, and the small
+ * ansatz also where a closed lower end rests on floating point, which a lift over the rationals improves.
+ */
 export function planLifts(structure: Structure, request: SheetRequest, rows: readonly SheetRow[]): SheetTask[] {
   const wants = wanting(request);
   const cge = rows.find(({ key }) => key.id === 'cge');
   const target = cge?.upper?.value ?? Infinity;
   const useful = wants('cge', 'ge', 'mlsi', 'clsi', 't2', 'diameter', 'mixing') && hasGradientMetric(structure);
-  if (!useful || cge?.closed || target === -Infinity || structure.algebra.dimension > FORM_LIMIT) return [];
-  return [{ kind: 'lift', target }];
+  if (!useful || target === -Infinity || structure.algebra.dimension > FORM_LIMIT) return [];
+  if (!cge?.closed) return [{ kind: 'lift', target, ansatz: null }];
+  return cge.lower?.grade === 'certified' ? [{ kind: 'lift', target, ansatz: 'diagonal' }] : [];
 }
 
 /** The searches of a sheet, cut into independent starts; `closed` names the rows that need none. */
