@@ -6,11 +6,13 @@ import { chainRates } from './chain-rates.js';
 import {
   CELL_BUDGET,
   CELL_CHAIN_POINTS,
-  CLOSING_SHARE,
+  CLOSING_GROWTH,
   CLOSING_WIDTH,
-  COARSE_WIDTHS,
+  COARSE_WIDTH,
+  FIRST_SHARE,
   FIRST_WIDTH,
   NEXT_WIDTHS,
+  SECOND_WIDTH,
 } from './limits.js';
 import { qubitAxes } from './qubit-axes.js';
 import { tracialQubitForms } from './tracial-qubit-forms.js';
@@ -48,32 +50,30 @@ export function gradientEstimateByCells(structure: Structure, target: CellTarget
   return charts && boundOnCharts(charts, target);
 }
 
+/**
+ * Near a smooth minimum every digit costs as many cells as the one before, along a valley a multiple of them: the second attempt tells
+ * whether the bracket can be closed.
+ */
 function boundOnCharts(charts: readonly CellForms[], target: CellTarget): CellBound | null {
   let left = target.maxCells ?? CELL_BUDGET;
-  const attempt = (width: number, share = 1): CellBound | 'useless' | 'failed' => {
+  const attempt = (width: number, share = 1): CellBound | null => {
     const value = target.upper - width * target.scale;
-    if (!(value > target.lower)) return 'useless';
+    if (!(value > target.lower)) return null;
     const { proved, cells } = proveOnCharts(charts, value, Math.floor(share * left), target.shouldStop);
     left -= cells;
-    return proved ? { value, cells } : 'failed';
+    return proved ? { value, cells } : null;
   };
-  const first = attempt(FIRST_WIDTH);
-  if (first === 'failed') return bestOf(COARSE_WIDTHS, attempt);
-  const closing = attempt(CLOSING_WIDTH, CLOSING_SHARE);
-  if (typeof closing === 'object') return closing;
-  return bestOf(NEXT_WIDTHS, attempt) ?? (first === 'useless' ? null : first);
-}
-
-/** The last success among distances tried until one fails. */
-function bestOf(
-  widths: readonly number[],
-  attempt: (width: number) => CellBound | 'useless' | 'failed',
-): CellBound | null {
-  let best: CellBound | null = null;
-  for (const width of widths) {
-    const result = attempt(width);
-    if (result === 'failed') break;
-    if (result !== 'useless') best = result;
+  const first = attempt(FIRST_WIDTH, FIRST_SHARE);
+  if (!first && target.upper - FIRST_WIDTH * target.scale > target.lower) return attempt(COARSE_WIDTH);
+  const second = attempt(SECOND_WIDTH);
+  if (!second) return first;
+  const closing = !first || second.cells <= CLOSING_GROWTH * first.cells ? attempt(CLOSING_WIDTH) : null;
+  if (closing) return closing;
+  let best = second;
+  for (const width of NEXT_WIDTHS) {
+    const next = attempt(width);
+    if (!next) break;
+    best = next;
   }
   return best;
 }

@@ -50,6 +50,20 @@ function isZero({ range }: Jet): boolean {
   return range.lo === 0 && range.hi === 0;
 }
 
+/** a². */
+export function squareJet(a: Jet): Jet {
+  return {
+    range: sqr(a.range),
+    centre: sqr(a.centre),
+    slopes: a.slopes.map((s) => mul(s, add(a.range, a.range))),
+  };
+}
+
+/** A function known not to be negative. */
+export function positiveJet(a: Jet): Jet {
+  return { ...a, range: { lo: Math.max(0, a.range.lo), hi: Math.max(0, a.range.hi) } };
+}
+
 /** The product with a number that does not depend on the parameters. */
 export function scaleJet(a: Jet, factor: Interval): Jet {
   return { range: mul(a.range, factor), centre: mul(a.centre, factor), slopes: a.slopes.map((s) => mul(s, factor)) };

@@ -1,13 +1,19 @@
-/** Distance below the best witness, in the rates at hand, at which a proof of `ge` is tried first. */
+/** Distance below the best witness, in the rates at hand, at which a proof of `ge` is tried first, and the cells it may take. */
 export const FIRST_WIDTH = 1e-2;
+export const FIRST_SHARE = 0.5;
 
-/** The distance that closes a bracket and stands for a value of weaker grade: tried next, with CLOSING_SHARE of the cells. */
+/** What is tried when that fails. */
+export const COARSE_WIDTH = 1e-1;
+
+/** What is tried when it succeeds. */
+export const SECOND_WIDTH = 1e-3;
+
+/** The distance that closes a bracket and stands for a value of weaker grade: tried where the second took few cells more. */
 export const CLOSING_WIDTH = 2e-9;
-export const CLOSING_SHARE = 0.4;
+export const CLOSING_GROWTH = 2.6;
 
-/** Distances tried one after the other when that fails, and when the first fails. */
-export const NEXT_WIDTHS: readonly number[] = [1e-3, 1e-4, 1e-5, 1e-6];
-export const COARSE_WIDTHS: readonly number[] = [1e-1];
+/** Distances tried one after the other where closing fails. */
+export const NEXT_WIDTHS: readonly number[] = [1e-4, 1e-5, 1e-6];
 
 /** Cells of states examined at most for one lower end of `ge`. */
 export const CELL_BUDGET = 5000;

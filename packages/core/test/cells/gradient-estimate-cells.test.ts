@@ -112,13 +112,22 @@ describe('tracial qubits', () => {
     expect(isProved(depolarising(2), 1 + 1e-6)).toBe(false);
   });
 
-  it('three Pauli rates: not above the gap γ₂ + γ₃', () => {
-    const g = pauliJumps([
-      { string: 'X', rate: 1 },
-      { string: 'Y', rate: 1 },
-      { string: 'Z', rate: 0.7 },
+  const pauli = (x: number, y: number, z: number): Generator =>
+    pauliJumps([
+      { string: 'X', rate: x },
+      { string: 'Y', rate: y },
+      { string: 'Z', rate: z },
     ]);
-    expect(isProved(g, 1.701, 400)).toBe(false);
+
+  // ge ≤ gap, the sum of the two smaller rates; searches find nothing lower.
+  it.each([
+    [1, 1, 0.7, 1e-3],
+    [0.4, 1, 0.4, 1e-3],
+    [0.6, 0.4, 1, 1e-1],
+  ])('Pauli rates %f, %f, %f: proved below the gap, not above it', (x, y, z, width) => {
+    const gap = x + y + z - Math.max(x, y, z);
+    expect(isProved(pauli(x, y, z), gap * (1 - width))).toBe(true);
+    expect(isProved(pauli(x, y, z), gap * 1.001, 400)).toBe(false);
   });
 });
 
