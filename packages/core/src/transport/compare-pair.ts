@@ -1,7 +1,7 @@
 import { fromCoordinates } from '../algebra/block-algebra.js';
 import { relativeEntropy } from '../entropy/relative-entropy.js';
 import { generatorMatrix } from '../generator/apply-generator.js';
-import { COMPARISON_ACCURACY, COMPARISON_FINEST, COMPARISON_TIMES } from '../tolerances.js';
+import { COMPARISON_ACCURACY, COMPARISON_FINEST, COMPARISON_TIMES } from './tolerances.js';
 import type { ComparisonStart } from './comparison-starts.js';
 import { convexityAlong } from './convexity.js';
 import { eviConstant } from './evi.js';

@@ -3,7 +3,7 @@ import { exponentialState, matrixOf } from '../entropy/log-state.js';
 import { fromCoordinates } from '../algebra/block-algebra.js';
 import type { ComplexMatrix } from '../linalg/complex-matrix.js';
 import { type Random, seededRandom } from '../random.js';
-import { COMPARISON_SPREAD, WITNESS_REACH } from '../tolerances.js';
+import { COMPARISON_SPREAD, WITNESS_REACH } from './tolerances.js';
 import type { TransportModel } from './transport-model.js';
 
 /** Two states to join by a geodesic, matrices of plain data. */

@@ -1,6 +1,6 @@
 import type { SheetFinding } from '../sheet/run-sheet-task.js';
 import type { Witness } from '../sheet/bracket.js';
-import { WITNESS_TIE } from '../tolerances.js';
+import { WITNESS_TIE } from './tolerances.js';
 
 /**
  * The witness of `ge` that a comparison starts from: among those that are lowest to rounding the one furthest from the boundary of

@@ -1,7 +1,8 @@
 import { fromCoordinates } from '../algebra/block-algebra.js';
 import { choleskyRealInto, choleskySolveReal } from '../linalg/cholesky-real.js';
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
-import { DUAL_HALVINGS, DUAL_RIDGE, DUAL_STEPS, EPSILON, METRIC_ROUNDING } from '../tolerances.js';
+import { EPSILON } from '../tolerances.js';
+import { DUAL_HALVINGS, DUAL_RIDGE, DUAL_STEPS, METRIC_ROUNDING } from './tolerances.js';
 import type { DiscretePath } from './discrete-path.js';
 import type { MetricAt, MetricKernel } from './metric-kernel.js';
 import type { Control, PotentialSpline } from './potential-spline.js';

@@ -1,4 +1,4 @@
-import { DISTANCE_COARSEST } from '../tolerances.js';
+import { DISTANCE_COARSEST } from './tolerances.js';
 import { type MinimisedPath, minimiseAction } from './minimise-action.js';
 import { refinePath } from './refine-path.js';
 import { startPath } from './start-path.js';

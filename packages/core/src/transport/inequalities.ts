@@ -3,7 +3,7 @@ import { entropyProduction } from '../entropy/entropy-production.js';
 import { relativeEntropy } from '../entropy/relative-entropy.js';
 import { generatorMatrix } from '../generator/apply-generator.js';
 import type { End } from '../sheet/bracket.js';
-import { CONTRACTION_TIME, INEQUALITY_ROUNDING, INEQUALITY_WIDTH } from '../tolerances.js';
+import { CONTRACTION_TIME, INEQUALITY_ROUNDING, INEQUALITY_WIDTH } from './tolerances.js';
 import { flowed } from './flowed.js';
 import { type TransportDistance, transportDistance } from './transport-distance.js';
 import type { TransportModel } from './transport-model.js';

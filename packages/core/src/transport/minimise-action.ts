@@ -1,5 +1,5 @@
 import { choleskySolveReal } from '../linalg/cholesky-real.js';
-import { ACTION_ARMIJO, ACTION_DECREMENT, ACTION_HALVINGS, ACTION_ITERATIONS, ACTION_RIDGES } from '../tolerances.js';
+import { ACTION_ARMIJO, ACTION_DECREMENT, ACTION_HALVINGS, ACTION_ITERATIONS, ACTION_RIDGES } from './tolerances.js';
 import { type BlockTridiagonal, solveBlockTridiagonal } from './block-tridiagonal.js';
 import { type Action, type DiscretePath, type Piece, actionOf } from './discrete-path.js';
 import type { MetricKernel } from './metric-kernel.js';

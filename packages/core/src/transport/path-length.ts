@@ -1,12 +1,6 @@
 import { choleskyRealInto, choleskySolveReal } from '../linalg/cholesky-real.js';
-import {
-  BOUNDARY_EIGENVALUE,
-  BOUNDARY_PARTS,
-  BOUNDARY_RATIO,
-  EPSILON,
-  METRIC_ROUNDING,
-  STEEP_PIECE,
-} from '../tolerances.js';
+import { EPSILON } from '../tolerances.js';
+import { BOUNDARY_EIGENVALUE, BOUNDARY_PARTS, BOUNDARY_RATIO, METRIC_ROUNDING, STEEP_PIECE } from './tolerances.js';
 import type { DiscretePath } from './discrete-path.js';
 import type { MetricKernel } from './metric-kernel.js';
 import { between } from './refine-path.js';

@@ -1,5 +1,5 @@
 import type { MeanTable } from '../metric/mean-table.js';
-import { CLOSE_SPREAD, SERIES_CURVATURE } from '../tolerances.js';
+import { CLOSE_SPREAD, SERIES_CURVATURE } from './tolerances.js';
 
 /** Second divided differences of F(λ_a, λ_b) = Λ(e^{ω/2}λ_a, e^{−ω/2}λ_b) over all quadruples of eigenvalues. */
 export interface SecondTable {

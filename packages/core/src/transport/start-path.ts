@@ -1,4 +1,4 @@
-import { BENT_PATH, GRADED_BELOW } from '../tolerances.js';
+import { BENT_PATH, GRADED_BELOW } from './tolerances.js';
 import type { DiscretePath } from './discrete-path.js';
 import type { MetricKernel } from './metric-kernel.js';
 import { between } from './refine-path.js';

@@ -1,5 +1,5 @@
 import type { End } from '../sheet/bracket.js';
-import { DISTANCE_COARSEST, DISTANCE_FINEST, DISTANCE_PARTS, DUAL_SHARE } from '../tolerances.js';
+import { DISTANCE_COARSEST, DISTANCE_FINEST, DISTANCE_PARTS, DUAL_SHARE } from './tolerances.js';
 import { dualBound } from './dual-bound.js';
 import { type MinimisedPath, minimiseAction } from './minimise-action.js';
 import { lengthBound } from './path-length.js';

@@ -2,7 +2,7 @@ import { ThalwegError } from '../errors.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import { metricOf } from '../sheet/run-sheet-task.js';
 import type { Structure } from '../structure/structure.js';
-import { TRANSPORT_LIMIT } from '../tolerances.js';
+import { TRANSPORT_LIMIT } from './tolerances.js';
 import { type MetricKernel, metricKernel } from './metric-kernel.js';
 import { type TangentSpace, tangentSpace } from './tangent-space.js';
 

@@ -3,7 +3,8 @@ import { blockEigen } from '../algebra/block-eigen.js';
 import { ThalwegError } from '../errors.js';
 import { densityMatrix } from '../generator/declared-state.js';
 import { type ComplexMatrix, trace } from '../linalg/complex-matrix.js';
-import { BOUNDARY_EIGENVALUE, EPSILON, FAITHFUL_TOLERANCE, INPUT_TOLERANCE } from '../tolerances.js';
+import { EPSILON, FAITHFUL_TOLERANCE, INPUT_TOLERANCE } from '../tolerances.js';
+import { BOUNDARY_EIGENVALUE } from './tolerances.js';
 import type { MetricKernel } from './metric-kernel.js';
 import type { TransportModel } from './transport-model.js';
 
