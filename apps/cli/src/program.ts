@@ -57,6 +57,7 @@ export function createProgram(runVerb: RunVerb): Command {
     .addOption(onlyOption('only these, separated by commas'))
     .addOption(meanOption())
     .addOption(svgOption('the brackets'))
+    .option('--verbose', 'tell every iteration of the solver')
     .addHelpText('after', examples(['thalweg constants qubit.json', 'thalweg constants qubit.json --only gap,ge,cge']));
 
   addVerb(

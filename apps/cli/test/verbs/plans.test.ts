@@ -31,6 +31,8 @@ test('a plan is fully defaulted', () => {
     set: [],
     only: null,
     mean: 'logarithmic',
+    svg: null,
+    verbose: false,
   });
   expect(planVerify({ evidence: 'w.json' }, machine)).toEqual({
     ...defaults,

@@ -2,6 +2,7 @@ import { type CertificateVerdict, checkCertificate } from '../checker/check-cert
 import type { CertifiedConstant, LiftCertificate } from '../checker/lift-certificate.js';
 import { carreDuChamp } from '../constants/carre-du-champ.js';
 import { completeBakryEmery } from '../constants/bakry-emery.js';
+import { unboundedDirection } from '../constants/unbounded-direction.js';
 import { ThalwegError } from '../errors.js';
 import { type LiftAnsatz, type LadderResult, climbLadder, transferLift } from '../lift/index.js';
 import type { ProgrammeIterate } from '../programme/programme-options.js';
@@ -60,10 +61,13 @@ export function makeCertificate(
       `expected a GNS-symmetric generator for a certificate of ${constant}, got one that is not`,
     );
   }
-  const ceiling = completeBakryEmery(carreDuChamp(generator)).value;
+  const forms = carreDuChamp(generator);
+  const cbe = completeBakryEmery(forms);
+  const ceiling = cbe.value;
   const none = { made: null, ceiling, reason: 'exhausted' } as const;
   if (canonical.jumps.length === 0) return { ...none, note: 'L is 0: every constant is infinite' };
-  if (ceiling === -Infinity) return { ...none, note: 'cbe is −∞, so that no lift exists' };
+  const direction = unboundedDirection(forms, cbe);
+  if (direction !== null) return { ...none, note: `cbe is −∞, so that no lift exists: ${direction}` };
   const found = climbLadder(canonical, {
     target: ceiling,
     maxSide: { diagonal: CERTIFY_LIFT_SIDE, full: CERTIFY_LIFT_SIDE },

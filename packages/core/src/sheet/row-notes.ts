@@ -67,6 +67,7 @@ function findingNotes(found: readonly SheetFinding[], id: RowKey['id']): string[
     const finding = found.find(({ kind }) => kind === 'bakry-emery');
     if (finding?.kind !== 'bakry-emery') return [];
     if (!finding.complete.decided) return ['the kernel of Γ could not be told from its range in double precision'];
+    if (id === 'cbe' && finding.direction !== null) return [`unbounded below: ${finding.direction}`];
     const value = id === 'cbe' ? finding.complete.value : finding.plain?.value;
     if (value === -Infinity) return ['unbounded below: Γ₂ is negative, or unbalanced, where Γ vanishes'];
   }

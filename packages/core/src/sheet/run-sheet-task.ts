@@ -13,6 +13,7 @@ import { type LanczosGap, gapMatrixFree } from '../constants/gap-matrix-free.js'
 import { type GradientEstimateResult, runGradientEstimateStart } from '../constants/gradient-estimate.js';
 import { runLsiStart } from '../constants/lsi.js';
 import { runMlsiStart } from '../constants/mlsi.js';
+import { unboundedDirection } from '../constants/unbounded-direction.js';
 import { type EnclosedEnds, encloseBakryEmery, encloseCompleteBakryEmery } from '../enclosure/enclose-bakry-emery.js';
 import { encloseForms } from '../enclosure/enclosed-forms.js';
 import { encloseGap } from '../enclosure/enclose-gap.js';
@@ -20,6 +21,7 @@ import type { JumpBasis } from '../lift/jump-bases.js';
 import { type LadderResult, climbLadder } from '../lift/lift-ladder.js';
 import { type MetricModel, metricModel } from '../metric/metric-model.js';
 import type { MeanName } from '../metric/operator-mean.js';
+import type { ProgrammeIterate } from '../programme/programme-options.js';
 import { seededRandom } from '../random.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 import type { FixedPoints } from '../structure/fixed-points.js';
@@ -42,9 +44,17 @@ export type SheetFinding =
       readonly complete: CompleteBakryEmery;
       readonly plain: BakryEmeryResult | null;
       readonly enclosed: { readonly complete: EnclosedEnds; readonly plain: EnclosedEnds | null } | null;
+      /** Shows that cbe is −∞, as text; null where it is not. */
+      readonly direction: string | null;
     }
   | { readonly kind: 'comparison'; readonly end: End | null }
-  | { readonly kind: 'lift'; readonly end: End | null; readonly reason: LadderResult['reason'] | 'none' }
+  | {
+      readonly kind: 'lift';
+      readonly end: End | null;
+      readonly reason: LadderResult['reason'] | 'none';
+      /** What the solver told, iteration by iteration. */
+      readonly iterates: readonly ProgrammeIterate[];
+    }
   | { readonly kind: 'ge'; readonly mean: MeanName; readonly result: GradientEstimateResult }
   | { readonly kind: 'cells'; readonly end: End | null }
   | { readonly kind: 'entropy'; readonly result: EntropyResult | null };
@@ -109,34 +119,36 @@ function bakryEmeryFinding(
     complete: encloseCompleteBakryEmery(enclosing, complete),
     plain: plain && encloseBakryEmery(enclosing, plain),
   };
-  return { kind: 'bakry-emery', complete, plain, enclosed };
+  return { kind: 'bakry-emery', complete, plain, enclosed, direction: unboundedDirection(forms, complete) };
 }
 
 type LiftTask = Extract<SheetTask, { readonly kind: 'lift' }>;
 
 function liftFinding(structure: Structure, { target, ansatz }: LiftTask, stop?: () => boolean): SheetFinding {
   const canonical = structure.canonical as CanonicalForm;
+  const iterates: ProgrammeIterate[] = [];
   const result = climbLadder(canonical, {
     target,
+    onIterate: (record) => void iterates.push(record),
     maxSide: { diagonal: CERTIFY_LIFT_SIDE, full: SHEET_LIFT_SIDE },
     maxUnknowns: SHEET_LIFT_UNKNOWNS,
     ...(ansatz ? { ansatz } : {}),
     ...(stop ? { stop } : {}),
   });
-  if (!result) return { kind: 'lift', end: null, reason: 'none' };
+  if (!result) return { kind: 'lift', end: null, reason: 'none', iterates };
   const { lift, rung, reason } = result;
   const { verdict } = certificateOf(structure.generator, result, 'cge', {
     prefer: 'largest',
     ...(stop ? { stop } : {}),
   });
-  if (!verdict.holds || !verdict.grade) return { kind: 'lift', end: null, reason };
+  if (!verdict.holds || !verdict.grade) return { kind: 'lift', end: null, reason, iterates };
   const end: End = {
     value: verdict.bound,
     grade: verdict.grade,
     by: `lift of ∂ (${rung.ansatz} form, ${JUMP_WORDS[rung.basis]}), checked`,
     ...(verdict.grade === 'exact' ? {} : { margin: Math.abs(lift.optimum - verdict.bound) }),
   };
-  return { kind: 'lift', end, reason };
+  return { kind: 'lift', end, reason, iterates };
 }
 
 const JUMP_WORDS: Record<JumpBasis, string> = { given: 'jumps as given', pauli: 'Pauli jumps', weyl: 'Weyl jumps' };

@@ -18,6 +18,7 @@ import {
   type VerdictDocument,
 } from '@thalweg/format';
 import type { DocumentSource } from '../../input/read-source.js';
+import { iterateLine } from '../../render/iterate-line.js';
 import { TOOL } from '../../version.js';
 import type { TaskContext } from '../protocol.js';
 import { markovModel, readModel } from './model-cache.js';
@@ -52,8 +53,8 @@ export function makeCertificateDocument(
   const { made, reason, note } = makeCertificate(structure, constant, {
     ansatz,
     stop: () => context.isOutOfTime() || (deadline !== null && Date.now() >= deadline),
-    onIterate: ({ iteration, primalObjective, dualObjective, gap, dualInfeasibility }) => {
-      const line = `iteration ${iteration}: objective ${primalObjective.toPrecision(10)} ${dualObjective.toPrecision(10)}, gap ${gap.toExponential(2)}, infeasibility ${dualInfeasibility.toExponential(2)}`;
+    onIterate: (record) => {
+      const line = iterateLine(record);
       iterates.push(line);
       context.progress(line);
     },

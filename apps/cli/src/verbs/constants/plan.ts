@@ -7,7 +7,7 @@ import type { Machine, RawOptions } from '../verb.js';
 
 export type ConstantsPlan = ReturnType<typeof planConstants>;
 
-/** `constants M [--only gap,ge:left] [--mean left] [--svg FILE]`. `only` is null for the whole sheet, `svg` where not given. */
+/** `constants M [--only gap,ge:left] [--mean left] [--svg FILE] [--verbose]`. `only` is null for the whole sheet, `svg` where not given. */
 export function planConstants(raw: RawOptions, machine: Machine) {
   const schema = z.object({
     ...globalOptions(machine),
@@ -17,6 +17,7 @@ export function planConstants(raw: RawOptions, machine: Machine) {
       .default(null),
     mean: textOption((text) => readName('--mean', text, MEAN_NAMES)).default('logarithmic'),
     svg: fileOption(),
+    verbose: z.boolean().default(false),
   });
   return parseOptions(schema, raw);
 }
