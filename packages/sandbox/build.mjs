@@ -34,6 +34,15 @@ export async function bundleProcess() {
   });
 }
 
+/** The script of the web worker, one file with everything inside. */
+async function bundleWorker() {
+  return bundleHost({
+    entryPoints: { 'sandbox-worker': 'src/browser/worker.ts' },
+    platform: 'browser',
+    target: 'es2023',
+  });
+}
+
 async function bundleHost(options) {
   return build({
     ...common,
@@ -50,7 +59,7 @@ async function bundleHost(options) {
 
 async function main() {
   mkdirSync(join(folder, 'dist/bundle'), { recursive: true });
-  for (const { outputFiles } of [await bundleProcess()]) {
+  for (const { outputFiles } of [await bundleProcess(), await bundleWorker()]) {
     for (const { path, contents } of outputFiles) {
       const partial = `${path}.${process.pid}.partial`;
       writeFileSync(partial, contents);

@@ -29,7 +29,7 @@ export const DEPTH_LIMIT = 64;
 export const MESSAGE_LIMIT = 1_000;
 
 /** Stack of the interpreter in bytes, small enough that the host's own never runs out first; the same everywhere, since a generator can measure it. */
-export const STACK_BYTES = 64 * 1024;
+export const STACK_BYTES = 48 * 1024;
 
 /** Stack of the thread that holds the interpreter, in MB. */
 export const THREAD_STACK_MEGABYTES = 16;

@@ -13,10 +13,12 @@ export function memoryFault({ memoryMegabytes }: SandboxLimits): RunFault {
 }
 
 /** The reply for what `generate` answered inside; null when the interpreter ran out of memory. */
-export function readAnswer(answer: string | null, limits: SandboxLimits): RunReply {
+export function readAnswer(answer: string | null, limits: SandboxLimits, memoryWasRefused: boolean): RunReply {
   if (answer === null) return { fault: memoryFault(limits) };
   if (answer.startsWith('=')) return withinOutput(answer.slice(1), limits);
-  return { fault: insideFault(JSON.parse(answer.slice(1)), limits) };
+  const fault = JSON.parse(answer.slice(1)) as InsideFault;
+  if (fault.outOfMemory || (fault.isNull && memoryWasRefused)) return { fault: memoryFault(limits) };
+  return { fault: insideFault(fault) };
 }
 
 function withinOutput(json: string, { outputBytes }: SandboxLimits): RunReply {
@@ -26,8 +28,7 @@ function withinOutput(json: string, { outputBytes }: SandboxLimits): RunReply {
   return { fault: { code: 'too-large', message } };
 }
 
-function insideFault({ message, pointer, line, column, outOfMemory }: InsideFault, limits: SandboxLimits): RunFault {
-  if (outOfMemory) return memoryFault(limits);
+function insideFault({ message, pointer, line, column }: InsideFault): RunFault {
   const place = line === undefined ? '' : `, line ${line}`;
   return {
     code: 'generator-failed',

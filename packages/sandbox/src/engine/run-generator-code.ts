@@ -10,6 +10,7 @@ import imported from '@jitl/quickjs-wasmfile-release-sync';
 import type { CompleteRun } from '../generator-run.js';
 import { DEPTH_LIMIT, STACK_BYTES } from '../limits.js';
 import type { RunReply } from '../reply.js';
+import { CappedMemory } from './capped-memory.js';
 import { memoryFault, readAnswer, timeFault } from './faults.js';
 
 /** What the interpreter is made of. */
@@ -42,10 +43,6 @@ const INTRINSICS = {
 /** The package's types speak of its CommonJS form, where the variant is one level deeper. */
 const variant: QuickJSSyncVariant = 'default' in imported ? imported.default : imported;
 
-const PAGES_A_MEGABYTE = 16;
-/** What the module itself asks for. */
-const FIRST_PAGES = 256;
-
 /**
  * Runs one generator in an interpreter of its own: a fresh instance of the WebAssembly module with a memory that cannot grow
  * beyond its limit. `QuickJSRuntime.setMemoryLimit` alone does not hold. Whatever the host itself throws poisons the thread.
@@ -54,25 +51,28 @@ export async function runGeneratorCode(engine: Engine, run: CompleteRun): Promis
   const deadline = engine.now() + run.limits.milliseconds;
   let late = false;
   try {
-    const runtime = await freshRuntime(engine, run.limits.memoryMegabytes);
+    const memory = new CappedMemory(run.limits.memoryMegabytes);
+    const runtime = await freshRuntime(engine, memory);
     runtime.setInterruptHandler(() => (late ||= engine.now() > deadline));
     const answer = evaluate(runtime, engine, run);
     if (late) return { fault: timeFault(run.limits) };
-    return readAnswer(answer, run.limits);
+    return readAnswer(answer, run.limits, memory.exhausted);
   } catch (error) {
     return { fault: late ? timeFault(run.limits) : hostFault(error, run), poisoned: true };
   }
 }
 
-async function freshRuntime(engine: Engine, megabytes: number): Promise<QuickJSRuntime> {
-  const maximum = megabytes * PAGES_A_MEGABYTE;
-  const wasmMemory = new WebAssembly.Memory({ initial: FIRST_PAGES, maximum });
+async function freshRuntime(engine: Engine, wasmMemory: WebAssembly.Memory): Promise<QuickJSRuntime> {
   const quickjs = await newQuickJSWASMModuleFromVariant(newVariant(variant, { wasmModule: engine.wasm, wasmMemory }));
   const runtime = quickjs.newRuntime();
   runtime.setMaxStackSize(STACK_BYTES);
-  runtime.setModuleLoader((name) => ({
-    error: new Error(`generate.js imports "${name}": a generator imports nothing, take what it needs from the kit`),
-  }));
+  runtime.setModuleLoader(
+    (name) => ({
+      error: new Error(`generate.js ${name}: a generator imports nothing, take what it needs from the kit`),
+    }),
+    // Under another name, so that modules that are loaded already are not found either.
+    (_from, name) => `imports "${name}"`,
+  );
   return runtime;
 }
 
@@ -99,6 +99,11 @@ function load(context: QuickJSContext, source: string): QuickJSHandle {
 function hostFault(error: unknown, { limits }: CompleteRun) {
   const text = String(error);
   if (/memory|OOM|abort/i.test(text)) return memoryFault(limits);
+  if (/call stack/i.test(text)) {
+    const overflow =
+      'generate.js: stack overflow outside the interpreter; make it simpler: less nesting, less recursion';
+    return { code: 'generator-failed', message: overflow } as const;
+  }
   const message = `expected generate.js to run, but it overran the interpreter (${text}); make it simpler: less nesting, less recursion`;
   return { code: 'generator-failed', message } as const;
 }

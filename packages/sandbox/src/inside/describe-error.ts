@@ -8,6 +8,8 @@ export interface InsideFault {
   readonly line?: number | undefined;
   readonly column?: number | undefined;
   readonly outOfMemory?: boolean;
+  /** It threw null: so does the interpreter when there is no memory left for an error. */
+  readonly isNull?: boolean;
 }
 
 const PLACE = /generate\.js:(\d+)(?::(\d+))?/;
@@ -16,7 +18,9 @@ const PLACE = /generate\.js:(\d+)(?::(\d+))?/;
 export function describeError(error: unknown): InsideFault {
   try {
     if (error instanceof Refusal) return { message: error.message, pointer: error.pointer };
-    if (!(error instanceof Error)) return { message: `it threw ${shown(error)}, which is no Error` };
+    if (!(error instanceof Error)) {
+      return { message: `it threw ${shown(error)}, which is no Error`, isNull: error === null };
+    }
     const name = String(error.name);
     const message = String(error.message);
     const [, line, column] = PLACE.exec(String(error.stack)) ?? [];

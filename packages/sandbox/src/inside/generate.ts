@@ -1,5 +1,5 @@
 import { describeError } from './describe-error.js';
-import { plainCopy } from './plain-copy.js';
+import { describeKind, plainCopy } from './plain-copy.js';
 import { Refusal } from './refusal.js';
 import { kit } from '../kit/index.js';
 
@@ -27,12 +27,17 @@ export function generate(
 
 function call(module: GeneratorModule, want: 'model' | 'claims', parameters: object): unknown {
   const name = want === 'model' ? 'default' : 'claims';
+  if (module instanceof Promise) {
+    throw new Refusal(
+      'expected generate.js to run in one go, got await at its top level; compute without async and await',
+    );
+  }
   const exported = module[name];
   if (exported === undefined && want === 'claims') return [];
   if (typeof exported !== 'function') {
     const example =
       want === 'model' ? 'export default (parameters, kit) => model' : 'export const claims = (parameters) => [...]';
-    const got = exported === undefined ? 'no such export' : `a ${typeof exported}`;
+    const got = exported === undefined ? 'no such export' : describeKind(exported);
     throw new Refusal(`expected generate.js to have a function as "${name}", got ${got}; write ${example}`);
   }
   const value: unknown = exported(Object.freeze(parameters), kit);

@@ -34,7 +34,7 @@ function harden(): number {
   for (const value of queue) {
     if ((typeof value !== 'object' && typeof value !== 'function') || value === null || reached.has(value)) continue;
     reached.add(value);
-    Object.freeze(value);
+    if (!isErrorPrototype(value)) Object.freeze(value);
     queue.push(Object.getPrototypeOf(value));
     for (const { value: field, get, set } of Object.values(Object.getOwnPropertyDescriptors(value)))
       queue.push(field, get, set);
@@ -44,4 +44,9 @@ function harden(): number {
     }
   }
   return reached.size;
+}
+
+/** Left open, since assigning `name` or `message` to an error is common and fails where the prototype's own cannot be written. */
+function isErrorPrototype(value: object): boolean {
+  return value === Error.prototype || Object.getPrototypeOf(value) === Error.prototype;
 }

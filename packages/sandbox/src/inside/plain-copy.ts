@@ -21,7 +21,7 @@ export function plainCopy(value: unknown, depthLimit: number, pointer = ''): unk
       if (depthLimit === 0) refuse('plain data', 'nesting that is too deep or a cycle', pointer);
       return Array.isArray(value) ? copyItems(value, depthLimit, pointer) : copyFields(value, depthLimit, pointer);
     default:
-      return refuse('plain data', describe(value), pointer);
+      return refuse('plain data', describeKind(value), pointer);
   }
 }
 
@@ -64,7 +64,9 @@ function className(prototype: unknown): string {
   return typeof constructor?.name === 'string' ? constructor.name : 'a class';
 }
 
-function describe(value: unknown): string {
+/** What kind of value it is, with its article. */
+export function describeKind(value: unknown): string {
+  if (typeof value === 'object') return 'an object';
   return value === undefined ? 'undefined' : typeof value === 'bigint' ? 'a BigInt' : `a ${typeof value}`;
 }
 

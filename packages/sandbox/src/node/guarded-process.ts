@@ -5,6 +5,7 @@ import { fileURLToPath } from 'node:url';
 import { timeFault } from '../engine/faults.js';
 import type { CompleteRun } from '../generator-run.js';
 import { GRACE_MILLISECONDS, PROCESS_HEAP_MEGABYTES, START_MILLISECONDS } from '../limits.js';
+import type { Guarded } from '../pool.js';
 import type { RunFault } from '../reply.js';
 import { readLines } from './read-lines.js';
 
@@ -12,7 +13,7 @@ import { readLines } from './read-lines.js';
 const replyBytes = (outputBytes: number): number => 2 * outputBytes + 2 ** 16;
 
 /** One process that runs generators, one at a time. It is the boundary: empty environment, bounded heap and output, ended from outside. */
-export class GuardedProcess {
+export class GuardedProcess implements Guarded {
   readonly #child: ChildProcess;
   readonly #ready: Promise<unknown>;
   #limit = replyBytes(0);

@@ -1,2 +1,3 @@
+export { type Sandbox } from '../pool.js';
 export { runGenerator } from './run-generator.js';
-export { createSandbox, type Sandbox } from './sandbox.js';
+export { createSandbox } from './sandbox.js';

@@ -1,5 +1,6 @@
 import type { GeneratorResult, GeneratorRun } from '../generator-run.js';
-import { createSandbox, type Sandbox } from './sandbox.js';
+import type { Sandbox } from '../pool.js';
+import { createSandbox } from './sandbox.js';
 
 let shared: Sandbox | null = null;
 

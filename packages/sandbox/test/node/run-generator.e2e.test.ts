@@ -1,8 +1,8 @@
 import { beforeAll, expect, test } from 'vitest';
-import { ensureBundle } from '../../../setup/lib/build.mjs';
+import { ensureScripts } from '../support/ensure-scripts.js';
 import { runGenerator } from '../../src/node/index.js';
 
-beforeAll(ensureBundle);
+beforeAll(ensureScripts);
 
 const parameters = { n: 3, name: 'a"\\', on: true };
 

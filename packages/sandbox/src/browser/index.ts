@@ -1,0 +1,3 @@
+export { type Sandbox } from '../pool.js';
+export { runGenerator } from './run-generator.js';
+export { createSandbox } from './sandbox.js';
