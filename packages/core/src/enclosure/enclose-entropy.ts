@@ -34,7 +34,7 @@ export function encloseEntropyQuotient(
   const primitive = structure.fixedPoints?.primitive ?? false;
   if (constant === 'lsi' && !primitive) return null;
   return attempt(() => {
-    const entropy = primitive ? encloseDivergence(box, state) : encloseProjectedDivergence(structure, state);
+    const entropy = primitive ? encloseDivergence(box, state) : encloseProjectedDivergence(structure, box, state);
     if (!entropy) return ENTIRE;
     const positive = { lo: Math.max(0, entropy.lo), hi: entropy.hi };
     if (constant !== 'lsi') return div(jumpSum(box, state, productionEnclosure), mul(point(2), positive));

@@ -13,13 +13,19 @@ import type { Structure } from '../structure/structure.js';
 import type { FramedState } from './enclose-divergence.js';
 import { type FixedClasses, fixedClasses } from './fixed-classes.js';
 import { encloseFrame, encloseStateMatrix } from './frame-enclosure.js';
+import type { ModelBox } from './model-box.js';
 
 /**
  * D(ρ‖E†ρ) = Tr ρ log ρ − Tr E†ρ log E†ρ, in the trace of ρ, for E ⊗ id with E the trace-preserving projection onto fixed points of
  * the kind of `fixedClasses`, which averages over each class. Null for other fixed points and without tracial symmetry.
  */
-export function encloseProjectedDivergence(structure: Structure, state: FramedState): Interval | null {
-  const classes = structure.symmetry.kind === 'tracial' ? fixedClasses(structure, null) : null;
+export function encloseProjectedDivergence(
+  structure: Structure,
+  { jumps }: ModelBox,
+  state: FramedState,
+): Interval | null {
+  const tracial = jumps.every(({ frequency }) => frequency.lo === 0 && frequency.hi === 0);
+  const classes = tracial ? fixedClasses(structure, null) : null;
   if (!classes) return null;
   const { lambda, k } = state;
   const rho = encloseStateMatrix(encloseFrame(state.u, amplifiedAlgebra(structure.algebra, k)), lambda);

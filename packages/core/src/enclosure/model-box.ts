@@ -50,7 +50,8 @@ function boxOf(structure: Structure): ModelBox | null {
   if (!canonical || !hasGradientMetric(structure) || algebra.dimension > ENCLOSURE_DIMENSION) return null;
   if (canonical.jumps.length === 0 || !(canonical.residual <= BOX_RADIUS)) return null;
   const { state } = canonical;
-  const tracial = symmetry.kind === 'tracial';
+  // Jumps closed under adjoints without frequencies are symmetric for the trace, however σ was found.
+  const tracial = symmetry.kind === 'tracial' && canonical.jumps.every(({ frequency }) => frequency === 0);
   const frame = tracial ? null : basisOf(state);
   const jumps = canonical.jumps.map(({ matrix, frequency, partner, norm }, j): BoxJump => {
     const spread = tracial || partner === j ? 0 : BOX_RADIUS * (1 + Math.abs(frequency));

@@ -146,8 +146,7 @@ function gradientEstimateBracket(structure: Structure, found: readonly SheetFind
   const rule = completeCurvatureLower(structure, found);
   const lower =
     mean === 'logarithmic' ? betterLower(betterLower(rule, curvatureRule(structure)), cellLower(found)) : rule;
-  const gap = gapBracket(found).upper?.value ?? Infinity;
-  return { lower, upper: provedUpper(structure, best && gradientEstimateEnd(best, mean), gap) };
+  return { lower, upper: provedUpper(structure, best && gradientEstimateEnd(best, mean)) };
 }
 
 function cellLower(found: readonly SheetFinding[]): End | null {
@@ -188,7 +187,7 @@ function entropyBracket(structure: Structure, found: readonly SheetFinding[], id
   const usesGap = symmetric && (id !== 'lsi' || (structure.fixedPoints?.primitive ?? false));
   const { upper: gap } = gapBracket(found);
   const inherited = usesGap && gap ? inheritedEnd(gap, `${id} ≤ gap; ${gap.by}`) : null;
-  const upper = provedUpper(structure, entropyUpper(inherited, results), gap?.value ?? Infinity);
+  const upper = provedUpper(structure, entropyUpper(inherited, results));
   const comparison = found.find(({ kind }) => kind === 'comparison');
   return { lower: id === 'clsi' && comparison?.kind === 'comparison' ? comparison.end : null, upper };
 }
