@@ -90,7 +90,7 @@ describe('witness and verify', () => {
     const verdict = parseVerdict(stdout);
     expect(verdict).toMatchObject({
       verb: 'verify',
-      claims: [{ constant: 'mlsi', relation: 'at-most', verdict: 'holds' }],
+      claims: [{ constant: 'mlsi', relation: 'at-most', verdict: 'holds', bracket: { upper: { grade: 'enclosed' } } }],
     });
   });
 });
