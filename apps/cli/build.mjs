@@ -1,4 +1,13 @@
-import { copyFileSync, mkdirSync, readFileSync, readdirSync, renameSync, unlinkSync, writeFileSync } from 'node:fs';
+import {
+  copyFileSync,
+  existsSync,
+  mkdirSync,
+  readFileSync,
+  readdirSync,
+  renameSync,
+  unlinkSync,
+  writeFileSync,
+} from 'node:fs';
 import { basename, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
@@ -13,7 +22,7 @@ const BANNER =
   "import { createRequire as thalwegRequire } from 'node:module'; const require = thalwegRequire(import.meta.url);";
 
 /** Lists of names that come without a licence text. */
-const NO_FILE = {
+const NO_TEXT = {
   'spdx-exceptions': 'Licensed under https://creativecommons.org/licenses/by/3.0/ by The Linux Foundation.',
   'spdx-license-ids': 'Dedicated to the public domain: https://creativecommons.org/publicdomain/zero/1.0/',
 };
@@ -51,6 +60,8 @@ function bundle() {
     legalComments: 'none',
     logLevel: 'error',
     banner: { js: BANNER },
+    // A reader of configuration files inside asks for it only where there is one in TypeScript.
+    external: ['typescript'],
     metafile: true,
   });
 }
@@ -88,10 +99,21 @@ function licences(paths) {
     .map((path) => {
       const packageFolder = path;
       const { name, version, license } = JSON.parse(readFileSync(join(packageFolder, 'package.json'), 'utf8'));
-      const file = readdirSync(packageFolder).find((entry) => /^licen[cs]e/i.test(entry));
-      const text = file === undefined ? NO_FILE[name] : readFileSync(join(packageFolder, file), 'utf8').trim();
-      if (text === undefined) throw new Error(`${name} has no licence file: add its text here`);
+      const text = licenceFile(packageFolder) ?? licenceSection(packageFolder) ?? NO_TEXT[name];
+      if (text === undefined) throw new Error(`${name} has no licence text: add it here`);
       return `${name} ${version} (${license})\n\n${text}\n`;
     })
     .join(`\n${'-'.repeat(72)}\n\n`);
+}
+
+function licenceFile(packageFolder) {
+  const file = readdirSync(packageFolder).find((entry) => /^licen[cs]e/i.test(entry));
+  return file && readFileSync(join(packageFolder, file), 'utf8').trim();
+}
+
+/** What a README says under the heading "License", where it begins with a copyright or a licence's name. */
+function licenceSection(packageFolder) {
+  const readme = join(packageFolder, 'README.md');
+  const text = existsSync(readme) ? readFileSync(readme, 'utf8') : '';
+  return /^#+ licen[cs]e\s+((?:The MIT License|Copyright)[^]*)$/im.exec(text)?.[1].trim();
 }

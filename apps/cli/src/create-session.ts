@@ -23,6 +23,7 @@ export function createSession(terminal: Terminal, options: OutputOptions, signal
   return {
     terminal,
     output,
+    signal,
     compute: async (limits, work) => {
       // Beside this module in the bundle; every module of the bundle lies in one folder.
       const worker = new URL('./worker.js', import.meta.url);

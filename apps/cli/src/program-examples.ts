@@ -1,4 +1,4 @@
-import { type Command, Option } from 'commander';
+import { Argument, type Command, Option } from 'commander';
 import {
   addVerb,
   collect,
@@ -64,7 +64,7 @@ function addDraft(program: Command, runVerb: RunVerb): void {
 
 function addSweep(program: Command, runVerb: RunVerb): void {
   addVerb(program, runVerb, 'sweep', 'compute constants over ranges of parameters of an example')
-    .addArgument(exampleArgument())
+    .addArgument(new Argument('[example]', 'folder with example.json, or archive'))
     .addOption(
       new Option('--over <name=range>', 'n=2:6, g=0.1:2:0.1, kind=a,b (repeatable; the last runs fastest)').argParser(
         collect,
@@ -76,10 +76,13 @@ function addSweep(program: Command, runVerb: RunVerb): void {
     .option('-o, --output <file>', 'keep finished points here; a sweep that was ended goes on from it')
     .option('--csv', 'print comma-separated values')
     .option('--differences <name>', 'also show differences between successive values of this parameter')
+    .option('--queue <url>', 'have workers on any machines compute it, by a job queue in this PostgreSQL database')
+    .option('--work', 'be such a worker until interrupted')
     .addHelpText(
       'after',
       examples([
         'thalweg sweep depolarising --over n=2:6 --only gap,cge -o sweep.jsonl',
+        'thalweg sweep --work --queue postgres://user@host/sweeps',
         'thalweg sweep oscillator --over N=2:12 --only gap --differences N --csv',
       ]),
     );

@@ -15,6 +15,8 @@ export interface ComputeLimits {
 export interface Session {
   readonly terminal: Terminal;
   readonly output: Output;
+  /** Aborted by an interrupt. */
+  readonly signal: AbortSignal;
   /** Gives `work` a pool of threads, and ends them when it is done. An interrupt ends them at once. */
   compute<Result>(limits: ComputeLimits, work: (pool: Pool<typeof TASKS>) => Promise<Result>): Promise<Result>;
   /**

@@ -9,7 +9,7 @@ import {
 export type EndDifference = ReproductionDocument['points'][number]['differences'][number];
 
 /** Ends closer than this, relative to the larger of 1 and their size, are the same: searches end there on every machine. */
-export const SAME_END = 1e-6;
+const SAME_END = 1e-6;
 
 const GRADES = ['observed', 'certified', 'enclosed', 'exact'];
 

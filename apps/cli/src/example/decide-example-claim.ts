@@ -5,7 +5,7 @@ import { claimValue } from './claim-value.js';
 export type DecidedClaim = ReproductionDocument['points'][number]['claims'][number];
 
 /** Rounding allowed to a claim, relative to the larger of 1 and its value. */
-export const CLAIM_SLACK = 1e-9;
+const CLAIM_SLACK = 1e-9;
 
 /**
  * Decides what an author claims from the bracket of its constant. An upper end, observed ones too, comes with a witness and so

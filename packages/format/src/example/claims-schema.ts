@@ -5,7 +5,7 @@ import { constantIdSchema, meanSchema } from '../schema/end-schema.js';
 import { finite, list, strict, text, withoutFault } from '../schema/fields.js';
 
 /** How a claim relates a constant to its value; `tends-to` is a limit, which no single point decides. */
-export const CLAIM_RELATIONS = ['at-least', 'at-most', 'equals', 'tends-to'] as const;
+const CLAIM_RELATIONS = ['at-least', 'at-most', 'equals', 'tends-to'] as const;
 
 /** The fields of a claim. */
 export const claimFields = {

@@ -9,7 +9,7 @@ import { parameterSchema } from './parameter-schema.js';
 import { isVersion } from './version.js';
 
 /** The name of an example: what stands behind the slash of `owner/slug`. */
-export const EXAMPLE_NAME = /^(?=.{2,64}$)[a-z0-9]+(-[a-z0-9]+)*$/;
+const EXAMPLE_NAME = /^(?=.{2,64}$)[a-z0-9]+(-[a-z0-9]+)*$/;
 
 /** One line of text. */
 const line = text.regex(/^[^\r\n]*\S[^\r\n]*$/, 'expected one line of text');

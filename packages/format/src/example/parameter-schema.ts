@@ -4,7 +4,7 @@ import { EXAMPLE_LIMITS } from '../limits.js';
 import { finite, strict, text, withoutFault } from '../schema/fields.js';
 
 /** The name of a parameter: what stands before = in `--set n=3`, and a property of the generator's argument. */
-export const PARAMETER_NAME = /^[A-Za-z][A-Za-z0-9_]{0,31}$/;
+const PARAMETER_NAME = /^[A-Za-z][A-Za-z0-9_]{0,31}$/;
 
 const name = z.string().regex(PARAMETER_NAME, 'expected a name of 1 to 32 letters, digits and _, a letter first');
 

@@ -9,7 +9,7 @@ import { fullPointSchema } from './showcase-schema.js';
  * How an end of a bracket stands to the recorded one: `contradicts` where the new bracket and the recorded one have no common
  * value, else in which way it differs.
  */
-export const END_CHANGES = ['contradicts', 'tighter', 'looser', 'weaker-grade', 'stronger-grade'] as const;
+const END_CHANGES = ['contradicts', 'tighter', 'looser', 'weaker-grade', 'stronger-grade'] as const;
 
 const endDifferenceSchema = strict({
   constant: constantIdSchema,
@@ -24,7 +24,7 @@ const endDifferenceSchema = strict({
  * A claim is `proved` by the ends of its bracket, `refuted` by one of them, `supported` where a search for a counterexample found
  * none but no end proves it, `open` otherwise; a `limit` is decided at no single point.
  */
-export const CLAIM_STATES = ['proved', 'supported', 'open', 'refuted', 'limit'] as const;
+const CLAIM_STATES = ['proved', 'supported', 'open', 'refuted', 'limit'] as const;
 
 const decidedClaimSchema = strict({ ...claimFields, state: z.enum(CLAIM_STATES), bracket: strict(bracketFields) });
 

@@ -1,4 +1,5 @@
-import type { ParameterPoint, PointDocument } from '@thalweg/format';
+import type { RowKey } from '@thalweg/core';
+import type { ExamplePackage, ParameterPoint, PointDocument, SweepDocument } from '@thalweg/format';
 import { pointKey } from '../../example/recorded-sheet.js';
 import { EXIT_STATUS, type ExitStatus } from '../../exit-status.js';
 import { readPackage } from '../../input/read-package.js';
@@ -7,24 +8,32 @@ import { printSweep } from '../../render/print-sweep.js';
 import type { Session } from '../../session.js';
 import { sheetRequest } from '../../sheet/compute-sheet.js';
 import { rowKeys } from '../../sheet/row-keys.js';
-import { computePoints, type SweepJob } from '../../sweep/compute-points.js';
+import { computePoints } from '../../sweep/compute-points.js';
 import { openJournal, rewriteJournal, type Journal } from '../../sweep/journal.js';
 import { remainingTime } from '../../sweep/remaining-time.js';
 import { sweepDocument } from '../../sweep/sweep-document.js';
 import { limitsOf } from '../../sweep/sweep-limits.js';
 import { sweepPoints } from '../../sweep/sweep-points.js';
-import type { SweepPlan } from './plan.js';
+import type { ComputePlan, SweepPlan } from './plan.js';
 
-/** Computes constants over ranges of parameters. Ends with `no` when a point failed, with `try again` when points are left. */
+/** Computes constants over ranges of parameters, here or by workers, or works for others. */
 export async function sweepEffect(plan: SweepPlan, session: Session): Promise<ExitStatus> {
+  if (!plan.work) return computeSweep(plan, session);
+  const { queue, threads } = plan;
+  const { withQueue, workOnQueue } = await import('../../queue/index.js');
+  await withQueue(queue, session.signal, (pool) => workOnQueue(pool, threads, session));
+  return EXIT_STATUS.yes;
+}
+
+/** Ends with `no` when a point failed, with `try again` when points are left. */
+async function computeSweep(plan: ComputePlan, session: Session): Promise<ExitStatus> {
   if (plan.output !== null) await requireTarget(plan.output);
   const example = await readPackage(plan.example, session.terminal.stdin);
   const points = sweepPoints(example.document, plan);
   const rows = rowKeys(plan);
   const sweep = sweepDocument(example, rows, plan);
   const journal = plan.output === null ? null : await openJournal(plan.output, sweep);
-  const job = { example, request: sheetRequest(rows, plan.seed), convention: plan.convention };
-  const found = await collect(job, points, journal, plan, session);
+  const found = await collect({ example, rows, sweep }, points, journal, plan, session);
   await journal?.close();
   const done = points.flatMap((point) => found.get(pointKey(point)) ?? []);
   if (plan.output !== null && journal !== null && done.length === points.length) {
@@ -39,10 +48,10 @@ export async function sweepEffect(plan: SweepPlan, session: Session): Promise<Ex
 
 /** Computes what the journal does not hold, and adds it there. */
 async function collect(
-  job: SweepJob,
+  task: SweepTask,
   points: readonly ParameterPoint[],
   journal: Journal | null,
-  plan: SweepPlan,
+  plan: ComputePlan,
   session: Session,
 ): Promise<Map<string, PointDocument>> {
   const found = new Map(journal?.finished);
@@ -57,7 +66,7 @@ async function collect(
       session.keep(`${count} of ${points.length} points are in ${plan.output}; the same command goes on`);
   };
   tell();
-  await computePoints(job, left, plan, session, async (point) => {
+  await computeLeft(task, left, plan, session, async (point) => {
     found.set(pointKey(point.parameters), point);
     if (point.sheet !== null) await journal?.append(point);
     done += 1;
@@ -65,6 +74,30 @@ async function collect(
   });
   session.output.progress('');
   return found;
+}
+
+interface SweepTask {
+  readonly example: ExamplePackage;
+  readonly rows: readonly RowKey[];
+  readonly sweep: SweepDocument;
+}
+
+/** On the threads of this program, or by the workers of a queue. */
+async function computeLeft(
+  { example, rows, sweep }: SweepTask,
+  left: readonly ParameterPoint[],
+  plan: ComputePlan,
+  session: Session,
+  onPoint: (point: PointDocument) => Promise<void>,
+): Promise<void> {
+  const { queue, seed, convention } = plan;
+  if (queue === null || left.length === 0) {
+    return computePoints({ example, request: sheetRequest(rows, seed), convention }, left, plan, session, onPoint);
+  }
+  const { computeByWorkers, withQueue } = await import('../../queue/index.js');
+  await withQueue(queue, session.signal, (pool) =>
+    computeByWorkers(pool, sweep, example, left, plan, session, onPoint),
+  );
 }
 
 /** Points worth keeping: those asked for, then others of the file; failed ones are tried again. */
@@ -75,7 +108,7 @@ function kept(found: ReadonlyMap<string, PointDocument>, done: readonly PointDoc
 function statusOf(
   points: readonly ParameterPoint[],
   done: readonly PointDocument[],
-  { output }: SweepPlan,
+  { output }: ComputePlan,
   session: Session,
 ): ExitStatus {
   const failed = done.filter(({ sheet }) => sheet === null).length;
