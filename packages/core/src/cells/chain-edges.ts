@@ -1,7 +1,9 @@
 import { ThalwegError } from '../errors.js';
 import { log } from '../checker/arithmetic/interval-log.js';
 import { type Interval, ZERO, add, div, mul, point, sub } from '../checker/arithmetic/interval.js';
-import type { ChainRates } from './chain-forms.js';
+
+/** Rates x→y of a chain in the order of a chart, row x, column y, each enclosed; the diagonal is not read. */
+export type ChainRates = readonly (readonly Interval[])[];
 
 /** An unordered pair of points x < y with rates, and its functionals in the coordinates of a spanning tree. */
 export interface ChainEdge {

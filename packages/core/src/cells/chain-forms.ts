@@ -1,5 +1,5 @@
 import { type Interval, ONE, ZERO, add, mul, neg, point, sub } from '../checker/arithmetic/interval.js';
-import { type ChainEdge, chainEdges } from './chain-edges.js';
+import { type ChainEdge, type ChainRates, chainEdges } from './chain-edges.js';
 import { type Cell, coordinateJets, isBounded } from './cell.js';
 import type { CellForms, FormsOnCell } from './cell-forms.js';
 import {
@@ -15,9 +15,6 @@ import {
   subJet,
 } from './jet.js';
 import { isPathCorner, pathCorner } from './path-corner.js';
-
-/** Rates x→y of a chain in the order of a chart, row x, column y, each enclosed; the diagonal is not read. */
-export type ChainRates = readonly (readonly Interval[])[];
 
 /**
  * The form over the measures with ρ_1 ≥ … ≥ ρ_n, log(ρ_i/ρ_{i+1}) = y_i ∈ [0,∞] in the coordinates of `chainEdges`. With

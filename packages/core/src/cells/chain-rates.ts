@@ -1,7 +1,7 @@
 import { isCommutative } from '../algebra/block-algebra.js';
 import { type Interval, ZERO, add, mul, point, sqr } from '../checker/arithmetic/interval.js';
 import type { Generator } from '../generator/generator.js';
-import type { ChainRates } from './chain-forms.js';
+import type { ChainRates } from './chain-edges.js';
 import { RATE_ROOM } from './limits.js';
 
 /**

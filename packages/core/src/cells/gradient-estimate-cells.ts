@@ -1,7 +1,8 @@
 import type { Structure } from '../structure/structure.js';
 import { proveOverCells } from './branch-and-bound.js';
 import type { CellForms } from './cell-forms.js';
-import { type ChainRates, chainForms } from './chain-forms.js';
+import type { ChainRates } from './chain-edges.js';
+import { chainForms } from './chain-forms.js';
 import { chainRates } from './chain-rates.js';
 import {
   CELL_BUDGET,

@@ -2,7 +2,7 @@ import { expDifference } from '../checker/arithmetic/exp-difference.js';
 import { log } from '../checker/arithmetic/interval-log.js';
 import { type Interval, ONE, ZERO, add, div, mul, neg, point, sqr, sub } from '../checker/arithmetic/interval.js';
 import type { Cell } from './cell.js';
-import type { ChainRates } from './chain-forms.js';
+import type { ChainRates } from './chain-edges.js';
 
 /**
  * Three points in a row, ρ_1 ≥ ρ_2 ≥ ρ_3, over the corner y_1 ≥ Y_1, y_2 ≥ Y_2, where a positive factor of the second difference tends
