@@ -2,7 +2,7 @@ import { fromCoordinates } from '../algebra/block-algebra.js';
 import { choleskyRealInto, choleskySolveReal } from '../linalg/cholesky-real.js';
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
 import { EPSILON } from '../tolerances.js';
-import { DUAL_HALVINGS, DUAL_RIDGE, DUAL_STEPS, METRIC_ROUNDING } from './tolerances.js';
+import { DUAL_HALVINGS, DUAL_RIDGE, DUAL_STEPS, METRIC_ROUNDING, SLOPE_ROUNDING } from './tolerances.js';
 import type { DiscretePath } from './discrete-path.js';
 import type { MetricAt, MetricKernel } from './metric-kernel.js';
 import type { Control, PotentialSpline } from './potential-spline.js';
@@ -49,7 +49,7 @@ export function dualBound(
     const found = supportingBound(kernel, space, control, start, tolerance);
     if (!found) return null;
     value -= control.weight * found.value;
-    margin += control.weight * found.margin;
+    margin += control.weight * found.margin + SLOPE_ROUNDING * EPSILON * norm(control.point);
   }
   return { value, margin };
 }

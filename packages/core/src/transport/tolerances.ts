@@ -18,7 +18,7 @@ export const ACTION_HALVINGS = 40;
 export const ACTION_RIDGES = [0, 1e-12, 1e-9, 1e-6, 1e-3, 1] as const;
 
 /** Multiple of D·2⁻⁵² taken as the relative error of a metric matrix, a gradient of the metric, and sums over them. */
-export const METRIC_ROUNDING = 16;
+export const METRIC_ROUNDING = 256;
 
 /** A straight piece from the boundary of state space is cut at powers of the ratio, this many times. */
 export const BOUNDARY_RATIO = 0.84;
@@ -34,14 +34,18 @@ export const DISTANCE_COARSEST = 8;
 export const DISTANCE_FINEST = 1024;
 export const DISTANCE_PARTS = 4;
 
+/** Multiple of 2⁻⁵² by which the derivative of a potential, times its share of time, may be off, relative to the potential. */
+export const SLOPE_ROUNDING = 8;
+
 /** Share of the width asked for that the search for supporting states may leave. */
 export const DUAL_SHARE = 0.02;
 
 /** How far a first path between states that are not faithful is bent towards their projection. */
 export const BENT_PATH = 0.3;
 
-/** Largest dimension of an algebra for transport distances. */
-export const TRANSPORT_LIMIT = 256;
+/** Largest dimension of an algebra for transport distances; of a commutative one. */
+export const TRANSPORT_LIMIT = 64;
+export const CHAIN_TRANSPORT_LIMIT = 256;
 
 /** Eigenvalue of a state below which it is treated as one on the boundary of state space. */
 export const BOUNDARY_EIGENVALUE = 1e-12;

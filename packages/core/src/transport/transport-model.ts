@@ -1,8 +1,9 @@
+import { isCommutative } from '../algebra/block-algebra.js';
 import { ThalwegError } from '../errors.js';
 import { hasGradientMetric } from '../sheet/hypotheses.js';
 import { metricOf } from '../sheet/run-sheet-task.js';
 import type { Structure } from '../structure/structure.js';
-import { TRANSPORT_LIMIT } from './tolerances.js';
+import { CHAIN_TRANSPORT_LIMIT, TRANSPORT_LIMIT } from './tolerances.js';
 import { type MetricKernel, metricKernel } from './metric-kernel.js';
 import { type TangentSpace, tangentSpace } from './tangent-space.js';
 
@@ -15,7 +16,7 @@ export interface TransportModel {
 
 /**
  * Prepare the transport metric. Throws `not-symmetric` without GNS symmetry, on which the metric rests, and `too-large` above
- * dimension TRANSPORT_LIMIT.
+ * TRANSPORT_LIMIT.
  */
 export function transportModel(structure: Structure): TransportModel {
   const known = models.get(structure);
@@ -27,10 +28,12 @@ export function transportModel(structure: Structure): TransportModel {
     );
   }
   const { dimension } = structure.algebra;
-  if (dimension > TRANSPORT_LIMIT || !structure.fixedPoints) {
+  const isChain = isCommutative(structure.algebra);
+  const limit = isChain ? CHAIN_TRANSPORT_LIMIT : TRANSPORT_LIMIT;
+  if (dimension > limit || !structure.fixedPoints) {
     throw new ThalwegError(
       'too-large',
-      `expected an algebra of dimension ${TRANSPORT_LIMIT} at most for a transport distance, got ${dimension}; reduce the model`,
+      `expected ${isChain ? 'a chain of' : 'an algebra of dimension'} ${limit} ${isChain ? 'points ' : ''}at most for a transport distance, got ${dimension}; reduce the model`,
     );
   }
   const metric = metricOf(structure);

@@ -71,7 +71,12 @@ function geodesicOf(model: TransportModel, found: TransportDistance, points: num
 
 function notesOf({ structure }: TransportModel, { endpoints, reached, upper }: TransportDistance): string[] {
   const notes: string[] = [];
-  const { onBoundary, relation } = endpoints;
+  const { onBoundary, relation, moved } = endpoints;
+  if (moved > 0) {
+    notes.push(
+      `The matrices given were moved by ${moved.toPrecision(2)} (Hilbert–Schmidt norm) to be states with one E†ρ; the distance is theirs.`,
+    );
+  }
   if (relation === 'apart' && (onBoundary[0] || onBoundary[1])) {
     const which =
       onBoundary[0] && onBoundary[1] ? 'Both states lie' : `The ${onBoundary[0] ? 'first' : 'second'} state lies`;
