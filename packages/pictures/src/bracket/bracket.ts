@@ -3,6 +3,7 @@ import { type TextStyle, textLine, TYPE, textWidth } from '../svg/text.js';
 import { element, pathData } from '../svg/element.js';
 import { tickTexts } from '../svg/number-text.js';
 import { paint } from '../svg/palette.js';
+import { tickLabels } from '../svg/tick-labels.js';
 import { type PictureOptions, MARGIN, foot, head, picture } from '../svg/picture.js';
 import { type Axis, gaugeAxis } from './gauge-axis.js';
 import { gauge, gradeKey } from './gauge.js';
@@ -57,7 +58,7 @@ export function bracket(data: BracketData, options: PictureOptions = {}): string
   const body = [
     ...top.lines,
     ...heads(columns, start - 16),
-    ...(axis && scale ? scaleLines(axis, scale, start - 8, end - 8) : []),
+    ...(axis && scale ? scaleLines(axis, scale, columns.gauge, start - 8, end - 8) : []),
     ...data.rows.flatMap((row, k) =>
       rowOf(row, texts[k] ?? { lower: '', upper: '' }, columns, scale, start + ROW * k + 8),
     ),
@@ -137,16 +138,24 @@ function heads({ name, gauge: [left, right] }: Columns, y: number): string[] {
 }
 
 /** Numbers of the axis and hairlines down the rows. */
-function scaleLines({ ticks }: Axis, scale: (value: number) => number, top: number, bottom: number): string[] {
+function scaleLines(
+  { ticks }: Axis,
+  scale: (value: number) => number,
+  [left, right]: Columns['gauge'],
+  top: number,
+  bottom: number,
+): string[] {
   const texts = tickTexts(ticks);
-  return ticks.flatMap((tick, k) => {
-    const x = scale(tick);
-    const d = pathData([[x, top], [x, bottom]]); // prettier-ignore
-    return [
-      element('path', { d, 'stroke-width': tick === 0 ? 1 : 0.6, ...paint({ stroke: 'hair' }) }),
-      textLine(x, top - 8, texts[k] ?? '', { size: TYPE.small, colour: 'ink2', anchor: 'middle' }),
-    ];
+  const lines = ticks.map((tick) => {
+    const d = pathData([[scale(tick), top], [scale(tick), bottom]]); // prettier-ignore
+    return element('path', { d, 'stroke-width': tick === 0 ? 1 : 0.6, ...paint({ stroke: 'hair' }) });
   });
+  const places = ticks.map((tick, k) => ({ x: scale(tick), text: texts[k] ?? '' }));
+  const style = { size: TYPE.small, colour: 'ink2', anchor: 'middle' } as const;
+  return [
+    ...lines,
+    ...tickLabels(places, [left - GAP + 4, right + GAP - 4]).map(({ x, text }) => textLine(x, top - 8, text, style)),
+  ];
 }
 
 function rowOf(

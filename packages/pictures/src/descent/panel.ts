@@ -1,5 +1,6 @@
 import { scaleLinear, scaleLog } from 'd3-scale';
 import { element, pathData } from '../svg/element.js';
+import { tickLabels } from '../svg/tick-labels.js';
 import { spreadApart } from '../svg/spread-apart.js';
 import { numberText, tickTexts } from '../svg/number-text.js';
 import { type Paint, paint } from '../svg/palette.js';
@@ -25,7 +26,7 @@ export interface PanelSpec {
   readonly labelRoom: number;
 }
 
-const LEFT = 44;
+const LEFT = 50;
 const DASHES = ['', '7 3', '2 3', '9 3 2 3'];
 const LABEL_STEP = 13;
 
@@ -51,7 +52,7 @@ export function panel(spec: PanelSpec): { readonly body: string[]; readonly bott
   } else {
     const value = scaleLog(domain, [box.bottom, box.top]).clamp(true);
     const place = (curve: Curve): [number, number][] =>
-      curve.points.flatMap(([t, v]): [number, number][] => (v > 0 ? [[time(t), value(v)]] : []));
+      curve.points.flatMap(([t, v]): [number, number][] => (isDrawn(v) ? [[time(t), value(v)]] : []));
     body.push(...valueAxis(domain, value, box), ground(place(flow), box));
     bounds.forEach((bound, k) =>
       body.push(line(place(bound), { stroke: 'water' }, 1.4, DASHES[k % DASHES.length] ?? '')),
@@ -62,11 +63,18 @@ export function panel(spec: PanelSpec): { readonly body: string[]; readonly bott
   return { body, bottom: box.bottom + (timeLabels ? 20 : 6) };
 }
 
+/** Smaller values have no place on a scale whose ends are doubles. */
+const LEAST_DRAWN = 1e-250;
+
+function isDrawn(value: number): boolean {
+  return value > LEAST_DRAWN;
+}
+
 /** From the least to the largest positive value, whole decades where it spans more than one. */
 function valueDomain(flow: Curve, bounds: readonly Curve[]): [number, number] | null {
-  const own = flow.points.map(([, v]) => v).filter((v) => v > 0);
+  const own = flow.points.map(([, v]) => v).filter(isDrawn);
   if (own.length === 0) return null;
-  const all = bounds.flatMap(({ points }) => points.map(([, v]) => v)).filter((v) => v > 0);
+  const all = bounds.flatMap(({ points }) => points.map(([, v]) => v)).filter(isDrawn);
   const low = Math.min(...own);
   const high = Math.max(...own, ...all);
   const room = Math.max(1.3, (high / low) ** 0.03);
@@ -103,18 +111,16 @@ function valueAxis(domain: readonly [number, number], value: (v: number) => numb
 function timeAxis(ticks: readonly number[], time: (t: number) => number, box: Box, labels: boolean): string[] {
   const texts = tickTexts(ticks);
   const axis = line([[box.left, box.top], [box.left, box.bottom], [box.right, box.bottom]], { stroke: 'ink' }, 1, ''); // prettier-ignore
-  const marks = ticks.flatMap((tick, k) => {
-    const x = time(tick);
-    const mark = line([[x, box.bottom], [x, box.bottom + 4]], { stroke: 'ink' }, 1, ''); // prettier-ignore
-    if (!labels) return [mark];
-    return [mark, textLine(x, box.bottom + 17, texts[k] ?? '', { size: TYPE.small, anchor: 'middle', colour: 'ink2' })];
-  });
+  const marks = ticks.map((tick) => line([[time(tick), box.bottom], [time(tick), box.bottom + 4]], { stroke: 'ink' }, 1, '')); // prettier-ignore
+  if (!labels) return [axis, ...marks];
+  const places = ticks.map((tick, k) => ({ x: time(tick), text: texts[k] ?? '' }));
+  const shown = tickLabels(places, [box.left - LEFT, box.right + LEFT]);
+  const style = { size: TYPE.small, colour: 'ink2' } as const;
+  const numbers = shown.map(({ x, text }) => textLine(x, box.bottom + 17, text, { ...style, anchor: 'middle' }));
   // Beside the last number, however wide that is.
-  const last = textWidth(texts.at(-1) ?? '', TYPE.small) / 2;
-  const name = labels
-    ? [textLine(time(ticks.at(-1) ?? 0) + last + 8, box.bottom + 17, 't', { size: TYPE.small, colour: 'ink2' })]
-    : [];
-  return [axis, ...marks, ...name];
+  const last = shown.at(-1) ?? { x: box.right, text: '' };
+  const name = textLine(last.x + textWidth(last.text, TYPE.small) / 2 + 8, box.bottom + 17, 't', style);
+  return [axis, ...marks, ...numbers, name];
 }
 
 /** The land below the flow. */

@@ -2,6 +2,7 @@ import { scaleLinear } from 'd3-scale';
 import { element, pathData } from '../svg/element.js';
 import { tickTexts } from '../svg/number-text.js';
 import { paint } from '../svg/palette.js';
+import { tickLabels } from '../svg/tick-labels.js';
 import { TYPE, textLine } from '../svg/text.js';
 import type { Point } from './contour-lines.js';
 import type { Projection } from './projection.js';
@@ -27,13 +28,13 @@ function coordinateFrame({ slice }: ReliefData, { to, left, right, bottom, top, 
   const xs = scaleLinear(domain.x, [0, 1]).ticks(disc ? 4 : 5);
   const ys = scaleLinear(domain.y, [0, 1]).ticks(disc ? 4 : 5);
   const [xTexts, yTexts] = [tickTexts(xs), tickTexts(ys)];
-  const across = xs.flatMap((tick, k) => {
-    const [x] = to([tick, 0]);
-    return [
-      mark([[x, bottom + GAP], [x, bottom + GAP + TICK]]), // prettier-ignore
-      textLine(x, bottom + GAP + TICK + 12, xTexts[k] ?? '', { ...style, anchor: 'middle' }),
-    ];
-  });
+  const places = xs.map((tick, k) => ({ x: to([tick, 0])[0], text: xTexts[k] ?? '' }));
+  const across = [
+    ...places.map(({ x }) => mark([[x, bottom + GAP], [x, bottom + GAP + TICK]])), // prettier-ignore
+    ...tickLabels(places, [left - 3 * GAP, right + 3 * GAP]).map(({ x, text }) =>
+      textLine(x, bottom + GAP + TICK + 12, text, { ...style, anchor: 'middle' }),
+    ),
+  ];
   const up = ys.flatMap((tick, k) => {
     const [, y] = to([0, tick]);
     return [

@@ -3,6 +3,7 @@ import { element, pathData } from '../svg/element.js';
 import { numberText, tickTexts } from '../svg/number-text.js';
 import { type Paint, paint } from '../svg/palette.js';
 import { type PictureOptions, MARGIN, foot, head, picture } from '../svg/picture.js';
+import { tickLabels } from '../svg/tick-labels.js';
 import { TYPE, textLine, textWidth } from '../svg/text.js';
 import { type Cluster, clusterEigenvalues } from './cluster-eigenvalues.js';
 
@@ -15,7 +16,6 @@ export interface SpectrumData {
 const WIDTH = 480;
 const LINE_HEIGHT = 120;
 const PLANE_HEIGHT = 230;
-const PLANE_LEFT = MARGIN + 44;
 const RIGHT = WIDTH - MARGIN - 26;
 
 interface Box {
@@ -29,7 +29,7 @@ export function spectrum(data: SpectrumData, options: PictureOptions = {}): stri
   const clusters = clusterEigenvalues(data.eigenvalues);
   const real = clusters.every(({ im }) => im === 0);
   const top = head(WIDTH, data.title, `Spectrum of −L, ${data.eigenvalues.length} eigenvalues`);
-  const left = real ? MARGIN : PLANE_LEFT;
+  const left = real ? MARGIN : planeLeft(clusters);
   const box = {
     left,
     top: top.bottom + (real ? 14 : 24),
@@ -72,13 +72,12 @@ function stems(clusters: readonly Cluster[], box: Box): string[] {
 
 function points(clusters: readonly Cluster[], box: Box): string[] {
   const x = rateScale(clusters, box);
-  const reach = Math.max(...clusters.map(({ im }) => Math.abs(im)));
-  const y = scaleLinear([-reach * 1.12, reach * 1.12], [box.bottom, box.top]);
+  const y = imaginaryScale(clusters).range([box.bottom, box.top]);
   const ticks = y.ticks(5);
   const texts = tickTexts(ticks);
   const grid = ticks.flatMap((tick, k) => [
     line([[box.left, y(tick)], [RIGHT, y(tick)]], { stroke: 'hair' }, tick === 0 ? 1 : 0.6), // prettier-ignore
-    textLine(box.left - 10, y(tick) + 4, texts[k] ?? '', { size: TYPE.small, colour: 'ink2', anchor: 'end' }),
+    textLine(box.left - 8, y(tick) + 4, texts[k] ?? '', { size: TYPE.small, colour: 'ink2', anchor: 'end' }),
   ]);
   const gap = slowest(clusters);
   const dots = clusters.map(({ re, im, count }) =>
@@ -90,9 +89,20 @@ function points(clusters: readonly Cluster[], box: Box): string[] {
       ...paint({ fill: 'contour', stroke: 'ground' }),
     }),
   );
-  const side = textLine(box.left - 10, box.top - 5, 'Im', { size: TYPE.small, colour: 'ink2', anchor: 'end' });
+  const side = textLine(box.left + 7, box.top + 6, 'Im', { size: TYPE.small, colour: 'ink2' });
   const edge = line([[box.left, box.top], [box.left, box.bottom]], { stroke: 'ink' }, 1); // prettier-ignore
   return [...grid, edge, side, ...rateAxis(x, box), ...(gap === null ? [] : gapMark(x(0), x(gap), gap, box)), ...dots];
+}
+
+function imaginaryScale(clusters: readonly Cluster[]): ScaleLinear<number, number> {
+  const reach = 1.12 * Math.max(...clusters.map(({ im }) => Math.abs(im)));
+  return scaleLinear([-reach, reach], [0, 1]);
+}
+
+/** Where the plane begins: behind the widest number of its side. */
+function planeLeft(clusters: readonly Cluster[]): number {
+  const texts = tickTexts(imaginaryScale(clusters).ticks(5));
+  return MARGIN + Math.max(...texts.map((text) => textWidth(text, TYPE.small))) + 10;
 }
 
 function rateScale(clusters: readonly Cluster[], { left }: Box): ScaleLinear<number, number> {
@@ -103,12 +113,14 @@ function rateScale(clusters: readonly Cluster[], { left }: Box): ScaleLinear<num
 function rateAxis(x: ScaleLinear<number, number>, box: Box): string[] {
   const ticks = x.ticks(6);
   const texts = tickTexts(ticks);
-  const marks = ticks.flatMap((tick, k) => [
-    line([[x(tick), box.bottom], [x(tick), box.bottom + 5]], { stroke: 'ink' }, 1), // prettier-ignore
-    textLine(x(tick), box.bottom + 18, texts[k] ?? '', { size: TYPE.small, colour: 'ink2', anchor: 'middle' }),
-  ]);
+  const marks = ticks.map((tick) => line([[x(tick), box.bottom], [x(tick), box.bottom + 5]], { stroke: 'ink' }, 1)); // prettier-ignore
+  const places = ticks.map((tick, k) => ({ x: x(tick), text: texts[k] ?? '' }));
+  const style = { size: TYPE.small, colour: 'ink2', anchor: 'middle' } as const;
+  const labels = tickLabels(places, [MARGIN - 6, WIDTH - MARGIN]).map((label) =>
+    textLine(label.x, box.bottom + 18, label.text, style),
+  );
   const name = textLine(RIGHT + 4, box.bottom + 4, 'rate', { size: TYPE.small, colour: 'ink2' });
-  return [line([[box.left, box.bottom], [RIGHT, box.bottom]], { stroke: 'ink' }, 1), ...marks, name]; // prettier-ignore
+  return [line([[box.left, box.bottom], [RIGHT, box.bottom]], { stroke: 'ink' }, 1), ...marks, ...labels, name]; // prettier-ignore
 }
 
 /** A water-blue span from 0 to the slowest decay, below the axis. */

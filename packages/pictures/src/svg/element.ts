@@ -11,14 +11,14 @@ export function element(name: string, attributes: Attributes, ...children: reado
   return children.length === 0 ? `${open}/>` : `${open}>${children.join('')}</${name}>`;
 }
 
-/** Text content and attribute values. Characters that XML forbids become U+FFFD. */
+/** Text content and attribute values. Characters that XML forbids become spaces. */
 export function escapeText(text: string): string {
   return text
     .replaceAll('&', '&amp;')
     .replaceAll('<', '&lt;')
     .replaceAll('>', '&gt;')
     .replaceAll('"', '&quot;')
-    .replace(FORBIDDEN, '�');
+    .replace(FORBIDDEN, ' ');
 }
 
 /** Control characters, lone surrogates and non-characters (XML 1.0, §2.2). */
