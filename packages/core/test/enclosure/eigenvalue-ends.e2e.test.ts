@@ -20,6 +20,9 @@ import { exactInertia } from './exact-inertia.js';
 
 const WELL_CONDITIONED = 1e-10;
 
+/** Milliseconds that the reference may take on a busy machine; three seconds are usual. */
+const REFERENCE_TIME = 120_000;
+
 /** Random Hermitian jumps, so many that the forms vanish on the multiples of the identity alone. */
 function randomJumps(seed: string, n: number, count: number): Generator {
   const random = seededRandom(`enclosed ${seed}`);
@@ -68,7 +71,7 @@ describe('the gap lies in its enclosure: eigenvalues of −L below each end, cou
         bounds: [lo, hi],
       })),
     );
-  });
+  }, REFERENCE_TIME);
 
   test.each(found.map((x, k) => [x.name, x, k] as const))('%s', (_, { structure, lo, hi }, k) => {
     const [below, above] = counted[k];
@@ -99,7 +102,7 @@ describe('cbe lies in its enclosure: Γ₂ − KΓ is positive at the lower end 
         bounds: [lower ?? NaN, upper ?? NaN],
       })),
     );
-  });
+  }, REFERENCE_TIME);
 
   test.each(found.map((x, k) => [x.name, x, k] as const))('%s', (_, { lower, upper }, k) => {
     const [below, above] = counted[k];
