@@ -2,12 +2,12 @@ import { type Interval, ONE, ZERO, add, mul, neg, point, sub } from '../checker/
 import { type ChainEdge, type ChainRates, chainEdges } from './chain-edges.js';
 import { type Cell, coordinateJets, isBounded } from './cell.js';
 import type { CellForms, FormsOnCell } from './cell-forms.js';
+import { type ExpTable, expTable } from './exp-table.js';
 import {
   type Jet,
   addJet,
   constantJet,
   expDifferenceJet,
-  expJet,
   loweredJet,
   mulJet,
   negJet,
@@ -27,31 +27,34 @@ export function chainForms(rates: ChainRates): CellForms {
   const n = rates.length;
   const side = n - 1;
   const out = rates.map((row, x) => row.reduce((sum, r, y) => (y === x ? sum : add(sum, r)), ZERO));
-  const edges = chainEdges(rates);
+  const model: ChainModel = { rates, out, edges: chainEdges(rates), table: expTable() };
   return {
     side,
     root: new Array<Interval>(side).fill({ lo: 0, hi: Infinity }),
     at: (cell, k) => {
-      const forms = evaluate(rates, out, edges, cell, k);
+      const forms = evaluate(model, cell, k);
       return isPathCorner(rates, cell) ? { ...forms, below: pathCorner(rates, cell, k) } : forms;
     },
   };
 }
 
-function evaluate(
-  rates: ChainRates,
-  out: readonly Interval[],
-  edges: readonly ChainEdge[],
-  cell: Cell,
-  k: number,
-): FormsOnCell {
+interface ChainModel {
+  readonly rates: ChainRates;
+  /** Σ_v r_xv. */
+  readonly out: readonly Interval[];
+  readonly edges: readonly ChainEdge[];
+  readonly table: ExpTable;
+}
+
+function evaluate(model: ChainModel, cell: Cell, k: number): FormsOnCell {
+  const { rates, out, edges, table } = model;
   const side = cell.length;
   const y = coordinateJets(cell);
   const parameters = y[0].slopes.length;
   const zero = constantJet(ZERO, parameters);
   const logs = [zero];
   y.forEach((step) => logs.push(subJet(logs[logs.length - 1], step)));
-  const rho = logs.map((x) => (x === zero ? constantJet(ONE, parameters) : expJet(x)));
+  const rho = logs.map((x) => (x === zero ? constantJet(ONE, parameters) : expDifferenceJet(table, 0, 1, x)));
   const inflow = rho.map((_, x) => {
     let sum = zero;
     rates.forEach((row, v) => {
@@ -63,7 +66,7 @@ function evaluate(
   const jets = new Array<Jet>(side * side).fill(zero);
   let exact = true;
   for (const edge of edges) {
-    const { growth, first, second } = coefficients(edge, rates, rho, y, inflow);
+    const { growth, first, second } = coefficients(model, edge, rho, y, inflow);
     const half = point(0.5);
     const lowered = loweredJet(growth);
     exact &&= lowered.exact;
@@ -89,8 +92,8 @@ function evaluate(
 
 /** r_xyΛ₁ in_x + r_yxΛ₂ in_y, sΛ₁ and tΛ₂ of one edge. */
 function coefficients(
+  { rates, table }: ChainModel,
   { x, y, bias }: ChainEdge,
-  rates: ChainRates,
   rho: readonly Jet[],
   steps: readonly Jet[],
   inflow: readonly Jet[],
@@ -100,10 +103,10 @@ function coefficients(
   for (let k = x; k < y; k++) u = addJet(u, steps[k]);
   const minus = negJet(u);
   const s = scaleJet(rho[x], rates[x][y]);
-  const alpha = expDifferenceJet(2, 1, minus);
+  const alpha = expDifferenceJet(table, 2, 1, minus);
   const growth = addJet(
     scaleJet(mulJet(alpha, inflow[x]), rates[x][y]),
-    scaleJet(mulJet(expDifferenceJet(2, 1, u), inflow[y]), rates[y][x]),
+    scaleJet(mulJet(expDifferenceJet(table, 2, 1, u), inflow[y]), rates[y][x]),
   );
-  return { growth, first: mulJet(s, alpha), second: mulJet(s, expDifferenceJet(1, 2, minus)) };
+  return { growth, first: mulJet(s, alpha), second: mulJet(s, expDifferenceJet(table, 1, 2, minus)) };
 }

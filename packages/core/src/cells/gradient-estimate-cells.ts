@@ -12,7 +12,6 @@ import {
   COARSE_WIDTH,
   FIRST_SHARE,
   FIRST_WIDTH,
-  NEXT_WIDTHS,
   SECOND_WIDTH,
 } from './limits.js';
 import { qubitAxes } from './qubit-axes.js';
@@ -68,15 +67,8 @@ function boundOnCharts(charts: readonly CellForms[], target: CellTarget): CellBo
   if (!first && target.upper - FIRST_WIDTH * target.scale > target.lower) return attempt(COARSE_WIDTH);
   const second = attempt(SECOND_WIDTH);
   if (!second) return first;
-  const closing = !first || second.cells <= CLOSING_GROWTH * first.cells ? attempt(CLOSING_WIDTH) : null;
-  if (closing) return closing;
-  let best = second;
-  for (const width of NEXT_WIDTHS) {
-    const next = attempt(width);
-    if (!next) break;
-    best = next;
-  }
-  return best;
+  const isSmooth = !first || second.cells <= CLOSING_GROWTH * first.cells;
+  return (isSmooth ? attempt(CLOSING_WIDTH) : null) ?? second;
 }
 
 /** Try to prove q_ρ ≥ K‖·‖²_ρ on every chart within a number of cells. */

@@ -1,5 +1,5 @@
-import { expDifference } from '../checker/arithmetic/exp-difference.js';
 import { type Interval, ONE, ZERO, add, div, mul, neg, point, sqr, sub } from '../checker/arithmetic/interval.js';
+import type { ExpTable } from './exp-table.js';
 
 /** A smooth function over a cell of parameters: where it is, its value at the centre, its partial derivatives over the cell. */
 export interface Jet {
@@ -69,16 +69,9 @@ export function scaleJet(a: Jet, factor: Interval): Jet {
   return { range: mul(a.range, factor), centre: mul(a.centre, factor), slopes: a.slopes.map((s) => mul(s, factor)) };
 }
 
-/** e^z. */
-export function expJet(z: Jet): Jet {
-  return throughJet(z, (x) => expDifference([x]), expDifference([z.range]));
-}
-
 /** exp[0,…,0,z,…,z], `zeros` times 0 and `repeats` ≥ 1 times z; the derivative is repeats·exp[0,…,0,z,…,z,z]. */
-export function expDifferenceJet(zeros: number, repeats: number, z: Jet): Jet {
-  const value = (x: Interval, times: number): Interval =>
-    expDifference([...new Array<Interval>(zeros).fill(ZERO), ...new Array<Interval>(times).fill(x)]);
-  return throughJet(z, (x) => value(x, repeats), mul(point(repeats), value(z.range, repeats + 1)));
+export function expDifferenceJet(table: ExpTable, zeros: number, repeats: number, z: Jet): Jet {
+  return throughJet(z, (x) => table(zeros, repeats, x), mul(point(repeats), table(zeros, repeats + 1, z.range)));
 }
 
 function throughJet(z: Jet, f: (x: Interval) => Interval, slope: Interval): Jet {

@@ -12,9 +12,6 @@ export const SECOND_WIDTH = 1e-3;
 export const CLOSING_WIDTH = 2e-9;
 export const CLOSING_GROWTH = 2.6;
 
-/** Distances tried one after the other where closing fails. */
-export const NEXT_WIDTHS: readonly number[] = [1e-4, 1e-5, 1e-6];
-
 /** Cells of states examined at most for one lower end of `ge`. */
 export const CELL_BUDGET = 5000;
 

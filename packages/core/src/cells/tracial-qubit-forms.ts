@@ -1,12 +1,12 @@
 import { type Interval, ONE, ZERO, add, mul, neg, point, sub } from '../checker/arithmetic/interval.js';
 import { type Cell, coordinateJets, isBounded } from './cell.js';
 import type { CellForms, FormsOnCell } from './cell-forms.js';
+import { type ExpTable, expTable } from './exp-table.js';
 import {
   type Jet,
   addJet,
   constantJet,
   expDifferenceJet,
-  expJet,
   loweredJet,
   mulJet,
   negJet,
@@ -35,6 +35,7 @@ export function tracialQubitForms(body: Symmetric3<Interval>, angles: 0 | 1 | 2)
   const trace = add(add(body[0], body[4]), body[8]);
   const model: QubitModel = {
     c: body,
+    table: expTable(),
     l: body.map((x, at) => mul(FOUR, at % 4 === 0 ? sub(x, trace) : x)),
     whole: body.map((x, at) => (at % 4 === 0 ? sub(trace, x) : neg(x))),
   };
@@ -42,17 +43,18 @@ export function tracialQubitForms(body: Symmetric3<Interval>, angles: 0 | 1 | 2)
 }
 
 interface QubitModel {
+  readonly table: ExpTable;
   readonly c: Symmetric3<Interval>;
   readonly l: Symmetric3<Interval>;
   /** Σ [v_j]*[v_j] = Tr C − C. */
   readonly whole: Symmetric3<Interval>;
 }
 
-function evaluate({ c, l, whole }: QubitModel, cell: Cell, k: number): FormsOnCell {
+function evaluate({ c, l, whole, table }: QubitModel, cell: Cell, k: number): FormsOnCell {
   const [y, ...turn] = coordinateJets(cell);
   const parameters = y.slopes.length;
   const zero = constantJet(ZERO, parameters);
-  const { mean, excess, growth } = functionsOf(y);
+  const { mean, excess, growth } = functionsOf(table, y);
   const n = axisOf(turn, parameters);
   const ln = n.map((_, i) => n.map((x, j) => scaleJet(x, l[3 * i + j])).reduce(addJet));
   const rate = n.map((x, i) => mulJet(x, ln[i])).reduce(addJet);
@@ -84,14 +86,14 @@ const TWO = point(2);
 const FOUR = point(4);
 
 /** F = exp[0,−y], S − 2F = 1 + e^{−y} − 2F, between 0 and 1, and P = ½(1 − e^{−y})(exp[0,0,y] − exp[0,0,−y]). */
-function functionsOf(y: Jet): { mean: Jet; excess: Jet; growth: Jet } {
+function functionsOf(table: ExpTable, y: Jet): { mean: Jet; excess: Jet; growth: Jet } {
   const one = constantJet(ONE, y.slopes.length);
   const minus = negJet(y);
-  const tau = expJet(minus);
-  const mean = expDifferenceJet(1, 1, minus);
+  const tau = expDifferenceJet(table, 0, 1, minus);
+  const mean = expDifferenceJet(table, 1, 1, minus);
   const plain = subJet(addJet(one, tau), scaleJet(mean, TWO));
   const excess = { ...plain, range: { lo: Math.max(0, plain.range.lo), hi: Math.min(1, plain.range.hi) } };
-  const slope = subJet(expDifferenceJet(2, 1, y), expDifferenceJet(2, 1, minus));
+  const slope = subJet(expDifferenceJet(table, 2, 1, y), expDifferenceJet(table, 2, 1, minus));
   return { mean, excess, growth: scaleJet(mulJet(subJet(one, tau), slope), HALF) };
 }
 
