@@ -5,13 +5,16 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { fileURLToPath } from 'node:url';
 import { parsePoint } from '@thalweg/format';
 import pg from 'pg';
-import { afterAll, beforeAll, expect, inject, test } from 'vitest';
+import { afterAll, beforeAll, expect, inject, test, vi } from 'vitest';
 import { ensureBundle } from '../../../../packages/setup/lib/build.mjs';
 import { startThalweg } from '../helpers/thalweg.js';
 
 const depolarising = fileURLToPath(new URL('../../../../examples/depolarising', import.meta.url));
 const DATABASE = `thalweg_sweep_${process.pid}`;
 const POINTS = 24;
+/** A build may come first, and a busy machine starts processes slowly. */
+const PATIENCE_MILLISECONDS = 300_000;
+vi.setConfig({ testTimeout: PATIENCE_MILLISECONDS });
 let folder: string;
 let url: string;
 let admin: pg.Client;
@@ -28,7 +31,7 @@ beforeAll(async () => {
   await database.connect();
   folder = mkdtempSync(join(tmpdir(), 'thalweg-queue-'));
   cpSync(depolarising, join(folder, 'family'), { recursive: true });
-});
+}, PATIENCE_MILLISECONDS);
 
 afterAll(async () => {
   await database.end();
