@@ -5,7 +5,13 @@ import { main } from './lib/main.mjs';
 import { root } from './lib/paths.mjs';
 import { run } from './lib/run.mjs';
 
-const FOLDERS = ['packages/core/bench', 'packages/format/bench', 'apps/cli/bench', 'tests/bench'];
+const FOLDERS = [
+  'packages/core/bench',
+  'packages/format/bench',
+  'packages/sandbox/bench',
+  'apps/cli/bench',
+  'tests/bench',
+];
 
 /** Runs every timing script, or those whose path holds one of the given words, one after another. */
 await main(async (words) => {

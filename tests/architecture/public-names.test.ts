@@ -3,7 +3,7 @@ import ts from 'typescript';
 import { expect, test } from 'vitest';
 import { listCode, readText, root } from './helpers/repository.js';
 
-const PACKAGES = ['core', 'format'];
+const PACKAGES = ['core', 'format', 'sandbox'];
 
 /** Names that a package's index exports, types included, as TypeScript resolves them. */
 function exportedNames(name: string): string[] {

@@ -1,7 +1,5 @@
 import * as names from './names.js';
+import { KIT_VERSION } from './version.js';
 
-/**
- * What a generator receives as its second argument. The version follows Semantic Versioning: within a major version
- * no function changes a bit of what it returns.
- */
-export const kit = Object.freeze({ version: '1.0.0', ...names });
+/** What a generator receives as its second argument; `KIT.md` of this package describes every name. */
+export const kit = Object.freeze({ version: KIT_VERSION, ...names });

@@ -1,4 +1,5 @@
 import { spawn, type ChildProcess } from 'node:child_process';
+import { realpathSync } from 'node:fs';
 import type { Socket } from 'node:net';
 import { tmpdir } from 'node:os';
 import { fileURLToPath } from 'node:url';
@@ -97,14 +98,22 @@ export class GuardedProcess implements Guarded {
 }
 
 function start(script: URL): ChildProcess {
-  const options = [`--max-old-space-size=${PROCESS_HEAP_MEGABYTES}`, '--no-warnings'];
-  const child = spawn(process.execPath, [...options, fileURLToPath(script)], {
+  const path = realpathSync(fileURLToPath(script));
+  const options = [`--max-old-space-size=${PROCESS_HEAP_MEGABYTES}`, '--no-warnings', ...permissions(path)];
+  return spawn(process.execPath, [...options, path], {
     env: {},
     cwd: tmpdir(),
     stdio: ['pipe', 'pipe', 'ignore'],
     windowsHide: true,
   });
-  return child;
+}
+
+/** Where Node.js has a permission model: no file but the script, no process, and threads, one of which is needed. A comma or star in the path means more than itself. */
+function permissions(script: string): string[] {
+  const flag = ['--permission', '--experimental-permission'].find((name) =>
+    process.allowedNodeEnvironmentFlags.has(name),
+  );
+  return flag === undefined || /[,*]/.test(script) ? [] : [flag, `--allow-fs-read=${script}`, '--allow-worker'];
 }
 
 function endFault(reason: string): RunFault {

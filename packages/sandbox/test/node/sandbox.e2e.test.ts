@@ -26,36 +26,41 @@ afterAll(() => {
   sandbox?.close();
 });
 
-/** Children of this process that run the sandbox, by what Linux says of them. */
-function sandboxProcess(): { residentMegabytes: number; processorMilliseconds: number } {
-  const found = children(process.pid).find((pid) =>
-    readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes('sandbox-process'),
-  );
+/** The child of this process that runs the sandbox, by what Linux says. */
+function findSandboxProcess(): number {
+  const children = readFileSync(`/proc/${process.pid}/task/${process.pid}/children`, 'utf8').trim().split(' ');
+  const found = children.find((pid) => readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes('sandbox-process'));
   if (found === undefined) throw new Error('expected a process of the sandbox');
-  const pages = Number(readFileSync(`/proc/${found}/statm`, 'utf8').split(' ')[1]);
-  const fields = readFileSync(`/proc/${found}/stat`, 'utf8').split(') ')[1].split(' ');
-  return { residentMegabytes: pages / 256, processorMilliseconds: 10 * (Number(fields[11]) + Number(fields[12])) };
+  return Number(found);
 }
 
-function children(pid: number): number[] {
-  return readFileSync(`/proc/${pid}/task/${pid}/children`, 'utf8').trim().split(' ').map(Number);
+function measure(): { residentMegabytes: number; processorMilliseconds: number } {
+  const pid = findSandboxProcess();
+  const pages = Number(readFileSync(`/proc/${pid}/statm`, 'utf8').split(' ')[1]);
+  const fields = readFileSync(`/proc/${pid}/stat`, 'utf8').split(') ')[1].split(' ');
+  return { residentMegabytes: pages / 256, processorMilliseconds: 10 * (Number(fields[11]) + Number(fields[12])) };
 }
 
 test('memory stays flat and a run stays cheap over many runs in one process', async () => {
   for (let k = 0; k < 50; k++) await sandbox.run(identity);
-  const before = sandboxProcess();
+  const before = measure();
   for (let k = 50; k < RUNS; k++) await sandbox.run(identity);
-  const after = sandboxProcess();
+  const after = measure();
   expect(after.residentMegabytes - before.residentMegabytes).toBeLessThan(MOVEMENT);
   expect((after.processorMilliseconds - before.processorMilliseconds) / (RUNS - 50)).toBeLessThan(OVERHEAD);
 });
 
-test('the process of the sandbox has no environment', async () => {
+test('the process of the sandbox has no environment and may read no file but its script', async () => {
   await sandbox.run(identity);
-  const found = children(process.pid).find((pid) =>
-    readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes('sandbox-process'),
-  );
+  const found = findSandboxProcess();
   expect(readFileSync(`/proc/${found}/environ`, 'utf8')).toBe('');
+  const options = readFileSync(`/proc/${found}/cmdline`, 'utf8').split('\0').slice(1);
+  expect(options).toContain('--max-old-space-size=256');
+  expect(options.filter((option) => option.includes('permission'))).toHaveLength(1);
+  expect(options.filter((option) => option.startsWith('--allow'))).toEqual([
+    expect.stringMatching(/^--allow-fs-read=.*sandbox-process\.js$/),
+    '--allow-worker',
+  ]);
 });
 
 test('runs wait for a free process and all come to their own end', async () => {
