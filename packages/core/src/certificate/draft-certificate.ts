@@ -1,11 +1,12 @@
 import type { LiftCertificate, MatrixEntry } from '../checker/lift-certificate.js';
 import type { FoundLift } from '../lift/index.js';
-import type { ComplexMatrix } from '../linalg/complex-matrix.js';
-import type { SparseMatrix } from '../linalg/sparse-matrix.js';
+import { inStateBasis } from '../lift/state-basis.js';
+import { type ComplexMatrix, diagonal } from '../linalg/complex-matrix.js';
+import { type SparseMatrix, sparseFromDense } from '../linalg/sparse-matrix.js';
 import type { CanonicalForm } from '../structure/canonical-form.js';
 
 /** A lift as a certificate in floating point: W_j = V_j, rate 2e^{−ω/2}, ratio e^{ω}. */
-export function draftCertificate(canonical: CanonicalForm, lift: FoundLift): LiftCertificate {
+export function draftCertificate(canonical: Written, lift: FoundLift): LiftCertificate {
   const jumps = canonical.jumps.map(({ label, sparse, frequency, partner }) => ({
     label,
     entries: sparseEntries(sparse),
@@ -28,6 +29,27 @@ export function draftCertificate(canonical: CanonicalForm, lift: FoundLift): Lif
         return { ...term, re: factor * re, im: factor * im };
       }),
   };
+}
+
+/**
+ * The same in the eigenbasis of σ, which becomes the frame: there a state that is not diagonal in the basis of the model has rational
+ * neighbours. Null where that changes nothing.
+ */
+export function draftInFrame(canonical: CanonicalForm, lift: FoundLift): LiftCertificate | null {
+  const { algebra, state } = canonical;
+  const turned = inStateBasis(canonical);
+  if (turned.jumps === canonical.jumps) return null;
+  const jumps = turned.jumps.map((jump) => ({ ...jump, sparse: sparseFromDense(jump.matrix) }));
+  const diagonalState = { sigma: diagonal(Array.from(state.values)) };
+  return {
+    ...draftCertificate({ algebra, jumps, state: diagonalState }, lift),
+    frame: denseEntries(state.vectors),
+  };
+}
+
+/** What is written down of a canonical form. */
+interface Written extends Pick<CanonicalForm, 'algebra' | 'jumps'> {
+  readonly state: Pick<CanonicalForm['state'], 'sigma'>;
 }
 
 function sparseEntries(a: SparseMatrix): MatrixEntry[] {

@@ -10,7 +10,7 @@ import { hasGradientMetric } from '../sheet/hypotheses.js';
 import type { Structure } from '../structure/structure.js';
 import { CERTIFY_LIFT_SIDE, CERTIFY_LIFT_UNKNOWNS, CLOSED_TOLERANCE, LIFT_CLOSED } from '../tolerances.js';
 import type { Generator } from '../generator/generator.js';
-import { draftCertificate } from './draft-certificate.js';
+import { draftCertificate, draftInFrame } from './draft-certificate.js';
 import { exactCertificate } from './exact-certificate.js';
 import { rationalDraft } from './rational-draft.js';
 
@@ -124,15 +124,17 @@ interface CheckedCertificate {
   readonly verdict: CertificateVerdict;
 }
 
-/** The lift over the jumps it was found with, and over those given, which may be rational where the others are not. */
+/** The lift over the jumps it was found with, in the eigenbasis of σ, and over the jumps given: one of them may be rational. */
 function draftsOf(
   { canonical, given, lift }: Pick<LadderResult, 'canonical' | 'given' | 'lift'>,
   constant: CertifiedConstant,
 ): LiftCertificate[] {
-  const found = { ...draftCertificate(canonical, lift), constant };
-  if (canonical === given) return [found];
-  const coefficients = transferLift(lift.coefficients, canonical, given);
-  return [found, { ...draftCertificate(given, { ...lift, coefficients }), constant }];
+  const drafts: (LiftCertificate | null)[] = [draftCertificate(canonical, lift), draftInFrame(canonical, lift)];
+  if (canonical !== given) {
+    const coefficients = transferLift(lift.coefficients, canonical, given);
+    drafts.push(draftCertificate(given, { ...lift, coefficients }));
+  }
+  return drafts.filter((draft) => draft !== null).map((draft) => ({ ...draft, constant }));
 }
 
 /** Over the rationals, when the model is rational and the lift passes; else over the doubles as rational numbers; else null. */

@@ -9,6 +9,7 @@ import {
   exactPartnerCondition,
   exactStateCondition,
 } from './exact-conditions.js';
+import { frameCondition, frameOf } from './frame.js';
 import type { CertificateGrade, Condition, LiftCertificate } from './lift-certificate.js';
 import { ringModel } from './ring-model.js';
 import { DOUBLES, INTERVALS, RATIONALS } from './ring.js';
@@ -44,7 +45,7 @@ export interface CertificateVerdict {
  * the derivations, and both forms of §6 are positive. Which model the certificate names is the caller's to compare.
  *
  * Grade `exact`: all of it in rational arithmetic for the generator of the certificate's numbers (a double is a rational number
- * too); that the model's doubles are the rounding of that generator is checked to MODEL_ROUNDING. Grade `enclosed`: the same,
+ * too); that the model's doubles are the rounding of that generator, turned into its frame if it has one, is checked to MODEL_ROUNDING. Grade `enclosed`: the same,
  * save that the forms are bounded with intervals and the bound is K less the loss that makes up for their rounding (see
  * rounded-form.ts, rigorous). Grade `certified`: no residual above RESIDUAL_LIMIT, and the bound is K less that loss and less
  * RESIDUAL_WEIGHT·(largest residual)·‖L‖. For `clsi` and `mlsi` the bound must be positive (§4). A certificate that claims a
@@ -97,8 +98,10 @@ function enclosedVerdict(g: Generator, certificate: LiftCertificate): Certificat
 /** Everything but the forms, in rational arithmetic; with max ‖L(e)‖_F over matrix units. */
 function exactLift(g: Generator, certificate: LiftCertificate) {
   const model = ringModel(RATIONALS, g.algebra, certificate);
-  const { value, norm } = assemblyResidual(g, ringModel(DOUBLES, g.algebra, certificate));
+  const frame = frameOf(g.algebra, certificate);
+  const { value, norm } = assemblyResidual(g, ringModel(DOUBLES, g.algebra, certificate), frame);
   const conditions = [
+    ...(frame ? [frameCondition(g.algebra, frame, MODEL_ROUNDING)] : []),
     exactStateCondition(model),
     exactModularCondition(model),
     exactPartnerCondition(model),
@@ -118,8 +121,10 @@ function roundedForms(g: Generator, certificate: LiftCertificate, norm: number) 
 function certifiedVerdict(g: Generator, certificate: LiftCertificate): CertificateVerdict {
   const model = ringModel(DOUBLES, g.algebra, certificate);
   const { list, smallest } = stateConditions(model);
-  const assembly = assemblyResidual(g, model);
+  const frame = frameOf(g.algebra, certificate);
+  const assembly = assemblyResidual(g, model, frame);
   const conditions = [
+    ...(frame ? [frameCondition(g.algebra, frame, RESIDUAL_LIMIT)] : []),
     ...list,
     modularCondition(model, smallest),
     partnerCondition(model),

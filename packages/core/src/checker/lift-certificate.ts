@@ -46,6 +46,11 @@ export interface LiftCertificate {
    */
   readonly grade: CertificateGrade;
   readonly bound: Scalar;
+  /**
+   * Entries of a nearly unitary matrix whose columns are the basis that everything below is written in; the unitary nearest to it is
+   * meant. Left out where that is the basis of the model.
+   */
+  readonly frame?: readonly MatrixEntry[];
   readonly blocks: readonly number[];
   readonly state: readonly MatrixEntry[];
   readonly jumps: readonly CertificateJump[];

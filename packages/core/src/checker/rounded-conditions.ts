@@ -1,13 +1,12 @@
 import type { Generator } from '../generator/generator.js';
-import { applyGenerator } from '../generator/apply-generator.js';
-import { zeros } from '../linalg/complex-matrix.js';
 import { complexIntervalZeros, setEntry } from './arithmetic/interval-matrix.js';
 import { smallestEigenvalueBound } from './arithmetic/smallest-eigenvalue-bound.js';
+import { type Frame, imageInFrame } from './frame.js';
 import { imageOfUnit, liftDefect, unitsOf } from './lift-defects.js';
 import type { Condition } from './lift-certificate.js';
 import type { RingModel } from './ring-model.js';
 import type { Complex } from './ring.js';
-import { type SparseOperator, addEntry, addProduct, addScaled, emptyOperator } from './sparse-operator.js';
+import { type SparseOperator, addProduct, addScaled, emptyOperator } from './sparse-operator.js';
 import { RESIDUAL_LIMIT } from './tolerances.js';
 
 /** A residual that must stay below its limit; NaN fails. */
@@ -76,26 +75,20 @@ export function partnerCondition({ ring, jumps }: RingModel<Complex>): Condition
   return residual('partners are adjoints', worst, RESIDUAL_LIMIT);
 }
 
-/** L on every matrix unit: from the model and from the jumps; with max ‖L(e)‖_F. */
-export function assemblyResidual(g: Generator, model: RingModel<Complex>): { value: number; norm: number } {
-  const { ring, algebra } = model;
-  const n = algebra.size;
+/** L on every matrix unit: from the model, in the frame of the certificate, and from the jumps; with max ‖L(e)‖_F. */
+export function assemblyResidual(
+  g: Generator,
+  model: RingModel<Complex>,
+  frame: Frame | null,
+): { value: number; norm: number } {
+  const { ring } = model;
   let worst = 0;
   let size = 0;
   for (const [a, b] of unitsOf(model)) {
-    const unit = zeros(n);
-    unit.re[a * n + b] = 1;
-    const image = applyGenerator(g, unit);
+    const image = imageInFrame(g, frame, a, b);
     const defect = imageOfUnit(model, a, b);
-    let squares = 0;
-    for (let i = 0; i < n; i++) {
-      for (let j = 0; j < n; j++) {
-        const [re, im] = [image.re[i * n + j], image.im[i * n + j]];
-        squares += re * re + im * im;
-        addEntry(ring, defect, i, j, { re: -re, im: -im });
-      }
-    }
-    size = larger(size, Math.sqrt(squares));
+    addScaled(ring, defect, { re: -1, im: 0 }, image);
+    size = larger(size, norm(image));
     worst = larger(worst, norm(defect));
   }
   return { value: size > 0 ? worst / size : Infinity, norm: size };

@@ -10,12 +10,17 @@ export function shapeCondition(algebra: BlockAlgebra, certificate: LiftCertifica
   return fault ? { ...condition, holds: false, note: fault } : { ...condition, holds: true };
 }
 
-function firstFault(algebra: BlockAlgebra, { blocks, state, jumps, lift, bound }: LiftCertificate): string | null {
+function firstFault(
+  algebra: BlockAlgebra,
+  { blocks, frame, state, jumps, lift, bound }: LiftCertificate,
+): string | null {
   if (String(blocks) !== String(algebra.blocks)) {
     return `expected the blocks [${algebra.blocks.join(', ')}] of the model, got [${blocks.join(', ')}]`;
   }
   if (!(Math.abs(doubleOf(bound)) < SCALE_LIMIT)) return 'expected a bound of moderate size';
   if (jumps.length === 0) return 'expected at least one jump, got none';
+  const inFrame = frame && entriesFault(algebra, frame);
+  if (inFrame) return `frame: ${inFrame}`;
   const inState = entriesFault(algebra, state);
   if (inState) return `state: ${inState}`;
   const corners: [number, number][] = [];

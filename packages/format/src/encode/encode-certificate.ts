@@ -10,7 +10,7 @@ export function encodeCertificate(
   model: string,
   record: Record = {},
 ): CertificateDocument {
-  const { constant, bound, grade, blocks, state, jumps, lift } = certificate;
+  const { constant, bound, grade, blocks, frame, state, jumps, lift } = certificate;
   return {
     schema: 'thalweg.certificate/1',
     model,
@@ -18,6 +18,7 @@ export function encodeCertificate(
     bound: encodeScalar(bound),
     grade,
     algebra: [...blocks],
+    ...(frame !== undefined && { frame: frame.map(encodeEntry) }),
     state: state.map(encodeEntry),
     jumps: jumps.map(({ label, entries, rate, ratio, partner }) => ({
       ...(label !== undefined && { label }),
@@ -33,12 +34,13 @@ export function encodeCertificate(
 
 /** The certificate of a document; throws `wrong-schema` or `too-large` with a pointer for a bad rational number. */
 export function decodeCertificate(document: CertificateDocument): LiftCertificate {
-  const { constant, bound, grade, algebra, state, jumps, lift } = document;
+  const { constant, bound, grade, algebra, frame, state, jumps, lift } = document;
   return {
     constant,
     grade,
     bound: decodeScalar(bound, '/bound'),
     blocks: algebra,
+    ...(frame !== undefined && { frame: frame.map((entry, k) => decodeEntry(entry, `/frame/${k}`)) }),
     state: state.map((entry, k) => decodeEntry(entry, `/state/${k}`)),
     jumps: jumps.map(({ label, matrix, rate, ratio, partner }, j) => ({
       ...(label !== undefined && { label }),

@@ -31,7 +31,7 @@ const index = z.int().min(-1);
  * A lift that bounds a constant of one model from below, `thalweg.certificate/1`: the state, the jumps W of
  * L(A) = Σ rate (W*AW − ½{W*W, A}) with σWσ⁻¹ = W/ratio, and the terms [left, right, from, to, re, im] of
  * (L̂ζ)_to ∋ (re + i·im) W_left* ζ_from W_right, −1 for the identity; the terms −½(Sζ + ζS) are understood. Matrices are lists of
- * entries [row, column, re, im]. `solver` and `margins` record how it was found and are not part of the proof.
+ * entries [row, column, re, im]; `frame` has the basis they are written in as its columns, where it is not that of the model. `solver` and `margins` record how it was found and are not part of the proof.
  */
 export const certificateSchema = strict({
   schema: z.literal('thalweg.certificate/1'),
@@ -40,6 +40,7 @@ export const certificateSchema = strict({
   bound: scalar,
   grade: z.enum(CERTIFICATE_GRADES),
   algebra: blocksSchema,
+  frame: matrixEntries.optional(),
   state: matrixEntries,
   jumps: list(jumpSchema, 1),
   lift: longList(z.tuple([index, index, whole(0), whole(0), scalar, scalar]), CERTIFICATE_LIMITS.terms),

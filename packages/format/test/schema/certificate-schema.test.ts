@@ -36,6 +36,13 @@ describe('a certificate document', () => {
     expect(decodeCertificate(parseCertificate(text))).toEqual(certificate);
   });
 
+  it('keeps the frame of an enclosed one', () => {
+    const frame = [[0, 0, 0.6, 0], [0, 1, 0.8, 0], [1, 0, 0.8, 0], [1, 1, -0.6, 0]] as const; // prettier-ignore
+    const turned: LiftCertificate = { ...certificate, grade: 'enclosed', frame };
+    const text = writeJson(encodeCertificate(turned, DIGEST));
+    expect(decodeCertificate(parseCertificate(text))).toEqual(turned);
+  });
+
   it('writes rational numbers as text', () => {
     expect(document.bound).toBe('1');
     expect(document.state).toEqual([[0, 0, '1/2', 0], [1, 1, '1/2', 0]]); // prettier-ignore

@@ -6,9 +6,9 @@
  * `equal` is within 1e-6 (relative to the larger of 1 and cbe); `below` counts the rest that have a lift, with the least, median and
  * largest distance; `none` had no lift, or none within the limits on size.
  */
-import { type BestCertificate, bestCertificate } from '../../packages/core/test/helpers/best-certificate.js';
-import { RANDOM_FAMILIES, randomSmallModel } from '../../packages/core/test/helpers/random-small-models.js';
-import { printTable } from './support/print-table.js';
+import { type BestCertificate, bestCertificate } from '../test/helpers/best-certificate.js';
+import { RANDOM_FAMILIES, randomSmallModel } from '../test/helpers/random-small-models.js';
+import { printTable } from '../../../tests/bench/support/print-table.js';
 
 const COUNT = 200;
 
