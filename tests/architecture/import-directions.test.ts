@@ -79,6 +79,12 @@ test.each([
     'format-imports-only-core',
   ],
   [
+    'the sandbox imports format',
+    'packages/sandbox/src/index.ts',
+    "export * from '../../format/src/index.js';",
+    'sandbox-imports-only-core',
+  ],
+  [
     'an app imports another',
     'apps/cli/src/bin.ts',
     "export * from '../../web/src/main.js';",
