@@ -16,6 +16,7 @@ import {
   type RunVerb,
 } from './program-parts.js';
 import { addPictureVerbs, svgOption } from './program-pictures.js';
+import { addRegistryVerbs } from './program-registry.js';
 import { addTransportVerbs } from './program-transport.js';
 import { VERSION } from './version.js';
 
@@ -78,6 +79,7 @@ export function createProgram(runVerb: RunVerb): Command {
   addTransportVerbs(program, runVerb);
 
   addExampleVerbs(program, runVerb);
+  addRegistryVerbs(program, runVerb);
 
   addVerb(program, runVerb, 'completion', 'print a completion script for a shell')
     .addArgument(withWords(new Argument('<shell>', 'which shell'), SHELLS))

@@ -20,7 +20,8 @@ export function ensurePostgres() {
 }
 
 /**
- * Starts a PostgreSQL cluster on loopback, made in `folder` when it is not there yet. Resolves to its URL, without a
+ * Starts a PostgreSQL cluster on loopback, made in `folder` when it is not there yet; one that runs there already is used and
+ * left running. Resolves to its URL, without a
  * database name, as superuser postgres without a password, and a function that stops it. As root the server runs as the
  * user postgres. `disposable` trades durability for speed.
  */
@@ -28,6 +29,8 @@ export async function startCluster(folder, { port = 0, disposable = false } = {}
   const bin = binaries();
   if (bin === null) throw new Error('PostgreSQL is not installed: run npm start or npm test, which install it.');
   const data = join(folder, 'data');
+  const running = await runningPort(bin, data);
+  if (running !== null) return { url: urlAt(running), port: running, stop: () => Promise.resolve() };
   const sockets = mkdtempSync(join(tmpdir(), 'thalweg-pg-'));
   mkdirSync(folder, { recursive: true, mode: 0o755 });
   await own(folder, sockets);
@@ -44,7 +47,18 @@ export async function startCluster(folder, { port = 0, disposable = false } = {}
     await server(join(bin, 'pg_ctl'), ['-D', data, '-m', 'fast', '-w', 'stop']);
     rmSync(sockets, { recursive: true, force: true });
   };
-  return { url: `postgres://postgres@127.0.0.1:${chosen}`, port: chosen, stop };
+  return { url: urlAt(chosen), port: chosen, stop };
+}
+
+const urlAt = (port) => `postgres://postgres@127.0.0.1:${port}`;
+
+/** Port of the server that works on a data folder, the fourth line of its lock file; null when none does. */
+async function runningPort(bin, data) {
+  if (!(await asServer(join(bin, 'pg_ctl'), ['-D', data, 'status']))) return null;
+  const { output } = await asPostgres('sed', ['-n', '4p', join(data, 'postmaster.pid')]);
+  const port = Number(output.trim());
+  if (!(port > 0)) throw new Error(`The server of ${data} runs, but its port is not known: ${output}`);
+  return port;
 }
 
 /** Makes a database on a cluster unless it is there. */

@@ -21,7 +21,7 @@ export interface ModelChoice {
 
 /** The model document at a path, or the one that the example at the path generates at the parameters of `--set`. */
 export async function readModel({ model, set }: ModelChoice, session: Session): Promise<DocumentSource> {
-  const input = await readInput(model, session.terminal.stdin);
+  const input = await readInput(model, session);
   if (input.kind === 'example') {
     return generateModel(input.example, settingsPoint(input.example.document, set), session);
   }

@@ -1,29 +1,38 @@
 import { stat } from 'node:fs/promises';
 import { basename } from 'node:path';
-import type { Readable } from 'node:stream';
 import { ThalwegError } from '@thalweg/core';
 import { isArchive, readArchive, readExample, type ExamplePackage, type PackageFiles } from '@thalweg/format';
 import { filesOfFolder } from '@thalweg/format/node';
+import { isExampleName, readExampleName } from '../registry/example-name.js';
+import { obtainExample } from '../registry/obtain-example.js';
+import type { Session } from '../session.js';
 import { inDocument } from './in-document.js';
 import { readSource, type DocumentSource } from './read-source.js';
 
-/** What a path leads to: a document, or an example package (a folder or an archive). */
+/** What a path or a name leads to: a document, or an example package (a folder, an archive, or a version on a registry). */
 export type Input =
   | { readonly kind: 'document'; readonly source: DocumentSource }
   | { readonly kind: 'example'; readonly name: string; readonly example: ExamplePackage };
 
-/** Reads whatever a path leads to. Throws the errors of `readSource`, `filesOfFolder`, `readArchive` and `readExample`. */
-export async function readInput(path: string, stdin: Readable): Promise<Input> {
+/**
+ * Reads whatever a path leads to, or `owner/slug[@version]` where there is no such path. Throws the errors of `readSource`,
+ * `filesOfFolder`, `readArchive`, `readExample` and `obtainExample`.
+ */
+export async function readInput(path: string, session: Session): Promise<Input> {
   if (await isFolder(path)) return { kind: 'example', name: path, example: exampleOf(path, () => filesOfFolder(path)) };
-  const source = await readSource(path, stdin);
+  if (isExampleName(path) && !(await exists(path))) {
+    const { name, files } = await obtainExample(readExampleName(path), null, session);
+    return { kind: 'example', name, example: exampleOf(name, () => files) };
+  }
+  const source = await readSource(path, session.terminal.stdin);
   if (!isArchive(source.bytes)) return { kind: 'document', source };
   const digest = /^([0-9a-f]{64})\.zip$/.exec(basename(path))?.[1];
   return { kind: 'example', name: source.name, example: exampleOf(path, () => readArchive(source.bytes, digest)) };
 }
 
 /** Reads an example package; a document is refused. */
-export async function readPackage(path: string, stdin: Readable): Promise<ExamplePackage> {
-  const input = await readInput(path, stdin);
+export async function readPackage(path: string, session: Session): Promise<ExamplePackage> {
+  const input = await readInput(path, session);
   if (input.kind === 'example') return input.example;
   throw new ThalwegError(
     'usage',
@@ -35,6 +44,13 @@ async function isFolder(path: string): Promise<boolean> {
   if (path === '-') return false;
   return stat(path).then(
     (status) => status.isDirectory(),
+    () => false,
+  );
+}
+
+async function exists(path: string): Promise<boolean> {
+  return stat(path).then(
+    () => true,
     () => false,
   );
 }

@@ -36,3 +36,8 @@ export function modelOptions() {
     set: z.array(textOption((text) => readSetting('--set', text))).default([]),
   };
 }
+
+/** The options of every verb that speaks to a registry. */
+export function registryOptions() {
+  return { registry: z.string().nullable().default(null) };
+}

@@ -17,6 +17,13 @@ const VERBS = {
   sweep: async () => (await import('./sweep/sweep-verb.js')).verb as Verb<unknown>,
   seal: async () => (await import('./seal/seal-verb.js')).verb as Verb<unknown>,
   reproduce: async () => (await import('./reproduce/reproduce-verb.js')).verb as Verb<unknown>,
+  'sign-in': async () => (await import('./sign-in/sign-in-verb.js')).verb as Verb<unknown>,
+  'sign-out': async () => (await import('./sign-out/sign-out-verb.js')).verb as Verb<unknown>,
+  publish: async () => (await import('./publish/publish-verb.js')).verb as Verb<unknown>,
+  browse: async () => (await import('./browse/browse-verb.js')).verb as Verb<unknown>,
+  read: async () => (await import('./read/read-verb.js')).verb as Verb<unknown>,
+  download: async () => (await import('./download/download-verb.js')).verb as Verb<unknown>,
+  withdraw: async () => (await import('./withdraw/withdraw-verb.js')).verb as Verb<unknown>,
   completion: async () => (await import('./completion/completion-verb.js')).verb as Verb<unknown>,
 };
 

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
 import { readArchive, readExample, type ExamplePackage } from '@thalweg/format';
+import type { PublicationDocument } from '@thalweg/format/api';
 import type { Principal } from '../auth/principal.js';
 import type { Database } from '../database/connect.js';
 import { Problem } from '../http/problem.js';
@@ -61,7 +62,15 @@ export async function publish(db: Database, principal: Principal, request: Publi
 function answerFor({ owner, slug, archive, listed }: PublishRequest, version: string): Answer {
   const digest = createHash('sha256').update(archive).digest('hex');
   const path = `/api/v1/examples/${owner}/${slug}/versions/${version}`;
-  return { status: 201, body: { example: `${owner}/${slug}`, version, digest, listed, path } };
+  const body: PublicationDocument = {
+    schema: 'thalweg.publication/1',
+    example: `${owner}/${slug}`,
+    version,
+    digest,
+    listed,
+    path,
+  };
+  return { status: 201, body };
 }
 
 /** Name and version are never used again, and versions that differ in build metadata alone do not exist. */

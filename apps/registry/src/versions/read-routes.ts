@@ -1,13 +1,14 @@
+import type { ExamplesDocument, HistoryDocument, MemberDocument } from '@thalweg/format/api';
 import { Router } from 'express';
 import { z } from 'zod';
-import { type Guards, readerOf } from '../auth/authenticate.js';
+import { type Guards, principalOf, readerOf } from '../auth/authenticate.js';
 import type { Principal } from '../auth/principal.js';
 import type { Database } from '../database/connect.js';
 import { readCursor, writeCursor } from '../http/cursor.js';
 import { Problem } from '../http/problem.js';
 import { readQuery } from '../http/read-input.js';
 import { sendBytes } from '../http/send-bytes.js';
-import { documentText, versionDocument } from './version-document.js';
+import { documentText, versionDocument, versionSummary } from './version-document.js';
 import { nameText, pathOf, versionName, type VersionName } from './version-name.js';
 import { browseVersions, findBlob, findVersion, listFiles, listVersions, type VersionRow } from './version-store.js';
 
@@ -20,9 +21,15 @@ const browseQuery = z.strictObject({
   count: z.coerce.number().int().min(1).max(PAGE.most).default(PAGE.default),
 });
 
-/** Routes that read: browse, one example, one version, its archive and files. */
+/** Routes that read: whose token it is, browse, one example, one version, its archive and files. */
 export function readRoutes(db: Database, guards: Guards): Router {
   const router = Router();
+
+  router.get('/member', guards.requires('read'), (_request, response) => {
+    const { name, role, scopes } = principalOf(response.locals);
+    const document: MemberDocument = { schema: 'thalweg.member/1', name, role, scopes: [...scopes] };
+    response.set('Cache-Control', 'no-store').type('json').send(documentText(document));
+  });
 
   router.get('/examples', async (request, response) => {
     const query = readQuery(browseQuery, request.query);
@@ -32,16 +39,18 @@ export function readRoutes(db: Database, guards: Guards): Router {
     const last = page.at(-1);
     const next = rows.length > query.count && last ? writeCursor(last) : null;
     if (next !== null) response.set('Link', `<${nextAddress(request.originalUrl, next)}>; rel="next"`);
-    const examples = page.map((row) => versionDocument(row));
-    response.type('json').send(documentText({ schema: 'thalweg.examples/1', examples, next }));
+    const examples = page.map(versionSummary);
+    const document: ExamplesDocument = { schema: 'thalweg.examples/1', examples, next };
+    response.type('json').send(documentText(document));
   });
 
   router.get('/examples/:owner/:slug', async (request, response) => {
     const { owner, slug } = request.params;
     const rows = await listVersions(db, owner, slug);
     if (rows.length === 0) throw new Problem(404, 'not-found', `There is no example ${owner}/${slug}.`);
-    const versions = rows.map((row) => versionDocument(row));
-    response.type('json').send(documentText({ schema: 'thalweg.history/1', example: `${owner}/${slug}`, versions }));
+    const versions = rows.map(versionSummary);
+    const document: HistoryDocument = { schema: 'thalweg.history/1', example: `${owner}/${slug}`, versions };
+    response.type('json').send(documentText(document));
   });
 
   const at = '/examples/:owner/:slug/versions/:version';

@@ -1,10 +1,10 @@
 import { canonicalJson, type JsonValue } from '@thalweg/format';
+import type { VersionDocument, VersionSummary } from '@thalweg/format/api';
 import type { VersionFile, VersionRow } from './version-store.js';
 
-/** A version as the interface shows it. */
-export function versionDocument(row: VersionRow, files?: readonly VersionFile[]): Record<string, unknown> {
+/** A version as lists show it. */
+export function versionSummary(row: VersionRow): VersionSummary {
   const { owner, slug, version } = row;
-  const path = `/api/v1/examples/${owner}/${slug}/versions/${version}`;
   return {
     schema: 'thalweg.version/1',
     example: `${owner}/${slug}`,
@@ -16,13 +16,17 @@ export function versionDocument(row: VersionRow, files?: readonly VersionFile[])
     listed: row.listed,
     publishedBy: row.publishedBy,
     publishedAt: row.publishedAt.toISOString(),
-    withdrawn: row.withdrawnAt ? { at: row.withdrawnAt.toISOString(), because: row.withdrawnBecause } : null,
-    archive: `${path}/archive`,
-    ...(files ? { document: row.document, files } : {}),
+    withdrawn: row.withdrawnAt ? { at: row.withdrawnAt.toISOString(), because: row.withdrawnBecause ?? '' } : null,
+    archive: `/api/v1/examples/${owner}/${slug}/versions/${version}/archive`,
   };
 }
 
-/** The text that is sent for a document: its canonical form, so that equal documents have equal tags. */
-export function documentText(document: Record<string, unknown>): string {
+/** A version with its description and files. */
+export function versionDocument(row: VersionRow, files: readonly VersionFile[]): VersionDocument {
+  return { ...versionSummary(row), document: row.document, files: [...files] };
+}
+
+/** The text that is sent for a document: its canonical form (RFC 8785). */
+export function documentText(document: object): string {
   return canonicalJson(document as JsonValue);
 }

@@ -7,7 +7,7 @@ import type { Database } from '../database/connect.js';
 import { Problem } from '../http/problem.js';
 import { readBody } from '../http/read-input.js';
 import { examine, publish } from './publish-service.js';
-import { documentText, versionDocument } from './version-document.js';
+import { documentText, versionSummary } from './version-document.js';
 import { versionName } from './version-name.js';
 import { withdraw } from './withdraw-service.js';
 
@@ -53,7 +53,7 @@ export function writeRoutes(db: Database, guards: Guards): Router {
       const { because } = readBody(withdrawalBody, request.body);
       const name = versionName(request.params);
       const row = await withdraw(db, principalOf(response.locals), name, because);
-      response.type('json').send(documentText(versionDocument(row)));
+      response.type('json').send(documentText(versionSummary(row)));
     },
   );
 

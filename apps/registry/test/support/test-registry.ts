@@ -1,3 +1,4 @@
+import type { Express } from 'express';
 import { pino } from 'pino';
 import request from 'supertest';
 import { inject } from 'vitest';
@@ -15,6 +16,7 @@ export interface TestRegistry {
   readonly owner: Database;
   /** The database as the server sees it. */
   readonly db: Database;
+  readonly app: Express;
   readonly http: ReturnType<typeof request>;
   /** A new member with a token. */
   readonly addMember: (name: string, scopes?: readonly Scope[]) => Promise<{ memberId: string; token: string }>;
@@ -43,6 +45,7 @@ export async function testRegistry(): Promise<TestRegistry> {
   return {
     owner,
     db,
+    app,
     http: request(app),
     addMember: (member, scopes = ['read', 'publish', 'withdraw']) => addMember(owner, member, scopes),
     close: async () => {

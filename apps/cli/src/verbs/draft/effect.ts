@@ -28,7 +28,7 @@ export async function draftEffect(plan: DraftPlan, session: Session): Promise<Ex
   await makeFolder(folder);
   for (const [file, text] of files) await writeFileAtomically(join(folder, file), text);
   session.keep(`${folder} holds the draft; thalweg reproduce ${folder} --record completes it`);
-  const example = await readPackage(folder, session.terminal.stdin);
+  const example = await readPackage(folder, session);
   const settings = { rows: null, seed, convention, limits: { threads, timeLimit } };
   const points = await computeShowcase(example, () => settings, session);
   await recordShowcase(folder, points, session);

@@ -11,7 +11,7 @@ import type { ModelPlan } from './plan.js';
 /** Writes the model that an example generates at the parameters of `--set`. */
 export async function modelEffect(plan: ModelPlan, session: Session): Promise<ExitStatus> {
   if (plan.output !== null) await requireTarget(plan.output);
-  const example = await readPackage(plan.example, session.terminal.stdin);
+  const example = await readPackage(plan.example, session);
   const source = await generateModel(example, settingsPoint(example.document, plan.set), session);
   const { document, digest } = checkGenerated(source);
   const text = writeJson(document);

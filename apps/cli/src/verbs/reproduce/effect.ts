@@ -21,7 +21,7 @@ import type { ReproducePlan } from './plan.js';
 /** Computes the showcase of an example again and compares it with its record, or records it. */
 export async function reproduceEffect(plan: ReproducePlan, session: Session): Promise<ExitStatus> {
   if (plan.record) await requireFolder(plan.example);
-  const example = await readPackage(plan.example, session.terminal.stdin);
+  const example = await readPackage(plan.example, session);
   const recorded = plan.record ? null : example.recorded;
   const points = await computeShowcase(
     example,

@@ -14,7 +14,7 @@ import type { SealPlan } from './plan.js';
 /** Checks an example package, every model and claim of its showcase with it, and writes its archive. */
 export async function sealEffect(plan: SealPlan, session: Session): Promise<ExitStatus> {
   await requireOutside(plan);
-  const example = await readPackage(plan.example, session.terminal.stdin);
+  const example = await readPackage(plan.example, session);
   await checkPackage(example, session);
   const archive = packArchive(example.files);
   const digest = sha256Hex(archive);

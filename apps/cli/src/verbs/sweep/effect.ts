@@ -28,7 +28,7 @@ export async function sweepEffect(plan: SweepPlan, session: Session): Promise<Ex
 /** Ends with `no` when a point failed, with `try again` when points are left. */
 async function computeSweep(plan: ComputePlan, session: Session): Promise<ExitStatus> {
   if (plan.output !== null) await requireTarget(plan.output);
-  const example = await readPackage(plan.example, session.terminal.stdin);
+  const example = await readPackage(plan.example, session);
   const points = sweepPoints(example.document, plan);
   const rows = rowKeys(plan);
   const sweep = sweepDocument(example, rows, plan);
