@@ -10,6 +10,7 @@ import { root } from './helpers/repository.js';
 const SHOWN = [
   ...['certify', 'check', 'constants', 'inspect', 'verify', 'witness'],
   ...['draft', 'model', 'reproduce', 'seal', 'sweep'],
+  ...['compare', 'distance', 'flow', 'relief'],
 ];
 const COMMAND = 'npx thalweg ';
 const commands = shellLines(readFileSync(join(root, 'README.md'), 'utf8'));

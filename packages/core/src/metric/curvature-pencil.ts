@@ -116,9 +116,11 @@ function kernelDeflation({ algebra, fixed }: MetricModel, n: number): (u: Comple
   let last: Deflation | null = null;
   return (u) => {
     if (last && fixed.length === 1) return last;
+    // Not in the frame of whichever state came first: its rounding would make later values depend on it.
+    const frame = fixed.length === 1 ? null : u;
     vectors.fill(0);
     fixed.forEach((f, k) => {
-      rotateInto(turned, f, u, size, scratch);
+      rotateInto(turned, f, frame, size, scratch);
       toCoordinates(algebra, turned, x);
       for (let c = 0; c < copies; c++) vectors.set(x, (c * fixed.length + k) * n + c * d);
     });

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { blockAlgebra } from '../../src/algebra/block-algebra.js';
 import { gradientEstimateAt } from '../../src/constants/gradient-estimate.js';
+import { thermalQubit } from '../../src/families/thermal-qubit.js';
 import { truncatedOscillator } from '../../src/families/truncated-oscillator.js';
 import { ratesGenerator } from '../../src/generator/rates-generator.js';
 import { type ComplexMatrix, diagonal, fromRows, frobeniusNorm, subtract } from '../../src/linalg/complex-matrix.js';
@@ -187,4 +188,16 @@ describe('refusals', () => {
   it('of a centre on the boundary', () => {
     expectError(() => reachOf({ ...SLICES[0][1], origin: diagonal([1, 0]) }), 'internal', /faithful/);
   });
+});
+
+it('κ at a state does not depend on the states evaluated before it', () => {
+  const slice = blochDisc(blockAlgebra([2]), ['x', 'z']);
+  const points = [[0.3, 0.4], [-0.5, 0.2], [0.1, -0.7], [0.6, 0.6], [0, 0.5]] as const; // prettier-ignore
+  const values = (order: readonly number[]): number[] => {
+    const at = curvatureOn(metricOf(analyse(thermalQubit({ beta: 1, gamma: 0.5 }))), 'logarithmic', slice);
+    const found = new Map(order.map((k) => [k, at(points[k][0], points[k][1])]));
+    return points.map((_, k) => found.get(k) ?? NaN);
+  };
+  expect(values([4, 2, 0, 3, 1])).toEqual(values([0, 1, 2, 3, 4]));
+  expect(values([3, 0, 1, 2, 4])).toEqual(values([0, 1, 2, 3, 4]));
 });
