@@ -18,6 +18,12 @@ export function chainKernel(model: MetricModel): MetricKernel {
   const edges = edgesOf(model);
   return {
     model,
+    barrier: (lambda) => {
+      const n = lambda.length;
+      const out = new Float64Array(n * n);
+      for (let i = 0; i < n; i++) out[i * n + i] = 1 / lambda[i] ** 2;
+      return out;
+    },
     isFaithful: (lambda) => lambda.every((x) => x > 0),
     at(lambda) {
       let smallest = Infinity;

@@ -20,6 +20,7 @@ export function matrixKernel(model: MetricModel): MetricKernel {
   const mean = operatorMean('logarithmic');
   return {
     model,
+    barrier: (rho) => barrierOf(algebra, rho),
     isFaithful: (rho) => blockEigen(algebra, fromCoordinates(algebra, rho)).values.every((x) => x > 0),
     at(rho) {
       const { values: lambda, vectors, exact } = blockEigen(algebra, fromCoordinates(algebra, rho));
@@ -49,6 +50,15 @@ export function matrixKernel(model: MetricModel): MetricKernel {
       };
     },
   };
+}
+
+/** In the eigenbasis the map divides the entry of a pair by λ_aλ_b, on all three kinds of Hermitian elements alike. */
+function barrierOf(algebra: BlockAlgebra, rho: Float64Array): Float64Array {
+  const { values, vectors, exact } = blockEigen(algebra, fromCoordinates(algebra, rho));
+  const d = algebra.dimension;
+  const out = new Float64Array(d * d);
+  for (let k = 0; k < d; k++) out[k * d + k] = 1 / (values[algebra.row[k]] * values[algebra.col[k]]);
+  return exact ? out : conjugate(coordinateRotation(algebra, vectors), out, d);
 }
 
 function rotated(v: ComplexMatrix, u: ComplexMatrix | null): ComplexMatrix {

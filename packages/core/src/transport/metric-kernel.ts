@@ -25,6 +25,8 @@ export interface MetricKernel {
   /** Null when ρ (coordinates, any scale) is not positive definite. */
   at(rho: Float64Array): MetricAt | null;
   isFaithful(rho: Float64Array): boolean;
+  /** D²(−log det ρ), η ↦ ρ⁻¹ηρ⁻¹ as a D×D matrix, for faithful ρ. */
+  barrier(rho: Float64Array): Float64Array;
 }
 
 /** The kernel of a model; on commutative algebras the one that knows that a jump is an edge. */

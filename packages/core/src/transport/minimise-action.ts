@@ -1,5 +1,12 @@
 import { choleskySolveReal } from '../linalg/cholesky-real.js';
-import { ACTION_ARMIJO, ACTION_DECREMENT, ACTION_HALVINGS, ACTION_ITERATIONS, ACTION_RIDGES } from './tolerances.js';
+import {
+  ACTION_ARMIJO,
+  ACTION_DAMPING,
+  ACTION_DECREMENT,
+  ACTION_HALVINGS,
+  ACTION_ITERATIONS,
+  ACTION_RIDGES,
+} from './tolerances.js';
 import { type BlockTridiagonal, solveBlockTridiagonal } from './block-tridiagonal.js';
 import { type Action, type DiscretePath, type Piece, actionOf } from './discrete-path.js';
 import type { MetricKernel } from './metric-kernel.js';
@@ -14,8 +21,8 @@ export interface MinimisedPath extends DiscretePath {
 
 /**
  * Minimise the midpoint action over the inner nodes of a path by Newton's method with block tridiagonal Hessians (the action is
- * jointly convex: Carlen & Maas, J. Stat. Phys. 178 (2020); the discretisation of Benamou & Brenier, Numer. Math. 84 (2000)). Null when the path
- * that it starts from passes through states that are not faithful.
+ * jointly convex: Carlen & Maas, J. Stat. Phys. 178 (2020); the discretisation of Benamou & Brenier, Numer. Math. 84 (2000)), damped
+ * where its steps leave the faithful states. Null when the path that it starts from does.
  */
 export function minimiseAction(
   kernel: MetricKernel,
@@ -23,22 +30,54 @@ export function minimiseAction(
   start: DiscretePath,
   stop: () => boolean = () => false,
 ): MinimisedPath | null {
+  const first = actionOf(kernel, space, start);
+  if (!first) return null;
   let path = start;
-  let action = actionOf(kernel, space, path);
-  if (!action) return null;
+  let action: Action = first;
   let decrement = Infinity;
+  let damping = 0;
   let iterations = 0;
   while (iterations < ACTION_ITERATIONS && start.states.length > 2) {
     const { gradient, hessian } = derivativesOf(space, action.pieces);
     const step = newtonStep(hessian, gradient, space.count);
     decrement = step.slope / action.value;
     if (!(decrement > ACTION_DECREMENT) || stop()) break;
-    const next = lineSearch(kernel, space, path, action, step);
+    let next: Moved | null = damping === 0 ? lineSearch(kernel, space, path, action, step) : null;
+    while (!next && damping < ACTION_DAMPING.most) {
+      damping = Math.max(ACTION_DAMPING.least, ACTION_DAMPING.factor * damping);
+      const damped = dampedHessian(kernel, space, hessian, path, damping * action.value);
+      next = lineSearch(kernel, space, path, action, newtonStep(damped, gradient, space.count));
+    }
     if (!next) break;
     ({ path, action } = next);
+    damping = damping > ACTION_DAMPING.least ? damping / ACTION_DAMPING.factor ** 2 : 0;
     iterations++;
   }
   return { ...path, action, iterations, decrement: Number.isFinite(decrement) ? decrement : 0 };
+}
+
+/**
+ * The Hessian with `weight` · step · D²(−log det ρ_k) added at every inner node: its steps stay in the ellipsoids in which no eigenvalue
+ * changes by more than a part of itself, where plain ones run into the boundary of state space.
+ */
+function dampedHessian(
+  kernel: MetricKernel,
+  space: TangentSpace,
+  hessian: BlockTridiagonal,
+  { times, states }: DiscretePath,
+  weight: number,
+): BlockTridiagonal {
+  const diagonal = hessian.diagonal.map((block, k) => {
+    const curvature = space.reduceMatrix(kernel.barrier(states[k + 1]));
+    const factor = (weight * (times[k + 2] - times[k])) / 2;
+    return block.map((x, p) => x + factor * curvature[p]);
+  });
+  return { diagonal, below: hessian.below };
+}
+
+interface Moved {
+  readonly path: DiscretePath;
+  readonly action: Action;
 }
 
 interface NewtonStep {
@@ -53,7 +92,7 @@ function lineSearch(
   path: DiscretePath,
   action: Action,
   { direction, slope }: NewtonStep,
-): { path: DiscretePath; action: Action } | null {
+): Moved | null {
   const moves = direction.map((y) => space.expand(y));
   for (let k = 0, t = 1; k < ACTION_HALVINGS; k++, t /= 2) {
     const states = path.states.map((x, i) => {

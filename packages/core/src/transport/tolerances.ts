@@ -5,14 +5,17 @@ export const CLOSE_SPREAD = 1e-3;
 export const SERIES_CURVATURE = 2;
 
 /** Newton iterations on a discretised transport action; ten are typical. */
-export const ACTION_ITERATIONS = 60;
+export const ACTION_ITERATIONS = 150;
 
 /** Newton decrement, relative to the action, at which a path counts as minimal. */
 export const ACTION_DECREMENT = 1e-15;
 
 /** Share of the decrease predicted by the slope that a step must reach, and halvings of a step at most. */
 export const ACTION_ARMIJO = 0.1;
-export const ACTION_HALVINGS = 40;
+export const ACTION_HALVINGS = 3;
+
+/** Damping of Newton steps that leave the faithful states, relative to the action: the first, the last, and what it grows by. */
+export const ACTION_DAMPING = { least: 1e-6, most: 1e3, factor: 10 } as const;
 
 /** Raises of the diagonal of the action's Hessian, relative, tried in turn until it has a Cholesky factor. */
 export const ACTION_RIDGES = [0, 1e-12, 1e-9, 1e-6, 1e-3, 1] as const;

@@ -65,6 +65,22 @@ describe('the transport distance', () => {
     }
   });
 
+  it('is found next to the boundary, where plain Newton steps leave state space', () => {
+    // Three points around one; almost all mass on the first of them, then on the second.
+    const star = analyse(
+      ratesGenerator([
+        [0, 1.95, 0, 0],
+        [1.95, 0, 0.89, 0.23],
+        [0, 0.48, 0, 0],
+        [0, 0.0126, 0, 0],
+      ]),
+    );
+    const start = distribution(0.9941447, 0.0058552, 9.4e-8, 6e-9);
+    const { lower, upper, reached } = distance(star, start, distribution(0.18, 0.01, 0.68, 0.13), 1e-2);
+    expect(reached, `${lower.value} to ${upper.value}`).toBe(true);
+    expectClose(upper.value, 2.37, 0.05, 'distance');
+  });
+
   it('scales with the inverse root of the rates', () => {
     const random = seededRandom('scaling');
     for (const generator of [depolarising(2), thermalQubit({ beta: 0.7 })]) {
