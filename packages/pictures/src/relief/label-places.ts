@@ -64,7 +64,7 @@ function isWithin(outline: readonly Point[], [x, y]: Point): boolean {
 }
 
 /** Separating axes of two turned rectangles. */
-export function overlaps(a: LabelBox, b: LabelBox): boolean {
+function overlaps(a: LabelBox, b: LabelBox): boolean {
   const corners = [cornersOf(a), cornersOf(b)] as const;
   return [a.turn, a.turn + 90, b.turn, b.turn + 90].every((turn) => {
     const angle = (turn * Math.PI) / 180;

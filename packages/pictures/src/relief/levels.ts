@@ -13,7 +13,7 @@ export interface Levels {
 }
 
 /** Range of κ, relative to its size, below which the relief is flat. */
-export const FLAT = 1e-7;
+const FLAT = 1e-7;
 
 const EVEN_LINES = 10;
 const MOST_DOUBLED = 12;

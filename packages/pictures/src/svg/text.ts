@@ -45,7 +45,7 @@ function plain(text: string): string {
 }
 
 /** Lines of at most `width` pixels, broken at spaces; a longer word is cut. */
-export function wrapText(text: string, width: number, size: number = TYPE.text): string[] {
+function wrapText(text: string, width: number, size: number = TYPE.text): string[] {
   const room = Math.max(4, Math.floor(width / (CHARACTER * size)));
   const lines: string[] = [];
   let line = '';

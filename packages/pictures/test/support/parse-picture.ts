@@ -2,7 +2,7 @@ import { DOMParser, type Document, type Element } from '@xmldom/xmldom';
 import { expect } from 'vitest';
 
 /** A picture as a DOM; anything that is not well-formed XML fails. */
-export function parsePicture(svg: string): Document {
+function parsePicture(svg: string): Document {
   const complaints: string[] = [];
   const parser = new DOMParser({ onError: (level, message) => complaints.push(`${level}: ${message}`) });
   const document = parser.parseFromString(svg, 'image/svg+xml');
@@ -46,7 +46,7 @@ export function textBoxes(document: Document): TextBox[] {
 }
 
 /** Pairs of texts whose letters meet: convex outlines that no side of either separates. */
-export function collisions(boxes: readonly TextBox[]): string[] {
+function collisions(boxes: readonly TextBox[]): string[] {
   const found: string[] = [];
   boxes.forEach((a, k) => {
     for (const b of boxes.slice(k + 1)) if (!separated(a, b)) found.push(`"${a.text}" and "${b.text}"`);
