@@ -96,8 +96,7 @@ function licences(paths) {
   folders.delete(undefined);
   return [...folders]
     .sort()
-    .map((path) => {
-      const packageFolder = path;
+    .map((packageFolder) => {
       const { name, version, license } = JSON.parse(readFileSync(join(packageFolder, 'package.json'), 'utf8'));
       const text = licenceFile(packageFolder) ?? licenceSection(packageFolder) ?? NO_TEXT[name];
       if (text === undefined) throw new Error(`${name} has no licence text: add it here`);

@@ -4,18 +4,21 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { parseDocument, parseModel, parsePoint, parseSheet, readArchive, sha256Hex } from '@thalweg/format';
 import { execa } from 'execa';
-import { afterAll, beforeAll, expect, test } from 'vitest';
+import { afterAll, beforeAll, expect, test, vi } from 'vitest';
 import { ensureBundle } from '../../../../packages/setup/lib/build.mjs';
 import { plainEnvironment, startThalweg } from '../helpers/thalweg.js';
 
 const depolarising = fileURLToPath(new URL('../../../../examples/depolarising', import.meta.url));
 const bin = fileURLToPath(new URL('../../bin/thalweg.js', import.meta.url));
+/** A build may come first, and a busy machine starts processes slowly. */
+const PATIENCE_MILLISECONDS = 300_000;
+vi.setConfig({ testTimeout: PATIENCE_MILLISECONDS });
 let folder: string;
 
 beforeAll(async () => {
   await ensureBundle();
   folder = mkdtempSync(join(tmpdir(), 'thalweg-examples-'));
-});
+}, PATIENCE_MILLISECONDS);
 
 afterAll(() => {
   rmSync(folder, { recursive: true, force: true });
