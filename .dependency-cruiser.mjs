@@ -44,9 +44,12 @@ export default {
       name: 'other-packages-through-their-index',
       severity: 'error',
       comment:
-        'What a package offers is what its manifest exports: src/index.ts, and src/node or src/browser/index.ts for one of them only.',
+        'What a package offers is what its manifest exports: src/index.ts, src/node or src/browser/index.ts for one of them only, and src/api/index.ts for what goes over the network.',
       from: { path: '^(packages|apps)/([^/]+)/' },
-      to: { path: '^packages/[^/]+/src/', pathNot: ['^packages/[^/]+/src/((node|browser)/)?index\\.ts$', '^$1/$2/'] },
+      to: {
+        path: '^packages/[^/]+/src/',
+        pathNot: ['^packages/[^/]+/src/((node|browser|api)/)?index\\.ts$', '^$1/$2/'],
+      },
     },
     {
       name: 'no-cycles',

@@ -28,7 +28,11 @@ test('flow prints a table of at most 80 columns and draws the descent', async ()
   expect(exitCode).toBe(0);
   expect(stdout).toMatch(/t +D\(ρ_t‖E†ρ\) +at most +I\(ρ_t\) +at most +‖ρ_t−E†ρ‖₁ +at most/);
   expect(stdout).toContain('every 5th of 101 times');
-  expect(stdout.split('\n').filter((line) => [...line].length > 80)).toEqual([]);
+  expect(
+    String(stdout)
+      .split('\n')
+      .filter((line) => [...line].length > 80),
+  ).toEqual([]);
   expect(readFileSync(path('descent.svg'), 'utf8')).toMatch(/^<svg .*<title id="descent-title">Descent: /s);
 });
 
@@ -36,7 +40,7 @@ test('flow --json follows the closed form of a thermal qubit, below bounds of pr
   const args = ['flow', qubit, '--from', path('excited.json'), '--until', '2', '--points', '5', '--json'];
   const { exitCode, stdout } = await thalweg(args);
   expect(exitCode).toBe(0);
-  const { points, bounds, method, limit } = parseDocument(stdout) as FlowDocument;
+  const { points, bounds, method, limit } = parseDocument(String(stdout)) as FlowDocument;
   expect(method).toBe('eigenvectors');
   const ground = (limit as number[][])[0]?.[0] ?? NaN;
   expect(Math.abs(ground - 1 / (1 + Math.exp(-1)))).toBeLessThan(1e-14);
@@ -56,7 +60,7 @@ test('flow --json follows the closed form of a thermal qubit, below bounds of pr
 
 test('flow --csv has one line a time and all digits', async () => {
   const { stdout } = await thalweg(['flow', qubit, '--from', path('excited.json'), '--points', '3', '--csv']);
-  const [head, first, ...rest] = stdout.trimEnd().split('\n');
+  const [head, first, ...rest] = String(stdout).trimEnd().split('\n');
   expect(head).toMatch(/^time,entropy,production,distance,state_error,entropy_bound_mlsi,/);
   expect(first).toMatch(/^0,\d\.\d{10,},inf,/);
   expect(rest).toHaveLength(2);

@@ -30,7 +30,11 @@ test('relief draws a qubit, and says what is lowest', async () => {
   expect(stderr).toContain(`wrote ${path('relief.svg')}`);
   expect(exitCode).toBe(0);
   expect(stdout).toMatch(/lowest κ met: 1 at \(0\.00000, 0\.00000\), observed/);
-  expect(stdout.split('\n').filter((line) => [...line].length > 80)).toEqual([]);
+  expect(
+    String(stdout)
+      .split('\n')
+      .filter((line) => [...line].length > 80),
+  ).toEqual([]);
   expect(readFileSync(path('relief.svg'), 'utf8')).toMatch(
     /^<svg .*<title id="relief-title">Relief of κ: .*<\/svg>\n$/s,
   );
@@ -41,7 +45,7 @@ test('relief --json holds the grid, whatever the threads', async () => {
     (await thalweg(['relief', qubit, '--axes', 'x,y', '--points', '200', '--threads', threads, '--json'])).stdout;
   const text = await run('1');
   expect(await run('2')).toBe(text);
-  const { grid, slice, lowest, reference } = parseDocument(text) as ReliefDocument;
+  const { grid, slice, lowest, reference } = parseDocument(String(text)) as ReliefDocument;
   expect(slice).toMatchObject({ kind: 'bloch disc', axes: ['x', 'y'] });
   expect(grid.kappa).toHaveLength(grid.rings * grid.rays);
   expect(lowest?.kappa).toBeCloseTo(1, 12);
@@ -61,7 +65,7 @@ test('relief --csv gives the values, and a state on the boundary may span the sl
   const args = ['relief', qubit, '--through', path('pure.json'), '--through', path('other.json'), '--points', '100'];
   const { exitCode, stdout } = await thalweg([...args, '--csv']);
   expect(exitCode).toBe(0);
-  const [head, ...lines] = stdout.trimEnd().split('\n');
+  const [head, ...lines] = String(stdout).trimEnd().split('\n');
   expect(head).toBe('x,y,kappa');
   // Three rings of 24 rays and the centre.
   expect(lines).toHaveLength(73);

@@ -114,7 +114,7 @@ describe('closeBrackets', () => {
     const [cge, ge] = close([row('cge', stronger, null), row('ge', end(0.5 + 1e-14), null)]);
     expect(ge.lower).toMatchObject({ grade: 'enclosed', by: 'cge ≤ ge; proof' });
     expect(cge.lower).toBe(stronger);
-    const [, clearly] = close([row('cge', stronger, null), row('ge', end(0.5 + 1e-9), null)]);
+    const [, clearly] = close([row('cge', stronger, null), row('ge', end(0.5 + 1e-8), null)]);
     expect(clearly.lower?.grade).toBe('certified');
   });
 
