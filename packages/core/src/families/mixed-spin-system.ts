@@ -7,7 +7,7 @@ import { type SparseMatrix, type Triplet, sparseFromTriplets } from '../linalg/s
 
 /**
  * Number operator of m self-adjoint unitaries with x_ix_j = signs_ij x_jx_i (i≠j): L x_A = −|A| x_A on products of distinct x_i, the
- * finite models of q-Gaussian number operators (Speicher, Commun. Math. Phys. 143 (1992); Biane, J. Funct. Anal. 144 (1997)).
+ * finite models of q-Gaussian number operators (Speicher, Math. Z. 209 (1992); Biane, Commun. Math. Phys. 184 (1997)).
  * Spectrum of −L: k with multiplicity binomial(m,k). The m×m signs are ±1 and symmetric; the diagonal is not read.
  *
  * Realisation: the sign flip α_j of x_j alone is A ↦ U_jAU_j for a self-adjoint unitary U_j, and Σ_j ½(α_j − id) = L. A symplectic
