@@ -117,7 +117,7 @@ describe('the schemas of results', () => {
   });
 
   const schemas =
-    'thalweg.model/1, thalweg.sheet/1, thalweg.report/1, thalweg.witness/1, thalweg.certificate/1, thalweg.verdict/1, thalweg.state/1';
+    'thalweg.model/1, thalweg.sheet/1, thalweg.report/1, thalweg.witness/1, thalweg.certificate/1, thalweg.verdict/1, thalweg.comparison/1, thalweg.distance/1, thalweg.flow/1, thalweg.relief/1, thalweg.state/1, thalweg.example/1, thalweg.showcase/1, thalweg.sweep/1, thalweg.point/1, thalweg.reproduction/1';
   const cases: [name: string, run: () => unknown, code: string, pointer: string, message: string][] = [
     [
       'a document of an unknown schema',
