@@ -25,7 +25,7 @@ describe('command lines that are refused', () => {
     ['a constant without a witness', ['witness', 'm.json', 'gap'], 64, ['(ge, mlsi, clsi, lsi), got "gap"; thalweg constants']],
     ['one stream for two documents', ['verify', '-', '--model', '-'], 65, ['(at the top of standard input)']],
     ['a missing model', ['constants', 'nowhere.json'], 66, ['got nowhere.json: there is no such file; check']],
-    ['a folder as a model', ['constants', 'taken'], 65, ['expected a document, got the folder taken; name']],
+    ['a folder that is no example', ['constants', 'taken'], 65, ['expected the file example.json in an example package, got none; add it', 'in taken']],
     ['a missing state', ['witness', 'm.json', 'ge', '--at', 'nowhere.json'], 66, ['got nowhere.json: there is no such file']],
     ['a state of trace 1.1', ['witness', 'm.json', 'ge', '--at', 'rho.json'], 65, ['expected a state of trace 1, got 1.1; divide', 'of rho.json']],
     ['a pure state', ['witness', 'm.json', 'ge', '--at', 'pure.json'], 65, ['got a smallest eigenvalue of 0; mix in']],
