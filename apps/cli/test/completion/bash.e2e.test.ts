@@ -34,12 +34,28 @@ test('verbs', async () => {
     'witness',
     'certify',
     'verify',
+    'flow',
+    'relief',
+    'distance',
+    'compare',
+    'draft',
+    'model',
+    'sweep',
+    'seal',
+    'reproduce',
+    'sign-in',
+    'sign-out',
+    'publish',
+    'browse',
+    'read',
+    'download',
+    'withdraw',
     'completion',
     'help',
   ]);
-  expect(await offers('c')).toEqual(['constants', 'check', 'certify', 'completion']);
-  expect(await offers('--json', 'w')).toEqual(['witness']);
-  expect(await offers('--seed', '3', 'w')).toEqual(['witness']);
+  expect(await offers('c')).toEqual(['constants', 'check', 'certify', 'compare', 'completion']);
+  expect(await offers('--json', 'w')).toEqual(['witness', 'withdraw']);
+  expect(await offers('--seed', '3', 'w')).toEqual(['witness', 'withdraw']);
 });
 
 test('options of a verb and of all verbs', async () => {
