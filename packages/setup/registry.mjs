@@ -24,7 +24,8 @@ await main(async (args) => {
   try {
     await ensureDatabase(cluster, NAME);
     const owner = { ...process.env, DATABASE_URL: `${cluster.url}/${NAME}` };
-    const migrated = await run(process.execPath, [program, 'migrate'], { env: owner });
+    // Standard output belongs to the command: a token printed there can be handed on.
+    const migrated = await run(process.execPath, [program, 'migrate'], { env: owner, stdio: ['ignore', 2, 2] });
     if (migrated !== 0) return migrated;
     if (args.length > 0) return await run(process.execPath, [program, ...args], { env: owner });
     const url = owner.DATABASE_URL.replace(`//${OWNER}@`, `//${APPLICATION}@`);

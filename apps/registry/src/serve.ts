@@ -21,7 +21,12 @@ export async function serve(config: Config): Promise<RunningServer> {
   let accepting = true;
   const app = createApp({ db, log, proxyHops: config.proxyHops, isAccepting: () => accepting });
   const server = createServer({ requestTimeout: 60_000, headersTimeout: 15_000 }, app);
-  await listen(server, config);
+  try {
+    await listen(server, config);
+  } catch (error) {
+    await db.destroy();
+    throw error;
+  }
   const { address, port } = server.address() as AddressInfo;
   return {
     address: config.publicUrl ?? `http://${address}:${port}`,
@@ -35,7 +40,10 @@ export async function serve(config: Config): Promise<RunningServer> {
 
 function listen(server: Server, { host, port }: Config): Promise<void> {
   return new Promise((resolve, reject) => {
-    server.once('error', reject);
+    server.once('error', (error: NodeJS.ErrnoException) => {
+      const taken = error.code === 'EADDRINUSE';
+      reject(taken ? new Error(`expected a free port, got ${port}, which another program uses; set PORT`) : error);
+    });
     server.listen(port, host, resolve);
   });
 }

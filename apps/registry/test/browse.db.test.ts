@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { insertMember } from '../src/members/member-store.js';
 import { exampleArchive } from './support/example-archive.js';
 import { type TestRegistry, testRegistry } from './support/test-registry.js';
 
@@ -136,5 +137,16 @@ describe('the server', () => {
     const answer = await registry.http.get('/api/v1/nothing');
     expect(answer.headers['content-type']).toContain('application/problem+json');
     expect(answer.body).toMatchObject({ status: 404, code: 'not-found' });
+  });
+});
+
+describe('members', () => {
+  it.each([
+    ['oskar', 'choose another'],
+    ['Mira X', 'choose such a one'],
+    ['a', 'choose such a one'],
+    ['a--b', 'choose such a one'],
+  ])('are refused under the name %s', async (name, says) => {
+    await expect(insertMember(registry.owner, { name, fullName: 'Somebody' })).rejects.toThrow(says);
   });
 });

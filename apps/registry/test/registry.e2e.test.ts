@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { execa } from 'execa';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { ensurePostgres } from '../../../packages/setup/lib/postgres.mjs';
+import { isToken } from '../src/tokens/token-text.js';
 import { exampleArchive } from './support/example-archive.js';
 
 const root = new URL('../../../', import.meta.url).pathname;
@@ -40,7 +41,11 @@ async function whileServing(work: (address: string) => Promise<void>): Promise<v
 it('keeps what is published over a stop and a start', { timeout: 180_000 }, async () => {
   expect((await registry('add-member', 'mira', '--full-name', 'Mira Tolland')).stdout).toContain('mira is a member.');
   const issued = await registry('issue-token', 'mira', '--label', 'laptop', '--scope', 'read', 'publish');
-  const token = issued.stdout.trim().split('\n').at(-1) ?? '';
+  // The token alone, so that it can be handed to sign-in.
+  const token = issued.stdout;
+  expect(isToken(token)).toBe(true);
+  const taken = await registry('add-member', 'mira', '--full-name', 'Mira Tolland').catch((error: unknown) => error);
+  expect(taken).toMatchObject({ exitCode: 1, stdout: '', stderr: expect.stringContaining('choose another') as string });
   const archive = exampleArchive();
   const path = '/api/v1/examples/mira/two-point-chain/versions';
   await whileServing(async (address) => {
