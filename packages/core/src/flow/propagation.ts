@@ -7,7 +7,7 @@ import { type ComplexMatrix, addScaledInto, copy, frobeniusNorm } from '../linal
 import { expmAction } from '../linalg/expm-action.js';
 import { expmReal } from '../linalg/expm-real.js';
 import { realTimesVector, transposeReal } from '../linalg/real-matrix.js';
-import { norm } from '../structure/kernel.js';
+import { norm } from '../linalg/real-vector.js';
 import type { Structure } from '../structure/structure.js';
 import { EPSILON, FLOW_RESIDUAL, FLOW_STEPS_LIMIT } from '../tolerances.js';
 import type { FlowLimit } from './flow-limit.js';

@@ -1,3 +1,4 @@
+import { norm } from '../linalg/real-vector.js';
 import { type BlockAlgebra, fromCoordinates, offBlockResidual, toCoordinates } from '../algebra/block-algebra.js';
 import { ThalwegError } from '../errors.js';
 import { type ComplexMatrix, frobeniusNorm, identity, multiply, scale } from '../linalg/complex-matrix.js';
@@ -79,10 +80,6 @@ function remainder(basis: readonly Float64Array[], x: Float64Array): Float64Arra
     }
   }
   return rest;
-}
-
-function norm(x: Float64Array): number {
-  return Math.sqrt(x.reduce((sum, v) => sum + v * v, 0));
 }
 
 /** Dimension over the complex numbers of the span of the matrices. */

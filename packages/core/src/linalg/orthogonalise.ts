@@ -1,3 +1,4 @@
+import { dot } from './real-vector.js';
 import { REORTHOGONALISE } from '../tolerances.js';
 
 /**
@@ -48,12 +49,6 @@ function innerProducts(group: readonly Float64Array[], x: Float64Array): number[
     w += d[i] * value;
   }
   return [s, t, u, w];
-}
-
-function dot(v: Float64Array, x: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < x.length; i++) sum += v[i] * x[i];
-  return sum;
 }
 
 /** x += Σ factor·v. */

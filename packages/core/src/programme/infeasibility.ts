@@ -1,6 +1,7 @@
 import { INFEASIBILITY_CANDIDATE, INFEASIBILITY_TOLERANCE } from '../tolerances.js';
 import { solveLower, solveLowerAdjoint } from './kernels/triangular-solve.js';
-import { dot, type Measures } from './measures.js';
+import { dot } from '../linalg/real-vector.js';
+import { type Measures } from './measures.js';
 import { type NewtonSystem } from './newton-system.js';
 
 /** A scaled y with −Aᵀ y ⪰ 0 and b·y = 1, or a scaled flat X ⪰ 0 with A(X) = 0 and <C, X> = −1. */

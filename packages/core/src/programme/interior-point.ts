@@ -1,7 +1,8 @@
 import { DUAL_DRIFT, PROGRAMME_PATIENCE, PROGRESS, SHORTEST_STEP, SMALL_BARRIER } from '../tolerances.js';
 import { type ConicForm } from './conic-form.js';
 import { searchInfeasibility, type Ray } from './infeasibility.js';
-import { dot, measure, type Measures } from './measures.js';
+import { dot } from '../linalg/real-vector.js';
+import { measure, type Measures } from './measures.js';
 import { NewtonSystem, type NewtonStep } from './newton-system.js';
 import { type ProgrammeIterate, type ResolvedOptions } from './programme-options.js';
 import { type ProgrammeStatus } from './programme-solution.js';

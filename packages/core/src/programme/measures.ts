@@ -1,3 +1,4 @@
+import { dot } from '../linalg/real-vector.js';
 import { type NewtonSystem } from './newton-system.js';
 
 /** Where a point of the scaled programme stands; ‖b‖ = ‖C‖ = 1 there. */
@@ -35,10 +36,4 @@ export function measure({ form, x, y, s, primalResidual, dualResidual }: NewtonS
     // NaN compares false with everything: make it the worst there is.
     worst: worst >= 0 ? worst : Infinity,
   };
-}
-
-export function dot(x: Float64Array, y: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < x.length; i++) sum += x[i] * y[i];
-  return sum;
 }

@@ -3,7 +3,7 @@ import { type Cone } from './cone.js';
 import { type ConicForm } from './conic-form.js';
 import { LinearCone } from './linear-cone.js';
 import { MatrixCone } from './matrix-cone.js';
-import { dot } from './measures.js';
+import { dot } from '../linalg/real-vector.js';
 import { SchurSystem } from './schur-system.js';
 
 /** A step (dX, dy, dS), and how far it can be followed: 1 at most. */

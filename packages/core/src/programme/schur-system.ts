@@ -1,3 +1,4 @@
+import { dot, norm } from '../linalg/real-vector.js';
 import { EPSILON, SCHUR_PIVOT, SCHUR_REFINEMENTS, SCHUR_RESIDUAL, SCHUR_SHIFTS } from '../tolerances.js';
 import { symmetrise } from './dependent-coefficients.js';
 import { choleskyFactor } from './kernels/cholesky-factor.js';
@@ -116,14 +117,4 @@ export class SchurSystem {
       out[i] = sum;
     }
   }
-}
-
-function dot(x: Float64Array, y: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < x.length; i++) sum += x[i] * y[i];
-  return sum;
-}
-
-function norm(x: Float64Array): number {
-  return Math.sqrt(dot(x, x));
 }

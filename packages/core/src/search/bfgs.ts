@@ -1,3 +1,4 @@
+import { dot, norm } from '../linalg/real-vector.js';
 import { ThalwegError } from '../errors.js';
 import { EPSILON, WOLFE_BISECTIONS, WOLFE_CURVATURE, WOLFE_DECREASE, WOLFE_VISIBLE } from '../tolerances.js';
 
@@ -210,14 +211,4 @@ function acceptStep(w: Workspace, first: boolean): boolean {
     for (let j = 0, k = i * n; j < n; j++, k++) inverse[k] += si * s[j] - pi * product[j];
   }
   return true;
-}
-
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
-}
-
-function norm(a: Float64Array): number {
-  return Math.sqrt(dot(a, a));
 }

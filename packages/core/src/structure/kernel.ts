@@ -1,3 +1,4 @@
+import { dot, norm } from '../linalg/real-vector.js';
 import { ThalwegError } from '../errors.js';
 import { solveReal } from '../linalg/lu-real.js';
 import { nullSpaceReal } from '../linalg/null-space.js';
@@ -48,16 +49,6 @@ export function projectionFactor(right: readonly Float64Array[], left: readonly 
     right.forEach((x, j) => (overlap[i * f + j] = dot(y, x)));
   });
   return solveReal(overlap, f, rows, d);
-}
-
-export function dot(x: Float64Array, y: Float64Array): number {
-  let sum = 0;
-  for (let k = 0; k < x.length; k++) sum += x[k] * y[k];
-  return sum;
-}
-
-export function norm(x: Float64Array): number {
-  return Math.sqrt(dot(x, x));
 }
 
 const pairs = new WeakMap<Float64Array, KernelPair>();

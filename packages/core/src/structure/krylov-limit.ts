@@ -5,7 +5,7 @@ import { generatorNormBound } from '../generator/generator-norm.js';
 import type { Generator } from '../generator/generator.js';
 import { type ComplexMatrix, fromEntries } from '../linalg/complex-matrix.js';
 import { EPSILON, STATE_ROUNDING } from '../tolerances.js';
-import { dot, norm } from './kernel.js';
+import { dot, norm } from '../linalg/real-vector.js';
 
 /** Vectors of one Krylov space; at D = 65536 they take 40 MB. */
 const KRYLOV_SIZE = 80;

@@ -10,7 +10,7 @@ import { matrixFunction } from '../linalg/matrix-function.js';
 import { seededRandom } from '../random.js';
 import { FIXED_POINT_TOLERANCE, KERNEL_TOLERANCE, LANCZOS_TOLERANCE } from '../tolerances.js';
 import { basisOf, generatorInStateBasis } from './generator-in-basis.js';
-import { norm } from './kernel.js';
+import { norm } from '../linalg/real-vector.js';
 import type { ReferenceState } from './reference-state.js';
 
 const MAX_MATVECS = 4000;

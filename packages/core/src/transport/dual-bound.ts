@@ -1,3 +1,4 @@
+import { dot, norm } from '../linalg/real-vector.js';
 import { fromCoordinates } from '../algebra/block-algebra.js';
 import { choleskyRealInto, choleskySolveReal } from '../linalg/cholesky-real.js';
 import { hermitianEigenvalues } from '../linalg/hermitian-eigen.js';
@@ -128,14 +129,4 @@ function newtonState(
     if (found) return { rho: next, at: found };
   }
   return null;
-}
-
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
-  return sum;
-}
-
-function norm(a: Float64Array): number {
-  return Math.sqrt(dot(a, a));
 }

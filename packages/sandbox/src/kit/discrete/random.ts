@@ -11,7 +11,10 @@ export interface Random {
   integer(n: number): number;
 }
 
-/** xoshiro128** (Blackman & Vigna, ACM Trans. Math. Softw. 47 (2021)) seeded from a number or a text. */
+/**
+ * xoshiro128** (Blackman & Vigna, ACM Trans. Math. Softw. 47 (2021)) seeded from a number or a text. Not core's generator: a
+ * published example must get the same numbers from the same kit for ever, on every engine, by the kit's own logarithm.
+ */
 export function random(seed: number | string): Random {
   const state = expandSeed(String(seed));
   let spare: number | null = null;
