@@ -108,7 +108,7 @@ describe('a session with the registry', () => {
   });
 
   it('unpacks nothing whose digest is wrong', async () => {
-    const false_ = createServer((request, response) => {
+    const impostor = createServer((request, response) => {
       const version = {
         schema: 'thalweg.version/1',
         example: 'mira/depolarising',
@@ -127,8 +127,8 @@ describe('a session with the registry', () => {
       };
       response.end(request.url === '/archive' ? 'other bytes' : JSON.stringify(version));
     });
-    await new Promise<void>((resolve) => false_.listen(0, '127.0.0.1', resolve));
-    const there = `http://127.0.0.1:${(false_.address() as AddressInfo).port}`;
+    await new Promise<void>((resolve) => impostor.listen(0, '127.0.0.1', resolve));
+    const there = `http://127.0.0.1:${(impostor.address() as AddressInfo).port}`;
     try {
       const result = await thalweg(home, ['download', 'mira/depolarising@1.0.0'], { registry: there });
       expect(result.exitCode).toBe(65);
@@ -137,8 +137,8 @@ describe('a session with the registry', () => {
       const shown = await thalweg(home, ['read', 'mira/depolarising@1.0.0'], { registry: there });
       expect(shown.stdout).not.toContain('\u001b[31m');
     } finally {
-      false_.closeAllConnections();
-      false_.close();
+      impostor.closeAllConnections();
+      impostor.close();
     }
   });
 

@@ -6,6 +6,7 @@ import { createGuards } from './auth/authenticate.js';
 import type { Database } from './database/connect.js';
 import { handleErrors, notFound } from './http/handle-errors.js';
 import { healthRoutes } from './http/health-routes.js';
+import { memberRoutes } from './members/member-routes.js';
 import { readRoutes } from './versions/read-routes.js';
 import { writeRoutes } from './versions/write-routes.js';
 
@@ -33,7 +34,7 @@ export function createApp({ db, log, proxyHops, isAccepting }: AppParts): Expres
   );
   const guards = createGuards(db);
   app.use(healthRoutes(db, isAccepting));
-  app.use('/api/v1', readRoutes(db, guards), writeRoutes(db, guards));
+  app.use('/api/v1', memberRoutes(guards), readRoutes(db, guards), writeRoutes(db, guards));
   app.use(notFound);
   app.use(handleErrors);
   return app;

@@ -1,12 +1,10 @@
 import { mkdir, open, readFile, rename, unlink } from 'node:fs/promises';
-import { homedir } from 'node:os';
 import { join } from 'node:path';
 import { ThalwegError } from '@thalweg/core';
 import { z } from 'zod';
+import { configFolder, type Environment } from './user-folders.js';
 
 const fileSchema = z.object({ tokens: z.record(z.string(), z.string()) });
-
-type Environment = Readonly<Record<string, string | undefined>>;
 
 /** The token for a registry: THALWEG_TOKEN, else what `sign-in` kept; null for none. */
 export async function findToken(registry: string, env: Environment): Promise<string | null> {
@@ -57,9 +55,7 @@ async function readTokens(env: Environment): Promise<Record<string, string>> {
   }
 }
 
-/** Under the configuration directory of the XDG base directory specification. */
 function placeOf(env: Environment): { readonly folder: string; readonly path: string } {
-  const base = env['XDG_CONFIG_HOME'] || join(env['HOME'] || homedir(), '.config');
-  const folder = join(base, 'thalweg');
+  const folder = configFolder(env);
   return { folder, path: join(folder, 'tokens.json') };
 }

@@ -1,12 +1,10 @@
 import { mkdir, readFile } from 'node:fs/promises';
-import { homedir } from 'node:os';
 import { join } from 'node:path';
 import { ThalwegError } from '@thalweg/core';
 import { sha256Hex } from '@thalweg/format';
 import { writeFileAtomically } from '../output/write-file-atomically.js';
 import type { RegistryClient } from './registry-client.js';
-
-type Environment = Readonly<Record<string, string | undefined>>;
+import { cacheFolder, type Environment } from './user-folders.js';
 
 /** The archive with a digest: from the cache, or from the registry and then kept. Its SHA-256 is checked either way. */
 export async function fetchArchive(
@@ -35,8 +33,6 @@ export async function cachedArchive(digest: string, env: Environment): Promise<U
   return bytes && sha256Hex(bytes) === digest ? new Uint8Array(bytes) : null;
 }
 
-/** Under the cache directory of the XDG base directory specification. */
 function placeOf(digest: string, env: Environment): string {
-  const base = env['XDG_CACHE_HOME'] || join(env['HOME'] || homedir(), '.cache');
-  return join(base, 'thalweg', 'archives', `${digest}.zip`);
+  return join(cacheFolder(env), 'archives', `${digest}.zip`);
 }

@@ -1,12 +1,10 @@
 import { mkdir, readFile } from 'node:fs/promises';
-import { homedir } from 'node:os';
 import { join } from 'node:path';
 import { z } from 'zod';
 import { writeFileAtomically } from '../output/write-file-atomically.js';
+import { cacheFolder, type Environment } from './user-folders.js';
 
 const entrySchema = z.object({ digest: z.string().regex(/^[0-9a-f]{64}$/) });
-
-type Environment = Readonly<Record<string, string | undefined>>;
 
 /** Which digest a version has, as a registry said once: a published version never changes, so that it need not be asked again. */
 export async function knownDigest(registry: string, name: string, env: Environment): Promise<string | null> {
@@ -28,6 +26,5 @@ export async function rememberDigest(registry: string, name: string, digest: str
 }
 
 function placeOf(registry: string, name: string, env: Environment): string {
-  const base = env['XDG_CACHE_HOME'] || join(env['HOME'] || homedir(), '.cache');
-  return join(base, 'thalweg', 'names', encodeURIComponent(registry), `${encodeURIComponent(name)}.json`);
+  return join(cacheFolder(env), 'names', encodeURIComponent(registry), `${encodeURIComponent(name)}.json`);
 }

@@ -1,14 +1,15 @@
-import type { ExamplesDocument, HistoryDocument, MemberDocument } from '@thalweg/format/api';
+import type { ExamplesDocument, HistoryDocument } from '@thalweg/format/api';
 import { Router } from 'express';
 import { z } from 'zod';
-import { type Guards, principalOf, readerOf } from '../auth/authenticate.js';
+import { type Guards, readerOf } from '../auth/authenticate.js';
 import type { Principal } from '../auth/principal.js';
 import type { Database } from '../database/connect.js';
 import { readCursor, writeCursor } from '../http/cursor.js';
+import { documentText } from '../http/document-text.js';
 import { Problem } from '../http/problem.js';
 import { readQuery } from '../http/read-input.js';
 import { sendBytes } from '../http/send-bytes.js';
-import { documentText, versionDocument, versionSummary } from './version-document.js';
+import { versionDocument, versionSummary } from './version-document.js';
 import { nameText, pathOf, versionName, type VersionName } from './version-name.js';
 import { browseVersions, findBlob, findVersion, listFiles, listVersions, type VersionRow } from './version-store.js';
 
@@ -21,15 +22,9 @@ const browseQuery = z.strictObject({
   count: z.coerce.number().int().min(1).max(PAGE.most).default(PAGE.default),
 });
 
-/** Routes that read: whose token it is, browse, one example, one version, its archive and files. */
+/** Routes that read: browse, one example, one version, its archive and files. */
 export function readRoutes(db: Database, guards: Guards): Router {
   const router = Router();
-
-  router.get('/member', guards.requires('read'), (_request, response) => {
-    const { name, role, scopes } = principalOf(response.locals);
-    const document: MemberDocument = { schema: 'thalweg.member/1', name, role, scopes: [...scopes] };
-    response.set('Cache-Control', 'no-store').type('json').send(documentText(document));
-  });
 
   router.get('/examples', async (request, response) => {
     const query = readQuery(browseQuery, request.query);

@@ -1,4 +1,3 @@
-import { canonicalJson, type JsonValue } from '@thalweg/format';
 import type { VersionDocument, VersionSummary } from '@thalweg/format/api';
 import type { VersionFile, VersionRow } from './version-store.js';
 
@@ -24,9 +23,4 @@ export function versionSummary(row: VersionRow): VersionSummary {
 /** A version with its description and files. */
 export function versionDocument(row: VersionRow, files: readonly VersionFile[]): VersionDocument {
   return { ...versionSummary(row), document: row.document, files: [...files] };
-}
-
-/** The text that is sent for a document: its canonical form (RFC 8785). */
-export function documentText(document: object): string {
-  return canonicalJson(document as JsonValue);
 }

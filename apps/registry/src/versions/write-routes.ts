@@ -4,10 +4,11 @@ import { ARCHIVE_LIMITS } from '@thalweg/format';
 import { z } from 'zod';
 import { type Guards, principalOf } from '../auth/authenticate.js';
 import type { Database } from '../database/connect.js';
+import { documentText } from '../http/document-text.js';
 import { Problem } from '../http/problem.js';
 import { readBody } from '../http/read-input.js';
 import { examine, publish } from './publish-service.js';
-import { documentText, versionSummary } from './version-document.js';
+import { versionSummary } from './version-document.js';
 import { versionName } from './version-name.js';
 import { withdraw } from './withdraw-service.js';
 
